@@ -290,6 +290,10 @@ export type LineFinding = { readonly span: Span } & (
         | "undated"
         | "no-section"
         | "order";
+      /** What could have stood there instead, where that is known. */
+      readonly expected?: readonly string[];
     }
   | { readonly code: "syntax/merge-marks" }
+  /** Left unread: no line of a person is so long. */
+  | { readonly code: "syntax/too-long" }
 );
