@@ -1,0 +1,189 @@
+/** The events of a system's logs: names bound, volumes in litres, readings still to be converted. */
+
+import { nearestWords } from "../../grammar/nearest.ts";
+import type { ParameterName } from "../../grammar/parameters.ts";
+import type { Event, LogEvent, QuantityText, Word } from "../../grammar/syntax.ts";
+import { writeStatement } from "../../grammar/write.ts";
+import type { Written } from "../quantity/concentration.ts";
+import { stockCount } from "./bind-cohort.ts";
+import { type Line, named, placeOf, positive } from "./binder.ts";
+import type { OwnKind } from "./finding.ts";
+import type { EventHead, SystemEvent, SystemFacts } from "./model.ts";
+import { takeReadItems } from "./readings.ts";
+
+/** A read line with its amounts still as written; `readings.ts` turns them into the model's units. */
+export interface PendingRead extends EventHead {
+  readonly kind: "read";
+  readonly pending: ReadonlyMap<ParameterName, PendingValue>;
+  readonly line: Line;
+  readonly disregard: Word | null;
+  readonly kit: string | null;
+}
+
+export interface PendingValue {
+  readonly quantity: QuantityText;
+  readonly written: Written;
+  readonly word: Word;
+  readonly below: boolean;
+}
+
+export type BoundEvent = Exclude<SystemEvent, { kind: "read" }> | PendingRead;
+
+/** What an event may name in its system. */
+export interface OwnNames {
+  readonly facts: SystemFacts;
+  /** The solution's reference behind a name in the system's own file. */
+  readonly solutionOf: (source: string) => string | undefined;
+}
+
+/** Binds one event line; null where it can't count. */
+export function bindEvent(line: Line, event: Event, own: OwnNames): BoundEvent | null {
+  const head: EventHead = {
+    minute: event.at.minute,
+    timeKnown: event.at.timeKnown,
+    place: placeOf(line, null),
+    text: writeStatement(event),
+    by: event.by?.text ?? null,
+  };
+  switch (event.kind) {
+    case "read": {
+      const pending = takeReadItems(line, event.items);
+      const kit = event.kit && named(line, event.kit, ["kit"]);
+      if (event.disregard) {
+        const reason = event.disregard.text;
+        line.report({
+          code: "reading/disregarded",
+          place: placeOf(line, event.disregard),
+          system: line.system,
+          reason,
+        });
+      }
+      return { ...head, kind: "read", pending, line, disregard: event.disregard, kit: kit?.ref ?? null };
+    }
+    case "set":
+      return bindSet(line, event.items, own, head);
+    case "gave": {
+      const doses = event.items.flatMap(({ name, quantity, start, end }) => {
+        const solution = named(line, name, ["solution"]);
+        const litres = positive(line, quantity, "volume");
+        return solution && litres !== null
+          ? [{ solution: solution.ref, litres, place: placeOf(line, { start, end }) }]
+          : [];
+      });
+      return doses.length > 0 ? { ...head, kind: "gave", doses } : null;
+    }
+    case "renewed": {
+      const litres = positive(line, event.volume, "volume");
+      const water = named(line, event.water, ["saltwater", "system"]);
+      return litres !== null && water ? { ...head, kind: "renewed", litres, water: water.ref } : null;
+    }
+    case "topped": {
+      const litres = positive(line, event.volume, "volume");
+      const solution = event.solution && named(line, event.solution, ["solution"]);
+      if (litres === null || (event.solution && !solution)) return null;
+      return { ...head, kind: "topped", litres, solution: solution?.ref ?? null };
+    }
+    case "stocked":
+    case "removed":
+    case "moved":
+      return bindStock(line, event, own, head);
+    case "filled":
+    case "level": {
+      const pump = pumpNamed(line, event.pump, own);
+      const litres = positive(line, event.volume, "volume");
+      return pump !== null && litres !== null ? { ...head, kind: event.kind, pump, litres } : null;
+    }
+    case "calibrated": {
+      const pump = pumpNamed(line, event.pump, own);
+      const litres = positive(line, event.volume, "volume");
+      const days = positive(line, event.time, "time");
+      return pump !== null && litres !== null && days
+        ? { ...head, kind: "calibrated", pump, flowLPerDay: litres / days }
+        : null;
+    }
+    case "stopped":
+    case "started": {
+      const pump = pumpNamed(line, event.pump, own);
+      return pump === null ? null : { ...head, kind: event.kind, pump };
+    }
+    case "note":
+      return { ...head, kind: "note" };
+    default:
+      // The grammar keeps events of a store or kit out of a log.
+      return null;
+  }
+}
+
+function bindSet(
+  line: Line,
+  items: Extract<LogEvent, { kind: "set" | "gave" }>["items"],
+  own: OwnNames,
+  head: EventHead,
+): BoundEvent | null {
+  const rates = items.flatMap(({ name, quantity, start, end }) => {
+    const source = sourceNamed(line, name, own);
+    const litresPerDay = positive(line, quantity, "flow");
+    return source !== null && litresPerDay !== null
+      ? [{ source, litresPerDay, place: placeOf(line, { start, end }) }]
+      : [];
+  });
+  return rates.length > 0 ? { ...head, kind: "set", rates } : null;
+}
+
+/** A pump by its name, or the one source that gives a solution. */
+function sourceNamed(line: Line, word: Word, own: OwnNames): string | null {
+  if (own.facts.sources.has(word.text)) return word.text;
+  const visible = line.names.visible.get(line.file)?.get(word.text);
+  if (visible?.kind !== "solution") return pumpNamed(line, word, own);
+  line.used.add(visible);
+  const giving = [...own.facts.sources.keys()].filter((key) => own.solutionOf(key) === visible.ref);
+  const [only] = giving;
+  if (giving.length === 1 && only !== undefined) return only;
+  if (giving.length === 0) return undeclared(line, word, ["pump", "source"], [...own.facts.sources.keys()]);
+  const severalSources = giving.map((key) => (key.startsWith("hand ") ? "by hand" : key));
+  line.report({
+    code: "name/undeclared",
+    place: placeOf(line, word),
+    system: line.system,
+    word: word.text,
+    severalSources,
+  });
+  return null;
+}
+
+function pumpNamed(line: Line, word: Word, own: OwnNames): string | null {
+  if (own.facts.sources.has(word.text)) return word.text;
+  const pumps = [...own.facts.sources.keys()].filter((key) => !key.startsWith("hand "));
+  return undeclared(line, word, ["pump"], pumps);
+}
+
+function undeclared(line: Line, word: Word, wanted: readonly OwnKind[], known: readonly string[]): null {
+  line.report({
+    code: "name/undeclared",
+    place: placeOf(line, word),
+    system: line.system,
+    word: word.text,
+    wanted,
+    nearest: nearestWords(word.text, known),
+    elsewhere: null,
+    standsFor: null,
+  });
+  return null;
+}
+
+type StockEvent = Extract<LogEvent, { kind: "stocked" | "removed" | "moved" }>;
+
+function bindStock(line: Line, event: StockEvent, own: OwnNames, head: EventHead): BoundEvent | null {
+  const cohort = own.facts.cohorts.get(event.cohort.text)?.[0];
+  if (!cohort) return undeclared(line, event.cohort, ["cohort"], [...own.facts.cohorts.keys()]);
+  const target = event.kind === "moved" ? named(line, event.system, ["system"]) : null;
+  if (event.kind === "moved" && !target) return null;
+  if (event.count.by !== cohort.value.count.by) {
+    const why = `cohort ${event.cohort.text} is counted in ${cohort.value.count.by === "pieces" ? "pieces" : "an area"}`;
+    line.report({ code: "log/no-effect", place: placeOf(line, null), system: line.system, why });
+    return null;
+  }
+  const count = stockCount(line, event.count);
+  if (count === null) return null;
+  return { ...head, kind: event.kind, cohort: event.cohort.text, count, system: target?.ref ?? null };
+}

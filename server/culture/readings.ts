@@ -1,0 +1,201 @@
+/**
+ * Readings: what each value is in the model's unit, whether sea water can have it, and which salinity,
+ * temperature and calcium belong to a moment.
+ */
+import { type ParameterName, parameterOf } from "../../grammar/parameters.ts";
+import type { ReadItem } from "../../grammar/syntax.ts";
+import { asValue, readConcentration } from "../quantity/concentration.ts";
+import type { PendingRead, PendingValue } from "./bind-events.ts";
+import { densityOf, displayUnit, type Line, parameterNamed, placeOf, take } from "./binder.ts";
+import { inModelUnit } from "./convert.ts";
+import { defaults } from "./defaults.ts";
+import type { ByParameter, ReadEvent, ReadValue } from "./model.ts";
+
+/** A value with where it comes from: a reading, or a default that is then listed as an assumption. */
+export interface Known {
+  readonly value: number;
+  readonly from: "reading" | "default";
+}
+
+/** The values of one line as written. A parameter read twice in it is reported once and the first counts. */
+export function takeReadItems(
+  line: Line,
+  items: readonly ReadItem[],
+): ReadonlyMap<ParameterName, PendingValue> {
+  const pending = new Map<ParameterName, PendingValue>();
+  for (const item of items) {
+    const parameter = parameterNamed(line, item.parameter);
+    if (!parameter) continue;
+    const written = take(line, readConcentration(item.value, parameter, asValue));
+    if (!written) continue;
+    const first = pending.get(parameter.name);
+    if (first) {
+      const place = placeOf(line, item);
+      line.report({
+        code: "name/twice",
+        place,
+        system: line.system,
+        word: parameter.name,
+        what: "reading",
+        first: placeOf(line, first.word),
+      });
+      continue;
+    }
+    pending.set(parameter.name, { quantity: item.value, written, word: item.parameter, below: item.below });
+  }
+  return pending;
+}
+
+/** Minutes within which a value of another line belongs to a reading. */
+const sameDay = 24 * 60;
+
+export interface Seen {
+  readonly minute: number;
+  readonly value: number;
+}
+
+/** The nearest value within a day, else the latest before, else the default. `seen` is in order of time. */
+export function nearestKnown(seen: readonly Seen[], minute: number, byDefault: number): Known {
+  let low = 0;
+  let high = seen.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (seen[middle]!.minute <= minute) low = middle + 1;
+    else high = middle;
+  }
+  const before = seen[low - 1];
+  const after = seen[low];
+  const apart = (other: Seen | undefined) =>
+    other ? Math.abs(other.minute - minute) : Number.POSITIVE_INFINITY;
+  const nearest = apart(after) < apart(before) ? after : before;
+  if (nearest && apart(nearest) <= sameDay) return { value: nearest.value, from: "reading" };
+  return before ? { value: before.value, from: "reading" } : { value: byDefault, from: "default" };
+}
+
+/** Values of one parameter over time, for looking up the nearest. */
+export type SeenBy = ReadonlyMap<ParameterName, readonly Seen[]>;
+
+/** Counts a reading into a lookup: not what was disregarded, impossible, or only known to be below something. */
+export function seenIn(events: readonly ReadEvent[], parameter: ParameterName): Seen[] {
+  return events.flatMap(({ minute, values, disregarded }) => {
+    const value = values[parameter];
+    return value && !disregarded && !value.impossible && !value.below ? [{ minute, value: value.value }] : [];
+  });
+}
+
+/**
+ * Converts all readings of a system, in order of time. Salinity and temperature need no other reading, so
+ * they come first; then what is written for a kilogram is turned with the water of its own moment.
+ */
+export function convertReads(reads: readonly PendingRead[]): ReadEvent[] {
+  const plain = (parameter: ParameterName) =>
+    reads.flatMap((read) => {
+      const pending = read.pending.get(parameter);
+      const row = parameterOf(parameter)!;
+      const value =
+        pending && !pending.below && !read.disregard
+          ? inModelUnit(pending.written.amount, row, () => 1)
+          : null;
+      const [low, high] = row.possible!;
+      return value !== null && value >= low && value <= high
+        ? [{ minute: read.minute, value, line: read.place }]
+        : [];
+    });
+  const salinities = plain("salinity");
+  const temperatures = plain("temperature");
+  return reads.map((read) => {
+    const own = (parameter: ParameterName) => {
+      const pending = read.pending.get(parameter);
+      const value = pending && inModelUnit(pending.written.amount, parameterOf(parameter)!, () => 1);
+      return value ?? null;
+    };
+    const water = {
+      salinity:
+        inRange("salinity", own("salinity")) ??
+        nearestKnown(salinities, read.minute, defaults.salinity.value).value,
+      temperatureDegC:
+        inRange("temperature", own("temperature")) ??
+        nearestKnown(temperatures, read.minute, defaults.temperature.value).value,
+    };
+    const values: Partial<Record<ParameterName, ReadValue>> = {};
+    for (const [parameter, pending] of read.pending) {
+      const value = convertValue(read, parameter, pending, water);
+      if (value) values[parameter] = value;
+    }
+    return readEvent(read, values);
+  });
+}
+
+function inRange(parameter: ParameterName, value: number | null): number | null {
+  const range = parameterOf(parameter)!.possible;
+  return value !== null && range && value >= range[0] && value <= range[1] ? value : null;
+}
+
+function readEvent(read: PendingRead, values: ByParameter<ReadValue>): ReadEvent {
+  const { minute, timeKnown, place, text, by, kit } = read;
+  return {
+    kind: "read",
+    minute,
+    timeKnown,
+    place,
+    text,
+    by,
+    kit,
+    values,
+    disregarded: read.disregard !== null,
+  };
+}
+
+function convertValue(
+  read: PendingRead,
+  parameter: ParameterName,
+  pending: PendingValue,
+  water: { readonly salinity: number; readonly temperatureDegC: number },
+): ReadValue | null {
+  const row = parameterOf(parameter)!;
+  const { amount } = pending.written;
+  const value = inModelUnit(amount, row, () => densityOf(water));
+  const unit = displayUnit(pending.quantity, row, water);
+  const place = placeOf(read.line, { start: pending.word.start, end: pending.quantity.end });
+  const scale = amount.sort === "pH" ? amount.scale : null;
+  const written = pending.quantity.number.text;
+  const shared = { place, system: read.line.system, parameter, written, unit };
+  const possible = row.possible ?? [0, Number.MAX_VALUE];
+  // Null: no sea water has this specific gravity or conductivity.
+  const impossible = value === null || value < possible[0] || value > possible[1];
+  if (impossible) {
+    read.line.report({
+      code: "reading/impossible",
+      ...shared,
+      value,
+      range: possible,
+      tenth: tenthOf(written, row.usual, value),
+    });
+    return value === null || !Number.isFinite(value)
+      ? null
+      : { place, value, below: pending.below, impossible, scale, unit };
+  }
+  if (row.usual && !pending.below && !read.disregard && (value < row.usual[0] || value > row.usual[1])) {
+    read.line.report({
+      code: "reading/unusual",
+      ...shared,
+      value,
+      range: row.usual,
+      tenth: tenthOf(written, row.usual, value),
+    });
+  }
+  return { place, value, below: pending.below, impossible, scale, unit };
+}
+
+/** The same digits with the point one place to the left, where a tenth of the value would be usual. */
+function tenthOf(
+  written: string,
+  usual: readonly [number, number] | null,
+  value: number | null,
+): string | null {
+  if (!usual || value === null || value / 10 < usual[0] || value / 10 > usual[1]) return null;
+  const [whole = "0", decimals = ""] = written.split(".");
+  const shifted =
+    whole.length > 1 ? `${whole.slice(0, -1)}.${whole.slice(-1)}${decimals}` : `0.${whole}${decimals}`;
+  return shifted.replace(/\.?0+$/, "");
+}
