@@ -1,0 +1,226 @@
+/** Everything that is said of one system at a moment: the water now, where it goes, what to dose, what is wrong. */
+import { defaults } from "../culture/defaults.ts";
+import { factAt } from "../culture/history.ts";
+import type { Assumption, FarmModel, Hold, System } from "../culture/model.ts";
+import { assuming } from "./assumptions.ts";
+import { type ReadingWithCarbonate, readingsUpTo } from "./carbonate-of-reading.ts";
+import { constantsOf, type SystemConstants } from "./constants.ts";
+import type { DosingFinding } from "./finding.ts";
+import { type Folded, foldEvents } from "./fold.ts";
+import { checkDoses } from "./log-doses.ts";
+import { makePlan, type Plan, plannedPhases, type Situation } from "./make-plan.ts";
+import { planFindings } from "./plan-findings.ts";
+import {
+  type Drift,
+  type DriftCase,
+  driftCases,
+  driftDays,
+  driftStepHours,
+  leavesBandAfterDays,
+  type Projection,
+  project,
+} from "./projection.ts";
+import { flowsSet, topOffFlow } from "./rates.ts";
+import { type SaltBalance, saltBalance } from "./salt-balance.ts";
+import { dosed, type Tracked, tracked } from "./tracked.ts";
+import { type Uptake, uptakeAt } from "./uptake.ts";
+import { type Volume, volumeAt } from "./volume.ts";
+import { waterFindings } from "./water-findings.ts";
+import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+
+export interface Assessment {
+  readonly system: System;
+  readonly at: number;
+  readonly constants: SystemConstants;
+  readonly volume: Volume;
+  readonly readings: readonly ReadingWithCarbonate[];
+  readonly state: WaterState;
+  /** Held parameters without a reading of the last seven days. */
+  readonly staleParameters: readonly Tracked[];
+  readonly uptake: Uptake | null;
+  readonly drifts: readonly Drift[];
+  readonly plan: Plan | null;
+  /** Day's means when the last correction ends. */
+  readonly afterPlan: Readonly<Partial<Record<Tracked, number>>> | null;
+  readonly salt: SaltBalance | null;
+  readonly findings: readonly DosingFinding[];
+  readonly assumptions: readonly Assumption[];
+}
+
+/** Assesses a system at a minute. `clock`: the real time, for lines that lie past both. */
+export function assess(model: FarmModel, system: System, at: number, clock: number): Assessment {
+  const constants = constantsOf(model, system);
+  return assessFolded(model, system, constants, foldEvents(constants, system.events, at), at, clock);
+}
+
+function assessFolded(
+  model: FarmModel,
+  system: System,
+  constants: SystemConstants,
+  { state, doses }: Folded,
+  at: number,
+  clock: number,
+): Assessment {
+  const assumed = assuming();
+  const readings = readingsUpTo(system, at, assumed);
+  const volume = volumeAt(constants.facts, at);
+  const shared = { system, at, constants, volume, readings, state };
+  const staleParameters = dosed.filter(
+    (name) => factAt(constants.facts.holds.get(name), at) && isStale(state.carried[name], at),
+  );
+  const findings: DosingFinding[] = [
+    ...volumeFindings(system, volume),
+    ...futureLines(system, at, clock),
+    ...checkDoses(system.name, constants, doses),
+  ];
+  if (volume.litres === null) {
+    findings.push(...waterFindings({ ...shared, staleParameters, drifts: [], plan: null, uptake: null }));
+    return {
+      ...shared,
+      staleParameters,
+      uptake: null,
+      drifts: [],
+      plan: null,
+      afterPlan: null,
+      salt: null,
+      findings,
+      assumptions: assumed.all(),
+    };
+  }
+  const uptake = uptakeAt(constants.facts, state, at, volume.litres, constants.firstEvent);
+  const situation: Situation = { constants, state, litres: volume.litres, uptake, assumed };
+  const solved = makePlan(situation);
+  const plan = solved && solved.sources.length > 0 ? solved : null;
+  if (solved) findings.push(...planFindings(situation, system, solved));
+  listAssumptions(situation, model);
+  const projections = projectCases(situation, plan);
+  const drifts = driftsOf(situation, projections);
+  findings.push(...waterFindings({ ...shared, staleParameters, drifts, plan, uptake }));
+  const planned = projections.get("as-planned");
+  const afterPlan = plan && planned ? valuesAfter(planned, plan.answer.correctionDays) : null;
+  const salt = plan ? saltBalance(situation, system, plan) : null;
+  return {
+    ...shared,
+    staleParameters,
+    uptake,
+    drifts,
+    plan,
+    afterPlan,
+    salt,
+    findings,
+    assumptions: assumed.all(),
+  };
+}
+
+function valuesAfter(projection: Projection, days: number): Partial<Record<Tracked, number>> {
+  return Object.fromEntries(
+    tracked.flatMap((name) => {
+      const value = projection.valueAt(name, days);
+      return value === null ? [] : [[name, value]];
+    }),
+  );
+}
+
+/** What the results rest on beside the defaults that were used on the way. */
+function listAssumptions({ constants, state, uptake, assumed }: Situation, model: FarmModel): void {
+  if (uptake.basis !== "none" || tracked.some((name) => state.carried[name])) {
+    assumed.add({
+      what: "the day's course",
+      value: "uptake and doses even through the day",
+      basis: "no estimate from the log yet",
+    });
+  }
+  const evaporates = factAt(constants.facts.evaporatesLPerDay, state.minute);
+  const topOff = factAt(constants.facts.topOff, state.minute)?.value;
+  if (evaporates && !topOff) {
+    assumed.add({
+      what: "evaporated water",
+      value: "made up as it goes, with fresh water",
+      basis: defaults.salinity.basis,
+    });
+  }
+  if (topOff?.solution && !evaporates) {
+    assumed.add({
+      what: "evaporation",
+      value: "unknown, so the top-off counts as none",
+      basis: "not stated",
+    });
+  }
+  const through = factAt(constants.facts.flowsThrough, state.minute)?.value;
+  if (through)
+    for (const assumption of constants.waterAt(through.water, state.minute).assumptions)
+      assumed.add(assumption);
+  for (const history of constants.facts.sources.values()) {
+    const source = factAt(history, state.minute)?.value;
+    for (const assumption of (source && model.solutions.get(source.solution)?.assumptions) ?? [])
+      assumed.add(assumption);
+  }
+}
+
+function projectCases(situation: Situation, plan: Plan | null): ReadonlyMap<DriftCase, Projection> {
+  const { constants, state } = situation;
+  const topOff = topOffFlow(constants, state.minute);
+  const set = flowsSet(constants, state, state.minute);
+  const phases = {
+    undosed: [{ untilDays: null, flows: [] }],
+    "as-set": [{ untilDays: null, flows: topOff ? [...set, topOff] : set }],
+    "as-planned": plan ? plannedPhases(situation, plan) : null,
+  };
+  const projections = driftCases.flatMap((name) => {
+    const of = phases[name];
+    const projection = of && project(state, constants, of);
+    return projection ? [[name, projection] as const] : [];
+  });
+  return new Map(projections);
+}
+
+function driftsOf({ constants, state }: Situation, projections: ReadonlyMap<DriftCase, Projection>): Drift[] {
+  return tracked.flatMap((parameter) => {
+    const hold = factAt(constants.facts.holds.get(parameter), state.minute)?.value;
+    if (!hold || !state.carried[parameter]) return [];
+    return [...projections].map(([name, projection]) => driftOf(state, parameter, hold, name, projection));
+  });
+}
+
+function driftOf(
+  state: WaterState,
+  parameter: Tracked,
+  hold: Hold,
+  name: DriftCase,
+  projection: Projection,
+): Drift {
+  const valueAt = (days: number) => projection.valueAt(parameter, days);
+  const points: { minute: number; value: number }[] = [];
+  for (let hours = 0; hours <= driftDays * 24; hours += driftStepHours) {
+    const value = valueAt(hours / 24);
+    if (value !== null) points.push({ minute: state.minute + hours * 60, value });
+  }
+  const days = leavesBandAfterDays(valueAt, hold.low, hold.high);
+  const leavesAt = days === null ? null : state.minute + Math.floor(days * minutesPerDay);
+  return { parameter, hold, case: name, leavesAt, points };
+}
+
+function volumeFindings(system: System, volume: Volume): DosingFinding[] {
+  const shared = { system: system.name };
+  if (volume.litres === null) {
+    const nothing = volume.geometricL === null;
+    const place = nothing ? system.place : (volume.largestDisplacement ?? system.place);
+    const reason = nothing ? "no-tank" : "nothing-left";
+    return [{ ...shared, code: "system/no-volume", place, reason, volumeL: volume.geometricL ?? 0 }];
+  }
+  const { measuredL, geometricL, measuredPlace } = volume;
+  if (measuredL === null || geometricL === null || !measuredPlace) return [];
+  if (Math.abs(geometricL - measuredL) <= volumeDifference * measuredL) return [];
+  return [{ ...shared, code: "system/volume-differs", place: measuredPlace, measuredL, geometricL }];
+}
+
+/** A measured volume further off the tanks' measures than this is asked about. Common practice, no source. */
+const volumeDifference = 0.1;
+
+/** Lines more than a day past both the moment asked and the real clock. */
+function futureLines(system: System, at: number, clock: number): DosingFinding[] {
+  const latest = Math.max(at, clock) + minutesPerDay;
+  return system.events
+    .filter(({ minute }) => minute > latest)
+    .map(({ minute, place }) => ({ code: "log/future", place, system: system.name, minute }));
+}

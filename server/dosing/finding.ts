@@ -1,0 +1,98 @@
+/** What the state of the water, the log's doses and the plan show: code, place and data, no sentences. */
+import type { ParameterName } from "../../grammar/parameters.ts";
+import type { CultureFinding } from "../culture/finding.ts";
+import type { DisplayUnit } from "../culture/model.ts";
+import type { Place } from "../culture/place.ts";
+import type { Dosed } from "./tracked.ts";
+
+interface OfParameter {
+  readonly parameter: ParameterName;
+  readonly unit: DisplayUnit;
+}
+
+type Own = { readonly place: Place; readonly system: string } & (
+  | (OfParameter & {
+      readonly code: "water/outside-hold";
+      readonly value: number;
+      readonly low: number;
+      readonly high: number;
+    })
+  | (OfParameter & {
+      readonly code: "water/leaves-hold-soon" | "water/leaves-hold";
+      readonly at: number;
+      readonly edge: number;
+      readonly takenPerDay: number | null;
+      readonly dosedPerDay: number;
+      /** What the plan gives a day: source and litres. */
+      readonly planned: readonly {
+        readonly by: string;
+        readonly solution: string;
+        readonly litresPerDay: number;
+      }[];
+    })
+  | (OfParameter & {
+      readonly code: "water/beyond-limit";
+      readonly which: "max" | "min";
+      readonly value: number;
+      readonly limit: number;
+    })
+  | (OfParameter & {
+      readonly code: "water/salinity-is-the-cause";
+      readonly value: number;
+      readonly scaled: number;
+      readonly salinity: number;
+      readonly salinityAim: number;
+      /** True where the value lies in its band only because salinity is off. */
+      readonly hidden: boolean;
+    })
+  | {
+      readonly code: "water/room-air";
+      readonly pH: number;
+      readonly pCO2Uatm: number;
+      readonly roomPpm: number;
+      readonly pHWithRoom: number;
+      readonly pHWithOutdoor: number;
+    }
+  | {
+      readonly code: "water/stale";
+      readonly parameters: readonly { readonly name: ParameterName; readonly readAt: number | null }[];
+    }
+  | (OfParameter & {
+      readonly code: `overdose/${Dosed}-rise` | `overdose/${Dosed}-dose` | `overdose/${Dosed}-max`;
+      readonly solution: string | null;
+      readonly value: number;
+      readonly limit: number;
+      readonly limitStated: boolean;
+    })
+  | {
+      readonly code: "overdose/ph";
+      readonly before: number;
+      readonly after: number;
+      readonly limit: number;
+      readonly of: "max" | "dose";
+    }
+  | {
+      readonly code: "overdose/precipitation";
+      readonly omega: number;
+      readonly pH: number;
+      readonly grade: "info" | "warning" | "error";
+    }
+  | {
+      readonly code: "plan/held-back" | "plan/no-source" | "plan/passive-breach";
+      readonly parameter: ParameterName;
+      readonly by: string;
+      readonly perDay: number | null;
+      readonly unit: DisplayUnit;
+    }
+  | {
+      readonly code: "plan/every-other-day";
+      readonly source: string;
+      readonly solution: string;
+      readonly everyDays: number;
+      readonly litresPerDose: number;
+      readonly leastL: number;
+    }
+  | { readonly code: "log/future"; readonly minute: number }
+);
+
+export type DosingFinding = CultureFinding | Own;

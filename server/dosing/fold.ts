@@ -1,0 +1,186 @@
+/** The log as a fold: a state, an event, the next state. What comes in between is carried forward in closed form. */
+import { factAt } from "../culture/history.ts";
+import type { ReadEvent, SystemEvent } from "../culture/model.ts";
+import type { SystemConstants } from "./constants.ts";
+import { after, type Flow, flowsSet, type Rates, ratesWith, topOffFlow } from "./rates.ts";
+import { type ByTracked, broughtPerLitre, byTracked, type Tracked, tracked } from "./tracked.ts";
+import { uptakeAt } from "./uptake.ts";
+import { volumeAt } from "./volume.ts";
+import { type Carried, carriedMinutes, minutesPerDay, startState, type WaterState } from "./water-state.ts";
+
+/** A dose of the log with the water just before it. */
+export interface DoseInLog {
+  readonly event: Extract<SystemEvent, { kind: "gave" | "set" | "topped" }>;
+  readonly before: WaterState;
+  readonly after: WaterState;
+}
+
+export interface Folded {
+  readonly state: WaterState;
+  readonly doses: readonly DoseInLog[];
+}
+
+/** Folds all events up to a minute, and carries the water to it. Later events wait silently. */
+export function foldEvents(constants: SystemConstants, events: readonly SystemEvent[], at: number): Folded {
+  let state = startState(events[0]?.minute ?? at);
+  const doses: DoseInLog[] = [];
+  for (const event of events) {
+    if (event.minute > at) break;
+    const before = carryTo(state, event.minute, constants);
+    state = happen(before, event, constants);
+    if (event.kind === "gave" || event.kind === "set" || event.kind === "topped")
+      doses.push({ event, before, after: state });
+  }
+  return { state: carryTo(state, at, constants), doses };
+}
+
+/** One step: the water carried to the event, and the event. */
+export const step = (state: WaterState, event: SystemEvent, constants: SystemConstants): WaterState =>
+  happen(carryTo(state, event.minute, constants), event, constants);
+
+/** The water carried to a later minute, piece by piece between the changes of its facts. */
+export function carryTo(state: WaterState, minute: number, constants: SystemConstants): WaterState {
+  if (minute <= state.minute) return state;
+  let { carried } = state;
+  let from = state.minute;
+  for (const change of constants.changes) {
+    if (change <= from) continue;
+    if (change >= minute) break;
+    carried = carryPiece({ ...state, minute: from, carried }, change, constants);
+    from = change;
+  }
+  carried = carryPiece({ ...state, minute: from, carried }, minute, constants);
+  return { ...state, minute, carried };
+}
+
+function carryPiece(state: WaterState, to: number, constants: SystemConstants): ByTracked<Carried | null> {
+  if (tracked.every((name) => !state.carried[name])) return state.carried;
+  const rates = ratesAsSet(state, (state.minute + to) / 2, constants);
+  if (!rates) return state.carried;
+  return byTracked((name) => {
+    const carried = state.carried[name];
+    if (!carried) return null;
+    const until = Math.min(to, carried.readAt + carriedMinutes);
+    if (until <= state.minute) return carried;
+    return { ...carried, value: after(carried.value, rates, name, (until - state.minute) / minutesPerDay) };
+  });
+}
+
+/** Rates with everything as it is set; null where the system's volume isn't known. */
+export function ratesAsSet(state: WaterState, minute: number, constants: SystemConstants): Rates | null {
+  const topOff = topOffFlow(constants, minute);
+  const flows = flowsSet(constants, state, minute);
+  return ratesAt(state, minute, constants, topOff ? [...flows, topOff] : flows);
+}
+
+/** Rates with given flows; null where the system's volume isn't known. */
+export function ratesAt(
+  state: WaterState,
+  minute: number,
+  constants: SystemConstants,
+  flows: readonly Flow[],
+): Rates | null {
+  const { litres } = volumeAt(constants.facts, minute);
+  if (litres === null) return null;
+  const uptake = uptakeAt(constants.facts, state, minute, litres, constants.firstEvent);
+  return ratesWith(constants, minute, litres, uptake, flows);
+}
+
+/** What an event does to the water, at its moment. */
+function happen(state: WaterState, event: SystemEvent, constants: SystemConstants): WaterState {
+  switch (event.kind) {
+    case "read":
+      return event.disregarded ? state : readInto(state, event);
+    case "set": {
+      const set = new Map(state.set);
+      for (const { source, litresPerDay } of event.rates) set.set(source, litresPerDay);
+      return { ...state, set };
+    }
+    case "gave":
+      return event.doses.reduce(
+        (next, { solution, litres }) => give(next, solution, litres, constants),
+        state,
+      );
+    case "topped":
+      return event.solution ? give(state, event.solution, event.litres, constants) : state;
+    case "renewed":
+      return renew(state, event.water, event.litres, constants);
+    case "stocked":
+    case "removed":
+    case "moved":
+      return restock(state, event.cohort, event.kind === "stocked" ? event.count : -event.count, constants);
+    case "stopped":
+      return { ...state, stopped: new Set([...state.stopped, event.pump]) };
+    case "started":
+      return { ...state, stopped: new Set([...state.stopped].filter((pump) => pump !== event.pump)) };
+    default:
+      return state;
+  }
+}
+
+/** A reading stands as read. */
+function readInto(state: WaterState, event: ReadEvent): WaterState {
+  const usable = (name: keyof ReadEvent["values"]) => {
+    const value = event.values[name];
+    return value && !value.impossible && !value.below ? value : null;
+  };
+  const carried = byTracked((name: Tracked): Carried | null => {
+    const reading = usable(name);
+    return reading ? { value: reading.value, readAt: event.minute, reading } : state.carried[name];
+  });
+  const pH = usable("pH");
+  const temperature = usable("temperature");
+  return {
+    ...state,
+    carried,
+    pH: pH ? { minute: event.minute, reading: pH } : state.pH,
+    temperature: temperature ? { minute: event.minute, value: temperature.value } : state.temperature,
+  };
+}
+
+const isCarried = (carried: Carried | null, minute: number): carried is Carried =>
+  carried !== null && minute - carried.readAt <= carriedMinutes;
+
+/** What a solution brings at once; the water it comes with makes up for evaporation later. */
+function give(state: WaterState, solution: string, litres: number, constants: SystemConstants): WaterState {
+  const strength = constants.strengthAt(solution, state.minute);
+  const volume = volumeAt(constants.facts, state.minute).litres;
+  if (!strength || volume === null) return state;
+  return {
+    ...state,
+    carried: byTracked((name) => {
+      const carried = state.carried[name];
+      if (!isCarried(carried, state.minute)) return carried;
+      const brought = (litres * (broughtPerLitre(strength, name) ?? 0)) / volume;
+      return { ...carried, value: Math.max(0, carried.value + brought) };
+    }),
+  };
+}
+
+/** Drained, then filled. */
+function renew(state: WaterState, water: string, litres: number, constants: SystemConstants): WaterState {
+  const volume = volumeAt(constants.facts, state.minute).litres;
+  if (volume === null) return state;
+  const share = Math.min(1, litres / volume);
+  const incoming = constants.waterAt(water, state.minute).values;
+  return {
+    ...state,
+    carried: byTracked((name) => {
+      const carried = state.carried[name];
+      if (!isCarried(carried, state.minute)) return carried;
+      return { ...carried, value: carried.value * (1 - share) + incoming[name] * share };
+    }),
+  };
+}
+
+function restock(state: WaterState, cohort: string, change: number, constants: SystemConstants): WaterState {
+  const entry =
+    factAt(constants.facts.cohorts.get(cohort), state.minute) ?? constants.facts.cohorts.get(cohort)?.[0];
+  if (!entry) return state;
+  const before = state.stock.get(cohort);
+  const counted = before && before.from === entry.from ? before.change : 0;
+  return {
+    ...state,
+    stock: new Map(state.stock).set(cohort, { from: entry.from, change: counted + change }),
+  };
+}

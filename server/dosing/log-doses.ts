@@ -1,0 +1,238 @@
+/** Doses of the log that broke a limit of the system, however old they are. */
+
+import { plainUnit } from "../culture/binder.ts";
+import { factAt } from "../culture/history.ts";
+import type { SystemEvent } from "../culture/model.ts";
+import type { Place } from "../culture/place.ts";
+import type { SystemConstants } from "./constants.ts";
+import { afterDelivery, waterOf } from "./dose-chemistry.ts";
+import type { DosingFinding } from "./finding.ts";
+import type { DoseInLog } from "./fold.ts";
+import { ratesAsSet } from "./fold.ts";
+import { limitAt } from "./limits.ts";
+import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
+import { uptakeAt } from "./uptake.ts";
+import { volumeAt } from "./volume.ts";
+import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+
+interface Given {
+  readonly minute: number;
+  readonly solution: string;
+  readonly litres: number;
+  readonly place: Place;
+}
+
+/** Ω of aragonite at which a dose is told of; chemistry of each step: Moras et al. 2022, Marion et al. 2009, Ringham et al. 2024. */
+const precipitationGrades = { info: 7, warning: 12, error: 30 } as const;
+const precipitationPh = 10;
+
+/** Checks every `gave` and `set` of a log against the limits that were in force. */
+export function checkDoses(
+  system: string,
+  constants: SystemConstants,
+  doses: readonly DoseInLog[],
+): DosingFinding[] {
+  const findings: DosingFinding[] = [];
+  const lastDay: Given[] = [];
+  for (const { event, before, after } of doses) {
+    if (event.kind === "set") {
+      findings.push(...checkSet(system, constants, event, after));
+      continue;
+    }
+    while (lastDay[0] && lastDay[0].minute <= event.minute - minutesPerDay) lastDay.shift();
+    let state = before;
+    for (const given of givenBy(event)) {
+      lastDay.push(given);
+      findings.push(...checkGiven(system, constants, state, given, lastDay));
+      state = withGiven(state, constants, given);
+    }
+  }
+  return findings;
+}
+
+function givenBy(event: Extract<SystemEvent, { kind: "gave" | "topped" }>): Given[] {
+  const { minute, place } = event;
+  if (event.kind === "gave") return event.doses.map((dose) => ({ minute, ...dose }));
+  return event.solution ? [{ minute, solution: event.solution, litres: event.litres, place }] : [];
+}
+
+/** The state with one of several doses of a line given, so that the next is judged from there. */
+function withGiven(state: WaterState, constants: SystemConstants, given: Given): WaterState {
+  const carried = { ...state.carried };
+  for (const name of dosed) {
+    const value = carried[name];
+    if (value && !isStale(value, state.minute))
+      carried[name] = { ...value, value: value.value + raised(state, constants, given, name) };
+  }
+  return { ...state, carried };
+}
+
+/** By how much a dose raises a parameter. */
+function raised(state: WaterState, constants: SystemConstants, given: Given, name: Dosed): number {
+  const strength = constants.strengthAt(given.solution, given.minute);
+  const litres = volumeAt(constants.facts, state.minute).litres;
+  return strength && litres ? (given.litres * (broughtPerLitre(strength, name) ?? 0)) / litres : 0;
+}
+
+function checkGiven(
+  system: string,
+  constants: SystemConstants,
+  state: WaterState,
+  given: Given,
+  lastDay: readonly Given[],
+): DosingFinding[] {
+  const findings: DosingFinding[] = [];
+  const { facts } = constants;
+  const { minute, place, solution } = given;
+  for (const name of dosed) {
+    const rise = raised(state, constants, given, name);
+    if (rise <= 0) continue;
+    const unit = factAt(facts.holds.get(name), minute)?.value.unit ?? plainUnit(name);
+    const shared = { place, system, parameter: name, unit, solution };
+    const dose = limitAt(facts, name, "dose", "hand", minute, null);
+    if (dose && rise > dose.value * tolerance) {
+      findings.push({
+        ...shared,
+        code: `overdose/${name}-dose`,
+        value: rise,
+        limit: dose.value,
+        limitStated: dose.place !== null,
+      });
+    }
+    const daily = risePerDay(constants, state, lastDay, name);
+    const limit = limitAt(facts, name, "rise", "hand", minute, null);
+    if (limit && daily !== null && daily > limit.value * tolerance) {
+      findings.push({
+        ...shared,
+        code: `overdose/${name}-rise`,
+        value: daily,
+        limit: limit.value,
+        limitStated: limit.place !== null,
+      });
+    }
+    const carried = state.carried[name];
+    const max = limitAt(facts, name, "max", "hand", minute, null);
+    if (max && carried && !isStale(carried, minute) && carried.value + rise > max.value * tolerance) {
+      const value = carried.value + rise;
+      findings.push({
+        ...shared,
+        code: `overdose/${name}-max`,
+        value,
+        limit: max.value,
+        limitStated: max.place !== null,
+      });
+    }
+  }
+  return [...findings, ...checkPeak(system, constants, state, given)];
+}
+
+/** A limit counts as broken from here on: a dose planned to the limit and rounded to a millilitre breaks none. */
+const tolerance = 1.005;
+
+/** The change of the day's mean that the doses of the last day make together; null where uptake isn't known. */
+function risePerDay(
+  constants: SystemConstants,
+  state: WaterState,
+  lastDay: readonly Given[],
+  name: Dosed,
+): number | null {
+  const rates = ratesAsSet(state, state.minute, constants);
+  const gain = rates?.gainPerDay[name];
+  const litres = volumeAt(constants.facts, state.minute).litres;
+  if (gain === null || gain === undefined || litres === null) return null;
+  const uptake = uptakeAt(constants.facts, state, state.minute, litres, constants.firstEvent);
+  if (uptake.perDay[name] === null) return null;
+  return gain + lastDay.reduce((sum, given) => sum + raised(state, constants, given, name), 0);
+}
+
+/** pH and Ω right after the dose, carbon closed. */
+function checkPeak(
+  system: string,
+  constants: SystemConstants,
+  state: WaterState,
+  given: Given,
+): DosingFinding[] {
+  const strength = constants.strengthAt(given.solution, given.minute);
+  const stale = isStale(state.carried.alkalinity, state.minute);
+  if (!strength || stale || ((strength.alkalinityMeq ?? 0) === 0 && (strength.calciumMg ?? 0) === 0))
+    return [];
+  const water = waterOf(state, constants, null);
+  const before = water && afterDelivery(water, strength, 0);
+  const after = water && afterDelivery(water, strength, given.litres);
+  if (!before || !after) return [];
+  const findings: DosingFinding[] = [];
+  const { place } = given;
+  const { facts } = constants;
+  for (const of of ["max", "dose"] as const) {
+    const limit = limitAt(facts, "pH", of, "hand", given.minute, null);
+    if (!limit) continue;
+    const [pHBefore, pHAfter] =
+      limit.scale === "total"
+        ? [before.carbonate.pHTotal, after.carbonate.pHTotal]
+        : [before.carbonate.pHNbs, after.carbonate.pHNbs];
+    const broken =
+      of === "max"
+        ? pHAfter > limit.value && pHAfter > pHBefore
+        : pHAfter - pHBefore > limit.value * tolerance;
+    if (broken)
+      findings.push({
+        code: "overdose/ph",
+        place,
+        system,
+        before: pHBefore,
+        after: pHAfter,
+        limit: limit.value,
+        of,
+      });
+  }
+  const { omegaAragonite: omega, pHNbs: pH } = after.carbonate;
+  const { info, warning, error } = precipitationGrades;
+  // Water that stands so high by itself is no work of the dose.
+  const raisedIt = omega > before.carbonate.omegaAragonite;
+  const grade =
+    omega >= error || pH >= precipitationPh
+      ? "error"
+      : omega >= warning
+        ? "warning"
+        : omega >= info
+          ? "info"
+          : null;
+  if (grade && raisedIt) findings.push({ code: "overdose/precipitation", place, system, omega, pH, grade });
+  return findings;
+}
+
+/** What is set from here on raises the day's mean more than the system allows. */
+function checkSet(
+  system: string,
+  constants: SystemConstants,
+  event: Extract<SystemEvent, { kind: "set" }>,
+  state: WaterState,
+): DosingFinding[] {
+  const rates = ratesAsSet(state, state.minute, constants);
+  if (!rates) return [];
+  const findings: DosingFinding[] = [];
+  for (const name of dosed) {
+    const gain = rates.gainPerDay[name];
+    const limit = limitAt(constants.facts, name, "rise", "pump", event.minute, null);
+    if (gain === null || !limit || gain <= limit.value * tolerance) continue;
+    const serving = event.rates.find(({ source }) => {
+      const entry = factAt(constants.facts.sources.get(source), event.minute);
+      const strength = entry && constants.strengthAt(entry.value.solution, event.minute);
+      return strength && (broughtPerLitre(strength, name) ?? 0) > 0;
+    });
+    if (!serving) continue;
+    const unit = factAt(constants.facts.holds.get(name), event.minute)?.value.unit ?? plainUnit(name);
+    findings.push({
+      code: `overdose/${name}-rise`,
+      place: serving.place,
+      system,
+      parameter: name,
+      unit,
+      solution: null,
+      value: gain,
+      limit: limit.value,
+      limitStated: limit.place !== null,
+    });
+  }
+  return findings;
+}

@@ -1,0 +1,265 @@
+/** From a system's state to today's plan: the problem of numbers is put together here and its answer read back. */
+
+import { constantsAt } from "../chemistry/constants-at.ts";
+import { largestDose } from "../chemistry/largest-dose.ts";
+import { defaults } from "../culture/defaults.ts";
+import { factAt } from "../culture/history.ts";
+import type { Hold, Source, Strength } from "../culture/model.ts";
+import type { Assuming } from "./assumptions.ts";
+import type { SystemConstants } from "./constants.ts";
+import { afterDelivery, strengthForChemistry, temperatureNow, waterOf } from "./dose-chemistry.ts";
+import { ratesAt } from "./fold.ts";
+import { limitAt } from "./limits.ts";
+import type { PlanAnswer, PlanParameter, PlanProblem, PlanSource } from "./plan-problem.ts";
+import { solvePlan } from "./plan-solve.ts";
+import { type Flow, litresSet, sourcesAt, topOffFlow } from "./rates.ts";
+import { judgeSalinity } from "./salinity-cause.ts";
+import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
+import type { Uptake } from "./uptake.ts";
+import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+
+export interface SourceInPlan {
+  readonly key: string;
+  readonly source: Source;
+  readonly strength: Strength;
+}
+
+export interface Plan {
+  readonly problem: PlanProblem;
+  readonly answer: PlanAnswer;
+  readonly sources: readonly SourceInPlan[];
+  /** The highest pH and Ω right after any one planned delivery; null where nothing is dosed or it can't be said. */
+  readonly peak: { readonly pHTotal: number; readonly pHNbs: number; readonly omegaAragonite: number } | null;
+}
+
+export interface Situation {
+  readonly constants: SystemConstants;
+  readonly state: WaterState;
+  readonly litres: number;
+  readonly uptake: Uptake;
+  readonly assumed: Assuming;
+}
+
+/** The holds in force of what can be dosed, in order of priority. */
+export const heldNow = ({ constants, state }: Situation): readonly Hold[] =>
+  dosed.flatMap((name) => factAt(constants.facts.holds.get(name), state.minute)?.value ?? []);
+
+/** Ω of aragonite that a delivery may reach, and below which magnesium or above which calcium alkalinity isn't raised. */
+const omegaMax = 12;
+const magnesiumLow = 1150;
+const calciumHigh = 480;
+
+/** Plans, or gives null where nothing is held. Without any source the answer holds only obstacles. */
+export function makePlan(situation: Situation): Plan | null {
+  const holds = heldNow(situation);
+  if (holds.length === 0) return null;
+  const sources = sourcesInPlan(situation);
+  const problem: PlanProblem = {
+    volumeL: situation.litres,
+    parameters: holds.map((hold) => planParameter(situation, hold)),
+    sources: sources.map((entry) => planSource(situation, entry)),
+  };
+  const answer = solvePlan(problem);
+  return { problem, answer, sources, peak: peakOf(situation, sources, answer) };
+}
+
+function sourcesInPlan({ constants, state }: Situation): SourceInPlan[] {
+  return sourcesAt(constants, state.minute).flatMap(({ key, source }) => {
+    const strength = constants.strengthAt(source.solution, state.minute);
+    return strength ? [{ key, source, strength }] : [];
+  });
+}
+
+function planParameter(situation: Situation, hold: Hold): PlanParameter {
+  const { constants, state, litres, uptake, assumed } = situation;
+  const name = hold.parameter as Dosed;
+  const carried = state.carried[name];
+  const fresh = carried && !isStale(carried, state.minute) ? carried : null;
+  const topOff = topOffFlow(constants, state.minute);
+  const rates = ratesAt(state, state.minute, constants, topOff ? [topOff] : []);
+  const gain = rates?.gainPerDay[name] ?? 0;
+  const exchange = (at: number) => (rates ? rates.exchangePerDay * (rates.incoming[name] - at) : 0);
+  const limit = (which: "rise" | "fall" | "max" | "min") =>
+    limitAt(constants.facts, name, which, "pump", state.minute, assumed)?.value ?? null;
+  if (
+    uptake.perDay[name] !== null &&
+    !uptake.magnesiumFractionStated &&
+    (name === "calcium" || name === "magnesium")
+  ) {
+    assumed.use(defaults.skeletonMagnesium);
+  }
+  return {
+    name,
+    now: fresh?.value ?? null,
+    low: hold.low,
+    high: hold.high,
+    aim: hold.aim,
+    needPerDay: uptake.perDay[name] === null ? null : -(gain + exchange(hold.aim)),
+    passivePerDay: gain + exchange(fresh?.value ?? hold.aim),
+    risePerDay: limit("rise"),
+    fallPerDay: limit("fall"),
+    max: limit("max"),
+    min: limit("min"),
+    heldBack: litres > 0 ? whyHeldBack(situation, hold, fresh?.value ?? null) : null,
+  };
+}
+
+export const noRecentReading = "no recent reading";
+
+/** Why a parameter isn't corrected, though it may be off its aim. */
+function whyHeldBack(situation: Situation, hold: Hold, value: number | null): string | null {
+  if (value === null) return noRecentReading;
+  const { constants, state } = situation;
+  const salinityHold = factAt(constants.facts.holds.get("salinity"), state.minute)?.value;
+  const salinity = state.carried.salinity;
+  if (salinityHold && salinity) {
+    const judgement = judgeSalinity(
+      value,
+      hold,
+      salinity.value,
+      salinityHold,
+      temperatureNow(state, constants, null),
+    );
+    if (judgement?.isTheCause) return "salinity";
+  }
+  if (hold.parameter !== "alkalinity") return null;
+  const now = (name: "magnesium" | "calcium") => {
+    const carried = state.carried[name];
+    return carried && !isStale(carried, state.minute) ? carried.value : null;
+  };
+  const magnesium = now("magnesium");
+  const calcium = now("calcium");
+  if (magnesium !== null && magnesium < magnesiumLow) return `magnesium under ${magnesiumLow} mg/L`;
+  return calcium !== null && calcium > calciumHigh ? `calcium over ${calciumHigh} mg/L` : null;
+}
+
+/** The most deliveries of a pump a day: one every five minutes of its hours. */
+const minutesBetweenDoses = 5;
+
+function planSource(situation: Situation, { key, source, strength }: SourceInPlan): PlanSource {
+  const { state, assumed } = situation;
+  const isPump = source.device === "pump";
+  const hours = hoursOpen(source);
+  const largest = largestDelivery(situation, source, strength);
+  if (isPump && source.leastL === null) assumed.use(defaults.pumpLeast);
+  if (!source.hours) assumed.use(isPump ? defaults.pumpHours : defaults.handHours);
+  return {
+    key,
+    strength: Object.fromEntries(dosed.map((name) => [name, broughtPerLitre(strength, name) ?? 0])),
+    largestDoseL: largest.litres,
+    largestDoseBy: largest.by,
+    leastDoseL: isPump ? (source.leastL ?? defaults.pumpLeast.value) : 0,
+    capacityLPerDay: source.flowLPerDay === null ? null : (source.flowLPerDay * hours) / minutesPerDay,
+    deliveries: isPump
+      ? { kind: "at-most", count: Math.max(1, Math.floor(hours / minutesBetweenDoses)) }
+      : { kind: "fixed", count: source.times },
+    alwaysLPerDay: source.alwaysLPerDay,
+    setLPerDay: litresSet(state, key, source),
+  };
+}
+
+/** Minutes a day in which a source may run; hours may run over midnight. */
+export function hoursOpen(source: Source): number {
+  if (source.device === "hand") return defaults.handHours.value;
+  if (!source.hours) return minutesPerDay;
+  const { from, to } = source.hours;
+  const length = to > from ? to - from : to + minutesPerDay - from;
+  return Math.min(length, minutesPerDay);
+}
+
+/** A delivery never makes up more than this share of the water, whatever it holds. */
+const largestShare = 0.1;
+
+/** The largest single delivery, and the limit that holds it down. */
+function largestDelivery(
+  situation: Situation,
+  source: Source,
+  strength: Strength,
+): { readonly litres: number; readonly by: string | null } {
+  const { constants, state, litres, assumed } = situation;
+  let most: { litres: number; by: string | null } = { litres: litres * largestShare, by: null };
+  for (const name of dosed) {
+    const brought = broughtPerLitre(strength, name) ?? 0;
+    const limit = limitAt(
+      constants.facts,
+      name,
+      "dose",
+      source.device,
+      state.minute,
+      brought > 0 ? assumed : null,
+    );
+    if (!limit || brought <= 0) continue;
+    const allowed = (Math.max(0, limit.value) * litres) / brought;
+    if (allowed < most.litres) most = { litres: allowed, by: `${name} dose` };
+  }
+  const solution = strengthForChemistry(strength);
+  const changesCarbon = solution && (solution.alkalinityMeqPerL !== 0 || solution.calciumMgPerL !== 0);
+  if (!changesCarbon) return most;
+  const water = waterOf(assumedState(situation), constants, assumed);
+  if (!water) return most;
+  const nbs = (scale: "NBS" | "total" | null, value: number) => {
+    const at = scale === "total" ? constantsAt(water.salinity, water.temperatureDegC) : null;
+    return at?.ok ? value + at.nbsLessTotal : value;
+  };
+  const max = limitAt(constants.facts, "pH", "max", source.device, state.minute, assumed);
+  const jump = limitAt(constants.facts, "pH", "dose", source.device, state.minute, assumed);
+  const found = largestDose(
+    water,
+    solution,
+    {
+      pHNbsMax: max ? nbs(max.scale, max.value) : Number.POSITIVE_INFINITY,
+      pHJumpMax: jump?.value ?? Number.POSITIVE_INFINITY,
+      omegaAragoniteMax: omegaMax,
+    },
+    most.litres,
+  );
+  if (!found.ok || found.bindingLimit === null || found.volumeL >= most.litres) return most;
+  const words = {
+    "pH max": "pH max",
+    "pH jump": "pH dose",
+    "omega aragonite": `Ω ${omegaMax}`,
+    "sea water": "sea water",
+  };
+  return { litres: found.volumeL, by: words[found.bindingLimit] };
+}
+
+/** The state for chemistry: where alkalinity was never read, it stands at its aim. */
+function assumedState({ state, constants, assumed }: Situation): WaterState {
+  const hold = factAt(constants.facts.holds.get("alkalinity"), state.minute)?.value;
+  if (state.carried.alkalinity || !hold) return state;
+  assumed.add({ what: "alkalinity, for pH and Ω", value: "at its aim", basis: "never read" });
+  const place = { file: "", line: 0, span: null };
+  const reading = { place, value: hold.aim, below: false, impossible: false, scale: null, unit: hold.unit };
+  return {
+    ...state,
+    carried: { ...state.carried, alkalinity: { value: hold.aim, readAt: state.minute, reading } },
+  };
+}
+
+function peakOf(situation: Situation, sources: readonly SourceInPlan[], answer: PlanAnswer): Plan["peak"] {
+  const water = waterOf(assumedState(situation), situation.constants, situation.assumed);
+  if (!water) return null;
+  const peaks = sources.flatMap(({ strength }, index) => {
+    const litres = answer.sources[index]?.litresPerDose ?? 0;
+    const after = litres > 0 ? afterDelivery(water, strength, litres) : null;
+    return after ? [after.carbonate] : [];
+  });
+  if (peaks.length === 0) return null;
+  return {
+    pHTotal: Math.max(...peaks.map(({ pHTotal }) => pHTotal)),
+    pHNbs: Math.max(...peaks.map(({ pHNbs }) => pHNbs)),
+    omegaAragonite: Math.max(...peaks.map(({ omegaAragonite }) => omegaAragonite)),
+  };
+}
+
+/** The planned flows as phases for the projection, with the top-off beside them. */
+export function plannedPhases({ constants, state }: Situation, plan: Plan) {
+  const topOff = topOffFlow(constants, state.minute);
+  return plan.answer.phases.map(({ untilDays, litresPerDay }) => {
+    const flows: Flow[] = plan.sources.map(({ source }, index) => ({
+      solution: source.solution,
+      litresPerDay: litresPerDay[index] ?? 0,
+    }));
+    return { untilDays, flows: topOff ? [...flows, topOff] : flows };
+  });
+}

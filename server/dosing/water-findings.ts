@@ -1,0 +1,278 @@
+/** What is wrong with the water now, and what soon will be. */
+
+import { pco2OfAir } from "../chemistry/carbon-before.ts";
+import { fromAlkalinityAndPco2 } from "../chemistry/carbonate-system.ts";
+import { constantsAt } from "../chemistry/constants-at.ts";
+import { plainUnit } from "../culture/binder.ts";
+import { outdoorAirPpm } from "../culture/defaults.ts";
+import { factAt } from "../culture/history.ts";
+import type { Hold, ReadValue, System } from "../culture/model.ts";
+import type { ReadingWithCarbonate } from "./carbonate-of-reading.ts";
+import type { SystemConstants } from "./constants.ts";
+import { temperatureNow } from "./dose-chemistry.ts";
+import type { DosingFinding } from "./finding.ts";
+import { limitAt } from "./limits.ts";
+import type { Plan } from "./make-plan.ts";
+import type { Drift } from "./projection.ts";
+import { flowsSet, topOffFlow } from "./rates.ts";
+import { judgeSalinity } from "./salinity-cause.ts";
+import { broughtPerLitre, dosed, isTracked, type Tracked, tracked } from "./tracked.ts";
+import type { Uptake } from "./uptake.ts";
+import { carriedMinutes, isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+
+export interface WaterSeen {
+  readonly system: System;
+  readonly at: number;
+  readonly constants: SystemConstants;
+  readonly state: WaterState;
+  readonly readings: readonly ReadingWithCarbonate[];
+  readonly staleParameters: readonly Tracked[];
+  readonly drifts: readonly Drift[];
+  readonly plan: Plan | null;
+  readonly uptake: Uptake | null;
+  readonly volume: { readonly litres: number | null };
+}
+
+export function waterFindings(seen: WaterSeen): DosingFinding[] {
+  return [
+    ...outsideHold(seen),
+    ...beyondLimit(seen),
+    ...leavesHold(seen),
+    ...salinityCause(seen),
+    ...roomAir(seen),
+    ...stale(seen),
+  ];
+}
+
+const holdOf = ({ constants, at }: WaterSeen, name: Hold["parameter"]) =>
+  factAt(constants.facts.holds.get(name), at);
+
+/** The value now of what isn't stale: carried for what is dosed, as last read for temperature and pH. */
+function valueNow(
+  { state, at }: WaterSeen,
+  name: Hold["parameter"],
+): { readonly value: number; readonly reading: ReadValue } | null {
+  if (isTracked(name)) {
+    const carried = state.carried[name];
+    return carried && !isStale(carried, at) ? carried : null;
+  }
+  if (name === "pH") {
+    const { pH } = state;
+    return pH && at - pH.minute <= carriedMinutes ? { value: pH.reading.value, reading: pH.reading } : null;
+  }
+  return null;
+}
+
+/** Where to point: at the reading that shows it, else at the hold that the carried value has left. */
+function outsideHold(seen: WaterSeen): DosingFinding[] {
+  return [...seen.constants.facts.holds.keys()].flatMap((parameter): DosingFinding[] => {
+    const hold = holdOf(seen, parameter);
+    const now = parameter === "temperature" ? lastRead(seen, parameter) : valueNow(seen, parameter);
+    if (!hold || !now) return [];
+    const { low, high, scale, unit } = hold.value;
+    const on = (value: number) => sameScale(seen, value, now.reading.scale, scale);
+    const value = on(now.value);
+    const slack = Math.abs(low) * 1e-9;
+    if (value >= low - slack && value <= high + slack) return [];
+    const read = on(now.reading.value);
+    const place = read < low || read > high ? now.reading.place : hold.place;
+    return [
+      { code: "water/outside-hold", place, system: seen.system.name, parameter, unit, value, low, high },
+    ];
+  });
+}
+
+function lastRead({ readings, at }: WaterSeen, parameter: "temperature") {
+  const found = readings.findLast(({ event }) => {
+    const value = event.values[parameter];
+    return value && !event.disregarded && !value.impossible && !value.below;
+  });
+  const reading = found?.event.values[parameter];
+  return reading && found && at - found.event.minute <= carriedMinutes
+    ? { value: reading.value, reading }
+    : null;
+}
+
+/** A pH read on one scale, on the scale that it is compared on. */
+function sameScale(
+  { state, constants }: WaterSeen,
+  value: number,
+  from: ReadValue["scale"],
+  to: ReadValue["scale"],
+): number {
+  if (!from || !to || from === to) return value;
+  const water = constantsAt(state.carried.salinity?.value ?? 35, temperatureNow(state, constants, null));
+  if (!water.ok) return value;
+  return to === "NBS" ? value + water.nbsLessTotal : value - water.nbsLessTotal;
+}
+
+function beyondLimit(seen: WaterSeen): DosingFinding[] {
+  return [...tracked, "pH" as const].flatMap((parameter) =>
+    (["max", "min"] as const).flatMap((which): DosingFinding[] => {
+      const now = valueNow(seen, parameter);
+      const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);
+      if (!now || !limit) return [];
+      const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
+      const broken = which === "max" ? value > limit.value : value < limit.value;
+      if (!broken) return [];
+      const unit = holdOf(seen, parameter)?.value.unit ?? now.reading.unit ?? plainUnit(parameter);
+      const { place } = now.reading;
+      return [
+        {
+          code: "water/beyond-limit",
+          place,
+          system: seen.system.name,
+          parameter,
+          unit,
+          which,
+          value,
+          limit: limit.value,
+        },
+      ];
+    }),
+  );
+}
+
+/** Days ahead within which leaving the band is a warning, and a note. */
+const soonDays = 3;
+const noteDays = 7;
+
+function leavesHold(seen: WaterSeen): DosingFinding[] {
+  return seen.drifts.flatMap((drift): DosingFinding[] => {
+    const { parameter, hold, leavesAt } = drift;
+    if (
+      drift.case !== "as-set" ||
+      leavesAt === null ||
+      leavesAt <= seen.at ||
+      seen.staleParameters.includes(parameter)
+    )
+      return [];
+    const days = (leavesAt - seen.at) / minutesPerDay;
+    const place = holdOf(seen, parameter)?.place;
+    if (days > noteDays || !place) return [];
+    const value = drift.points.find(({ minute }) => minute >= leavesAt)?.value ?? hold.low;
+    const edge = value <= hold.low || value < (hold.low + hold.high) / 2 ? hold.low : hold.high;
+    return [
+      {
+        code: days <= soonDays ? "water/leaves-hold-soon" : "water/leaves-hold",
+        place,
+        system: seen.system.name,
+        parameter,
+        unit: hold.unit,
+        at: leavesAt,
+        edge,
+        takenPerDay: takenPerDay(seen, parameter),
+        dosedPerDay: dosedPerDay(seen, parameter),
+        planned: plannedFor(seen, parameter),
+      },
+    ];
+  });
+}
+
+function takenPerDay({ uptake, volume }: WaterSeen, parameter: Tracked): number | null {
+  const taken = parameter === "salinity" ? null : (uptake?.perDay[parameter] ?? null);
+  return taken === null || volume.litres === null ? null : taken / volume.litres;
+}
+
+function dosedPerDay({ constants, state, at, volume }: WaterSeen, parameter: Tracked): number {
+  const topOff = topOffFlow(constants, at);
+  const flows = [...flowsSet(constants, state, at), ...(topOff ? [topOff] : [])];
+  const brought = flows.reduce((sum, { solution, litresPerDay }) => {
+    const strength = constants.strengthAt(solution, at);
+    return sum + litresPerDay * ((strength && broughtPerLitre(strength, parameter)) ?? 0);
+  }, 0);
+  return volume.litres === null ? 0 : brought / volume.litres;
+}
+
+function plannedFor({ plan }: WaterSeen, parameter: Tracked) {
+  if (!plan || parameter === "salinity") return [];
+  return plan.sources.flatMap(({ source, strength }, index) => {
+    const litresPerDay = plan.answer.sources[index]?.totalLPerDay;
+    const serves = (broughtPerLitre(strength, parameter) ?? 0) > 0;
+    return serves && litresPerDay ? [{ by: source.by, solution: source.solution, litresPerDay }] : [];
+  });
+}
+
+function salinityCause(seen: WaterSeen): DosingFinding[] {
+  const salinityHold = holdOf(seen, "salinity")?.value;
+  const salinity = valueNow(seen, "salinity");
+  if (!salinityHold || !salinity) return [];
+  return dosed.flatMap((parameter): DosingFinding[] => {
+    const hold = holdOf(seen, parameter);
+    const now = valueNow(seen, parameter);
+    if (!hold || !now) return [];
+    const temperature = temperatureNow(seen.state, seen.constants, null);
+    const judgement = judgeSalinity(now.value, hold.value, salinity.value, salinityHold, temperature);
+    if (!judgement || !(judgement.isTheCause || judgement.hidesIt)) return [];
+    return [
+      {
+        code: "water/salinity-is-the-cause",
+        place: now.reading.place,
+        system: seen.system.name,
+        parameter,
+        unit: hold.value.unit,
+        value: now.value,
+        scaled: judgement.scaled,
+        salinity: salinity.value,
+        salinityAim: salinityHold.aim,
+        hidden: judgement.hidesIt,
+      },
+    ];
+  });
+}
+
+/** More CO2 in the water than balance with outdoor air explains, by this factor, is called high. */
+const highCarbonDioxide = 1.15;
+
+/**
+ * A pH under its band with much CO2 in the water is a matter of ventilation, where the room's air is stated:
+ * which pH this alkalinity would have in balance with the room's air and with outdoor air.
+ */
+function roomAir(seen: WaterSeen): DosingFinding[] {
+  const air = factAt(seen.constants.facts.air, seen.at)?.value;
+  const hold = holdOf(seen, "pH")?.value;
+  const latest = seen.readings.findLast(({ carbonate }) => carbonate !== null);
+  if (!air || !hold || !latest?.carbonate || seen.at - latest.event.minute > carriedMinutes) return [];
+  const { state } = latest.carbonate;
+  const salinity = seen.state.carried.salinity?.value ?? 35;
+  const temperature = temperatureNow(seen.state, seen.constants, null);
+  const constants = constantsAt(salinity, temperature);
+  if (!constants.ok) return [];
+  const pHOf = ({ pHNbs, pHTotal }: { pHNbs: number; pHTotal: number }) =>
+    hold.scale === "total" ? pHTotal : pHNbs;
+  const roomUatm = air.unit === "ppm" ? pco2OfAir(air.value, constants) : air.value;
+  const outdoorUatm = pco2OfAir(outdoorAirPpm, constants);
+  if (pHOf(state) >= hold.low || state.pCO2Uatm < outdoorUatm * highCarbonDioxide) return [];
+  const balanced = (pCO2Uatm: number) =>
+    fromAlkalinityAndPco2(
+      { alkalinityUmolPerKg: state.alkalinityUmolPerKg, pCO2Uatm },
+      { salinity, temperatureDegC: temperature, calciumUmolPerKg: 0 },
+      constants,
+    );
+  const room = balanced(roomUatm);
+  const outdoor = balanced(outdoorUatm);
+  if (!room.ok || !outdoor.ok) return [];
+  const place = latest.event.values.pH?.place ?? latest.event.place;
+  const roomPpm = air.unit === "ppm" ? air.value : air.value / constants.dryAirShare;
+  return [
+    {
+      code: "water/room-air",
+      place,
+      system: seen.system.name,
+      pH: pHOf(state),
+      pCO2Uatm: state.pCO2Uatm,
+      roomPpm,
+      pHWithRoom: pHOf(room),
+      pHWithOutdoor: pHOf(outdoor),
+    },
+  ];
+}
+
+function stale(seen: WaterSeen): DosingFinding[] {
+  if (seen.staleParameters.length === 0) return [];
+  const parameters = seen.staleParameters.map((name) => ({
+    name,
+    readAt: seen.state.carried[name]?.readAt ?? null,
+  }));
+  return [{ code: "water/stale", place: seen.system.place, system: seen.system.name, parameters }];
+}
