@@ -1,1 +1,67 @@
-console.log("marl");
+/** The command line: the one place that knows the process, its streams and its status. */
+
+import { nearestWords } from "../grammar/nearest.ts";
+import manifest from "../package.json" with { type: "json" };
+import { check } from "./commands/check.ts";
+import { type Command, type Outlet, readWords, type Status } from "./commands/command.ts";
+import { help, helpFor } from "./commands/help.ts";
+import { refuse } from "./commands/refuse.ts";
+import { sheet } from "./commands/sheet.ts";
+import { clockNow } from "./environment.ts";
+
+const commands: readonly Command[] = [check, sheet];
+
+const { stdout, stderr, env } = process;
+
+/** https://no-color.org: any value that isn't empty switches colour off. */
+const noColor = env.NO_COLOR !== undefined && env.NO_COLOR !== "";
+
+function outletFor(words: readonly string[]): Outlet {
+  const watched = stderr.isTTY === true;
+  return {
+    out: (text) => void stdout.write(text),
+    error: (text) => void stderr.write(text),
+    progress: (text) => {
+      if (watched) stderr.write(`\r\u001b[K${text ?? ""}`);
+    },
+    color: !noColor && (stdout.isTTY === true || words.includes("--color")),
+    clock: clockNow(),
+  };
+}
+
+async function run(words: readonly string[]): Promise<Status> {
+  const outlet = outletFor(words);
+  const [first, ...rest] = words;
+  if (first === undefined || first === "--help" || first === "-h" || first === "help") {
+    const write = first === undefined ? outlet.error : outlet.out;
+    write(help(commands));
+    return first === undefined ? 2 : 0;
+  }
+  if (first === "--version") {
+    outlet.out(`marl ${manifest.version}\n`);
+    return 0;
+  }
+  const command = commands.find(({ name }) => name === first);
+  if (!command) {
+    const [near] = nearestWords(
+      first,
+      commands.map(({ name }) => name),
+    );
+    return refuse(outlet, `${first} is no command${near ? `; ${near}?` : ""} (marl --help lists them)`);
+  }
+  const read = readWords(command, rest);
+  if ("reason" in read) return refuse(outlet, `${read.reason} (marl ${command.name} --help)`);
+  if (read.flag("help")) {
+    outlet.out(helpFor(command));
+    return 0;
+  }
+  return command.run(read, outlet);
+}
+
+// A reader that went away (`marl sheet … | head`) is no failure.
+stdout.on("error", (error: NodeJS.ErrnoException) => {
+  if (error.code === "EPIPE") process.exit(0);
+  throw error;
+});
+
+process.exitCode = await run(process.argv.slice(2));

@@ -1,0 +1,150 @@
+/** Names that are used and not declared, declared twice, or never used; and `use` lines. */
+import type { NamedKind, OwnKind } from "../culture/finding.ts";
+import { replacingWith } from "./fixing.ts";
+import type { LineFix } from "./problem.ts";
+import type { Of, Rules } from "./rule.ts";
+import { allOf, inQuotes, nameOf, oneOf, sourceName } from "./words.ts";
+
+const kindInWords: Readonly<Record<NamedKind | OwnKind, string>> = {
+  system: "system",
+  solution: "solution",
+  reagent: "reagent",
+  saltwater: "salt water",
+  kit: "kit",
+  pump: "pump",
+  cohort: "cohort",
+  source: "hand dose",
+};
+const kindOf = (kind: string): string => kindInWords[kind as NamedKind] ?? kind;
+const withArticle = (words: string): string => `a ${words}`;
+
+type Undeclared = Of<"name/undeclared">;
+const isOfSystem = (wanted: readonly string[]): boolean =>
+  wanted.some((kind) => kind === "pump" || kind === "cohort" || kind === "source");
+
+/** A hand dose is offered by the name of what it gives. */
+const offered = (nearest: readonly string[]): string[] =>
+  nearest.map((word) => word.replace(/^hand /, "")).map(nameOf);
+
+function undeclared(finding: Undeclared): string {
+  const { word } = finding;
+  if ("severalSources" in finding)
+    return `${inQuotes(word)} is given by more than one source: ${allOf(finding.severalSources)}.`;
+  const wanted = oneOf(finding.wanted.map(kindOf));
+  if (finding.standsFor)
+    return `${inQuotes(word)} is ${withArticle(kindOf(finding.standsFor))}, and ${withArticle(wanted)} is wanted here.`;
+  if (finding.elsewhere)
+    return `${inQuotes(word)} is declared in ${finding.elsewhere}, which this file doesn't use.`;
+  return isOfSystem(finding.wanted)
+    ? `This system has no ${wanted} ${inQuotes(word)}.`
+    : `No ${wanted} ${inQuotes(word)} is declared here.`;
+}
+
+function undeclaredTodo(finding: Undeclared): string {
+  if ("severalSources" in finding) return "Write the name of the pump that is meant.";
+  if (finding.elsewhere)
+    return `Put use ${inQuotes(pathTo(finding.place.file, finding.elsewhere))} at the top.`;
+  const nearest = offered(finding.nearest);
+  if (nearest.length > 0) return `Is ${oneOf(nearest)} meant?`;
+  return isOfSystem(finding.wanted)
+    ? "Declare it in the system's section."
+    : "Declare it in a section of its own, or use the file that declares it.";
+}
+
+function undeclaredFixes(finding: Undeclared): readonly LineFix[] {
+  if ("severalSources" in finding)
+    return replacingWith(
+      finding.place,
+      finding.severalSources.filter((by) => by !== sourceName("hand")),
+      false,
+    );
+  if (!finding.elsewhere) return replacingWith(finding.place, offered(finding.nearest), false);
+  const { file } = finding.place;
+  const text = `use "${pathTo(file, finding.elsewhere)}"`;
+  return [
+    { title: `Add ${text}`, safe: false, edits: [{ file, line: 0, start: 0, end: 0, text: `${text}\n` }] },
+  ];
+}
+
+/** The way from a file to another, both counted from the farm's folder. */
+function pathTo(from: string, to: string): string {
+  const here = from.split("/").slice(0, -1);
+  const there = to.split("/");
+  let shared = 0;
+  while (shared < here.length && shared < there.length - 1 && here[shared] === there[shared]) shared += 1;
+  return [...here.slice(shared).map(() => ".."), ...there.slice(shared)].join("/");
+}
+
+function twice({ word, what, first }: Of<"name/twice">): string {
+  if (what === "fact") return `${inQuotes(word)} is stated twice for the same time.`;
+  if (what === "reading") return `${inQuotes(word)} is read twice on this line.`;
+  return first
+    ? `${inQuotes(word)} is declared twice, here as ${withArticle(kindOf(what))}.`
+    : `${inQuotes(word)} is the name of a built-in reagent already.`;
+}
+
+export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous-reagent" | "name/unused"> = {
+  "name/undeclared": {
+    severity: "error",
+    title: "A name that isn't declared",
+    says: undeclared,
+    why: "What this line says of it is left out.",
+    todo: undeclaredTodo,
+    fixes: undeclaredFixes,
+    background:
+      "A file sees its own names and those of the files that it uses, and that these use. Pumps, hand doses and cohorts are names of one system.",
+    example: {
+      fires:
+        "system vat\n  tank main 500 L\n  pump head-1 gives ash-prat at 40 mL/min\n  by-hand ash-part\n\nsolution ash-part\n  supplies alkalinity 1.6 meq/mL\n",
+      silent:
+        "system vat\n  tank main 500 L\n  pump head-1 gives ash-part at 40 mL/min\n  by-hand ash-part\n\nsolution ash-part\n  supplies alkalinity 1.6 meq/mL\n",
+    },
+  },
+  "name/twice": {
+    severity: "error",
+    title: "A name, fact or value given twice",
+    says: twice,
+    why: "Two that differ can't both hold; the first one counts.",
+    todo: ({ what, first }) =>
+      what === "fact"
+        ? "Keep one, or write from which date the newer one holds: from 2026-12-01."
+        : what === "reading"
+          ? "Keep one, or write the second test on a line of its own."
+          : first
+            ? "Give one of them another name."
+            : "Give it a name of your own.",
+    related: ({ first, word }) => (first ? [{ place: first, message: `The first ${inQuotes(word)}` }] : []),
+    background:
+      "A solution may be declared again with `from DATE` behind its name: that is its next recipe, and no mistake.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  tank main 520 L\n",
+      silent: "system vat\n  tank main 500 L\n  tank main 520 L from 2026-11-01\n",
+    },
+  },
+  "name/ambiguous-reagent": {
+    severity: "error",
+    title: "A reagent that is sold with different amounts of water",
+    says: ({ word }) => `${inQuotes(word)} names several salts, which differ in their water.`,
+    why: "Their strengths differ up to twofold, so the recipe's strength stays unknown.",
+    todo: ({ offers }) => `Write ${oneOf(offers)}, as the label says.`,
+    fixes: ({ place, offers }) => replacingWith(place, offers, false),
+    example: {
+      fires:
+        "system vat\n  tank main 500 L\n  by-hand chloride-part\n\nsolution chloride-part\n  dissolve calcium-chloride 400 g\n  make up to 5 L\n",
+      silent:
+        "system vat\n  tank main 500 L\n  by-hand chloride-part\n\nsolution chloride-part\n  dissolve calcium-chloride-dihydrate 400 g\n  make up to 5 L\n",
+    },
+  },
+  "name/unused": {
+    severity: "hint",
+    title: "Something declared that nothing uses",
+    says: ({ word, kind }) => `Nothing uses the ${kindOf(kind)} ${inQuotes(word)}.`,
+    why: "It may be left over, or misspelt where it should be used.",
+    todo: "Remove it, or leave it if its use is still to come.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n\nsolution ash-part\n  supplies alkalinity 1.6 meq/mL\n",
+      silent:
+        "system vat\n  tank main 500 L\n  by-hand ash-part\n\nsolution ash-part\n  supplies alkalinity 1.6 meq/mL\n",
+    },
+  },
+};

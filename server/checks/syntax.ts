@@ -1,0 +1,247 @@
+/** Lines that can't be read. Each is left out and every other line still counts. */
+import { numberReadings } from "../../grammar/numbers.ts";
+import { statementTable } from "../../grammar/statements.ts";
+import type { SectionKind } from "../../grammar/syntax.ts";
+import { replacingWith } from "./fixing.ts";
+import type { Of, Rules } from "./rule.ts";
+import { inQuotes, isParameter, oneOf } from "./words.ts";
+
+const why = "What the line says counts for nothing until it can be read; every other line counts.";
+const leftOut = (): string => "This line is left out.";
+
+/** What is told of a line's words; the recipe of a solution is told of as a whole. */
+const isRecipe = ({ place }: Of<"syntax/unfinished">): boolean => place.span === null;
+
+const isFormula = (expected: readonly string[]): boolean =>
+  expected[0]?.startsWith("a chemical formula") === true;
+
+/** Kinds of words and keywords as a technician calls them. */
+const said = (expected: readonly string[]): string => oneOf(expected);
+
+function unknownWord({ word, expected }: Of<"syntax/unknown-word">): string {
+  if (isFormula(expected)) return `${inQuotes(word)} can't be read as part of a chemical formula.`;
+  if (isParameter(word)) return `${inQuotes(word)} can't be given here.`;
+  if (expected.length > 0 && expected.every((other) => other === "a parameter" || isParameter(other)))
+    return `${inQuotes(word)} is no parameter.`;
+  if (expected.includes("a unit") && !expected.includes("a quantity") && /^\D/.test(word))
+    return `${inQuotes(word)} is no unit.`;
+  return `${inQuotes(word)} has no meaning here.`;
+}
+
+const sections = (belongs: readonly SectionKind[]): string => {
+  const words = oneOf(belongs);
+  return `${/^[aeiou]/.test(words) ? "an" : "a"} ${words}`;
+};
+
+const isHeader = (word: string): boolean =>
+  statementTable.some((row) => row.form === "header" && row.word === word);
+
+type Misplaced = Of<"syntax/misplaced">;
+
+/** What is said and to be done for each way in which a word can stand wrongly. */
+const misplaced: Readonly<
+  Record<Misplaced["why"], { says: (finding: Misplaced) => string; todo: (finding: Misplaced) => string }>
+> = {
+  section: {
+    says: ({ word, belongs }) =>
+      `A line that starts with ${inQuotes(word)} belongs in ${sections(belongs)} section.`,
+    todo: ({ belongs }) => `Move it under the header of ${sections(belongs)}.`,
+  },
+  margin: {
+    says: ({ word }) => `${inQuotes(word)} stands at the margin, where sections begin.`,
+    todo: () => "Indent the line by two spaces.",
+  },
+  repeated: {
+    says: ({ word }) => `${inQuotes(word)} stands on this line twice.`,
+    todo: () => "Keep one of the two.",
+  },
+  "keyword-as-name": {
+    says: ({ word }) => `${inQuotes(word)} is a word of the language and can't be a name.`,
+    todo: ({ word }) => `Choose another name, for example ${word}-1.`,
+  },
+  dated: {
+    says: ({ word }) => `A line with ${inQuotes(word)} states a fact, and doesn't start with a date.`,
+    todo: ({ word }) =>
+      isHeader(word) ? "Leave out the date." : "Write the date at the end instead: from 2026-12-01.",
+  },
+  undated: {
+    says: ({ word }) => `A line with ${inQuotes(word)} says what happened, and starts with its date.`,
+    todo: () => "Put the date in front, for example 2026-12-01 08:00.",
+  },
+  "no-section": {
+    says: () => "This line stands before any section.",
+    todo: ({ belongs }) =>
+      belongs.length > 0
+        ? `Put it under the header of ${sections(belongs)}.`
+        : "Put it under its section's header.",
+  },
+  order: {
+    says: ({ word }) => `${inQuotes(word)} stands at the wrong place of its line.`,
+    todo: ({ expected }) =>
+      expected && expected.length > 0 ? `Here comes ${said(expected)}.` : "Move it to its place.",
+  },
+};
+
+/** Digits that are plain and still can't be what is asked for here. */
+const isPlain = (word: string): boolean => /^-?\d+(\.\d+)?$/.test(word);
+const mostDigits = 15;
+
+function numberForm({ word }: Of<"syntax/number-form">): string {
+  if (!isPlain(word)) return `${inQuotes(word)} isn't a plain number.`;
+  if (word.length > mostDigits) return `${inQuotes(word)} has more digits than any quantity here.`;
+  return word.startsWith("-") ? `${inQuotes(word)} is below zero.` : `${inQuotes(word)} can't be used here.`;
+}
+
+function numberTodo({ word, readings }: Of<"syntax/number-form">): string {
+  if (readings.length > 0) return `Write ${oneOf(readings)}.`;
+  if (!isPlain(word))
+    return "Write the digits with a point before the decimals and nothing else between them.";
+  return word.length > mostDigits
+    ? "Write it with fewer digits."
+    : "Write a share as at most 100 %, and a count as a whole number above 0.";
+}
+
+/** `8.10`, which may be a time and may be a number. */
+const isHalfTime = (word: string): boolean => /^\d{1,2}\.\d\d$/.test(word);
+const isTime = (word: string): boolean => word.includes(":") || isHalfTime(word);
+
+export const syntaxRules: Rules<
+  | "syntax/unknown-word"
+  | "syntax/unfinished"
+  | "syntax/number-form"
+  | "syntax/date-form"
+  | "syntax/misplaced"
+  | "syntax/merge-marks"
+> = {
+  "syntax/unknown-word": {
+    severity: "error",
+    title: "A word that has no meaning where it stands",
+    says: unknownWord,
+    why,
+    because: leftOut,
+    todo: ({ expected, nearest }) =>
+      nearest.length > 0
+        ? `Is ${oneOf(nearest)} meant?`
+        : isFormula(expected)
+          ? "Write it like SrCl2·6H2O."
+          : expected.length > 0
+            ? `Here can stand ${said(expected)}.`
+            : "Remove it, or start a comment with # before it.",
+    fixes: ({ place, nearest }) => replacingWith(place, nearest, false),
+    background:
+      "A misspelt header is one problem: the lines below it are read as the nearest header's section. Where no header is near, they are left out with it.",
+    example: {
+      fires: "system vat\n  tnak main 500 L\n  tank sump 100 L\n",
+      silent: "system vat\n  tank main 500 L\n  tank sump 100 L\n",
+    },
+  },
+  "syntax/unfinished": {
+    severity: "error",
+    title: "A line or a recipe that stops short",
+    says: (finding) =>
+      isRecipe(finding)
+        ? finding.expected.includes("make up to")
+          ? "This recipe doesn't say to which volume it is made up."
+          : "This recipe doesn't say what is in it."
+        : finding.expected[0] === '"'
+          ? "This text in quotes isn't closed."
+          : "This line stops short.",
+    why,
+    because: (finding) =>
+      isRecipe(finding) ? "Its strength stays unknown, so no dose of it can be worked out." : leftOut(),
+    todo: (finding) => {
+      const { expected } = finding;
+      if (isRecipe(finding))
+        return expected.includes("make up to")
+          ? "Add a line: make up to, and the volume."
+          : `Add a line that starts with ${oneOf(expected)}.`;
+      if (expected[0] === '"') return 'Put a " at its end.';
+      return expected.length > 0 ? `Next comes ${said(expected)}.` : "Finish it, or remove it.";
+    },
+    background: "Of a solution whose recipe lacks a part the problem stands at the solution's header.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  evaporates\n",
+      silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day\n",
+    },
+  },
+  "syntax/number-form": {
+    severity: "error",
+    title: "A number that can be read in more than one way, or can't be one",
+    says: numberForm,
+    why,
+    because: leftOut,
+    todo: numberTodo,
+    fixes: ({ place, word, readings }) => replacingWith(place, readings, sameNumber(word, readings)),
+    background:
+      "A point stands before decimals, and nothing between thousands: 1,250 is 1.25 to some and 1250 to others, and a dose a thousand times too large is not to be guessed at.",
+    example: {
+      fires: "system vat\n  tank main 1,250 L\n  tank sump 100 L\n",
+      silent: "system vat\n  tank main 1250 L\n  tank sump 100 L\n",
+    },
+  },
+  "syntax/date-form": {
+    severity: "error",
+    title: "A date or a time that isn't one",
+    says: ({ word }) =>
+      isTime(word)
+        ? `${inQuotes(word)} isn't a time of day written like 08:10.`
+        : `${inQuotes(word)} isn't a day written like 2026-12-01.`,
+    why,
+    because: leftOut,
+    todo: ({ word, readings }) =>
+      readings.length > 0
+        ? `Write ${oneOf(readings)}.`
+        : isTime(word)
+          ? "Write hours and minutes, 00:00 to 24:00."
+          : "Write year, month and day of a day that exists.",
+    fixes: ({ place, word, readings }) => replacingWith(place, readings, !isHalfTime(word)),
+    background: "03/04 is March to some and April to others, so the year comes first and the day last.",
+    example: {
+      fires: 'system vat\n  tank main 500 L\n\nlog vat\n  03.04.2026 08:00 note "Moved to the new hall."\n',
+      silent: 'system vat\n  tank main 500 L\n\nlog vat\n  2026-04-03 08:00 note "Moved to the new hall."\n',
+    },
+  },
+  "syntax/misplaced": {
+    severity: "error",
+    title: "A line or a word at a place where it doesn't belong",
+    says: (finding) => misplaced[finding.why].says(finding),
+    why,
+    because: leftOut,
+    todo: (finding) => misplaced[finding.why].todo(finding),
+    fixes: ({ place: { file, line }, why }) =>
+      why === "margin"
+        ? [{ title: "Indent the line", safe: false, edits: [{ file, line, start: 0, end: 0, text: "  " }] }]
+        : [],
+    background:
+      "Standing facts belong to what they describe (`system`, `solution`, `kit` …) and may end with `from` and `until`; what happened belongs in a `log` or `store` and starts with its date.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  2026-11-30 evaporates 4 L/day\n",
+      silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day from 2026-11-30\n",
+    },
+  },
+  "syntax/merge-marks": {
+    severity: "error",
+    title: "Marks of an unfinished merge",
+    says: () => "Here an unfinished merge left its marks.",
+    why: "The lines of both sides count until it is settled, so doses and readings may count twice.",
+    todo: "Keep the lines that are right, and remove the marks.",
+    example: {
+      fires: [
+        "system vat",
+        "  tank main 500 L",
+        "<<<<<<< ours",
+        "  tank sump 100 L",
+        "=======",
+        "  tank settler 80 L",
+        ">>>>>>> theirs",
+        "",
+      ].join("\n"),
+      silent: "system vat\n  tank main 500 L\n  tank sump 100 L\n",
+    },
+  },
+};
+
+/** True where the digits can have meant one number only: not where a sign or a mark is dropped that says more. */
+function sameNumber(word: string, readings: readonly string[]): boolean {
+  return readings.length === 1 && !isPlain(word) && numberReadings(word).length === 1;
+}

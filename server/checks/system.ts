@@ -1,0 +1,83 @@
+/** Systems that can't be as they are declared. */
+import { bandFigure, edgeFigure, figure } from "./figures.ts";
+import type { Rules } from "./rule.ts";
+import { atStart } from "./words.ts";
+
+/** Litres that the tanks' sizes leave; more than none where a measured volume says otherwise. */
+function nothingLeft(volumeL: number): string {
+  if (volumeL > 0) return "The measured volume of this system is 0.";
+  const over = volumeL < 0 ? `${figure(-volumeL, "L")} more than` : "all that";
+  return `What is displaced takes up ${over} the tanks hold.`;
+}
+
+export const systemRules: Rules<
+  | "system/no-volume"
+  | "system/volume-differs"
+  | "system/empty-hold"
+  | "system/aim-outside"
+  | "system/until-before-from"
+> = {
+  "system/no-volume": {
+    severity: "error",
+    title: "A system without water",
+    says: ({ reason, volumeL }) =>
+      reason === "no-tank" ? "This system has neither a tank nor a measured volume." : nothingLeft(volumeL),
+    why: "Without its volume no dose can be worked out.",
+    todo: ({ reason }) =>
+      reason === "no-tank"
+        ? "Add a tank line, or one with measured volume."
+        : "Check the sizes of the tanks and of what is displaced.",
+    example: {
+      fires: "system vat\n  tank main 100 L\n  displace rock 120 L\n",
+      silent: "system vat\n  tank main 100 L\n  displace rock 12 L\n",
+    },
+  },
+  "system/volume-differs": {
+    severity: "warning",
+    title: "A measured volume far from the tanks' sizes",
+    says: ({ measuredL, geometricL }) =>
+      `${figure(measuredL, "L")} are measured, and the sizes of the tanks make ${figure(geometricL, "L")}.`,
+    why: "The measured volume counts, and every dose is off by as much as it is.",
+    todo: "Measure again, or check sizes, water depths and what is displaced.",
+    background: "Asked where the two differ by more than 10 %: common practice, no source.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  measured volume 410 L\n",
+      silent: "system vat\n  tank main 500 L\n  displace rock 70 L\n  measured volume 410 L\n",
+    },
+  },
+  "system/empty-hold": {
+    severity: "error",
+    title: "A band with nothing in it",
+    says: ({ parameter, low, high, unit }) =>
+      `The band of ${parameter} is empty: ${bandFigure(parameter, low, high, unit)}.`,
+    why: "This line is left out, so this parameter isn't held.",
+    todo: "Write the lower value first, and a higher one after it.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  hold temperature 26.5 to 24.5 degC\n",
+      silent: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC\n",
+    },
+  },
+  "system/aim-outside": {
+    severity: "error",
+    title: "An aim outside its band",
+    says: ({ parameter, low, high, aim, unit }) =>
+      `${atStart(parameter)} is to aim at ${edgeFigure(parameter, aim, unit)}, outside its band of ${bandFigure(parameter, low, high, unit)}.`,
+    why: "This line is left out, so this parameter isn't held.",
+    todo: "Move the aim into the band, or leave it out to aim at the middle.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 27\n",
+      silent: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 25\n",
+    },
+  },
+  "system/until-before-from": {
+    severity: "error",
+    title: "A fact that ends before it begins",
+    says: () => "This ends before it begins, or at the same moment.",
+    why: "It never holds, so this line is left out.",
+    todo: "Check the two dates; on the day of until it holds no more.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  evaporates 4 L/day from 2026-11-01 until 2026-10-01\n",
+      silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day from 2026-10-01 until 2026-11-01\n",
+    },
+  },
+};

@@ -1,0 +1,113 @@
+/** Numbers whose unit is missing, unknown, or measures something else. */
+import { adding, replacing, replacingWith } from "./fixing.ts";
+import type { Rules } from "./rule.ts";
+import { inQuotes, oneOf } from "./words.ts";
+
+const leftOut = "What this line says of it is left out.";
+
+/** `dKH or meq/L`; where a bare number will do, said so. */
+function written(examples: readonly string[]): string {
+  const units = [...new Set(examples)].filter((example) => example !== "no unit");
+  const bare = units.length < new Set(examples).size;
+  return `${bare ? "without a unit, or in " : "in "}${oneOf(units)}`;
+}
+
+const hasUnit = (example: string): boolean => example !== "no unit";
+
+export const unitRules: Rules<
+  "unit/unknown" | "unit/dimension" | "unit/missing" | "unit/as-caco3" | "unit/ppm"
+> = {
+  "unit/unknown": {
+    severity: "error",
+    title: "A unit that isn't known",
+    says: ({ word }) => `${inQuotes(word)} is no unit.`,
+    why: leftOut,
+    todo: ({ nearest }) =>
+      nearest.length > 0 ? `Is ${oneOf(nearest)} meant?` : "Write a unit such as mL, mg/L, meq/L or dKH.",
+    fixes: ({ place, word, nearest }) =>
+      // Of a unit like `mgg/L` only a part is misspelt, and where that part stands isn't known here.
+      place.span && place.span.end - place.span.start === word.length
+        ? replacingWith(place, nearest, false)
+        : [],
+    example: {
+      fires: "system vat\n  tank main 500 L\n  evaporates 4 L/dya\n",
+      silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day\n",
+    },
+  },
+  "unit/dimension": {
+    severity: "error",
+    title: "A unit that measures something else",
+    says: ({ unit, expected }) =>
+      `${unit === "" ? "A number without a unit" : unit} doesn't measure ${expected}.`,
+    why: leftOut,
+    todo: ({ examples }) => `Write it ${written(examples)}.`,
+    background:
+      "Every number is checked against what it stands for, so that a volume can't pass for a flow, or a mass for a volume.",
+    example: {
+      fires: "system vat\n  tank main 500 L\n  evaporates 4 L\n",
+      silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day\n",
+    },
+  },
+  "unit/missing": {
+    severity: "error",
+    title: "A number without its unit",
+    says: ({ number, expected }) => `${number} stands without a unit, where ${expected} is wanted.`,
+    why: `Only salinity, pH and counts stand bare: 8 dKH and 8 meq/L are far apart. ${leftOut}`,
+    todo: ({ number, examples }) =>
+      `Write ${oneOf(examples.filter(hasUnit).map((unit) => `${number} ${unit}`))}.`,
+    fixes: ({ place, examples }) =>
+      [...new Set(examples)].filter(hasUnit).flatMap((unit) => adding(place, ` ${unit}`, false)),
+    example: {
+      fires: "system vat\n  tank main 500\n  tank sump 100 L\n",
+      silent: "system vat\n  tank main 500 L\n  tank sump 100 L\n",
+    },
+  },
+  "unit/as-caco3": {
+    severity: "error",
+    title: "As CaCO3, missing or out of place",
+    says: ({ unit, written: isWritten }) =>
+      isWritten
+        ? `As CaCO3 can't follow ${unit} here.`
+        : `Alkalinity in ${unit} says nothing without what it is counted as.`,
+    why: `50 mg/L as CaCO3 are 1 meq/L; as another substance they are something else. ${leftOut}`,
+    because: ({ written: isWritten }) =>
+      isWritten
+        ? `Only alkalinity, and calcium and magnesium in mg/L, are told so. ${leftOut}`
+        : `A number of mg or mmol stands for another alkalinity with every substance that it may count. ${leftOut}`,
+    todo: ({ unit, written: isWritten }) =>
+      isWritten
+        ? "Remove it, and give the value of the element itself."
+        : `Write ${unit} as CaCO3, or use meq or dKH.`,
+    fixes: ({ place, written: isWritten }) =>
+      isWritten ? replacing(place, "", false) : adding(place, " as CaCO3", false),
+    background:
+      "One mole of CaCO3 carries two equivalents, 100.09 g to 2 eq (IUPAC abridged atomic weights). Corals' uptake in mmol or g needs it as well: a mole of CaCO3 takes two of alkalinity.",
+    example: {
+      fires:
+        "saltwater vat-mix\n  alkalinity 140 mg/L\n\nsystem vat\n  tank main 500 L\n  flows-through 20 L/day with vat-mix\n",
+      silent:
+        "saltwater vat-mix\n  alkalinity 140 mg/L as CaCO3\n\nsystem vat\n  tank main 500 L\n  flows-through 20 L/day with vat-mix\n",
+    },
+  },
+  "unit/ppm": {
+    severity: "info",
+    title: "ppm, which kits use for two things",
+    says: ({ number }) => `${number} ppm is read as ${number} mg/L.`,
+    why: "Some kits mean mg/kg by it, which is about 2 % more in sea water.",
+    todo: "Write mg/L or mg/kg, whichever the kit means.",
+    fixes: ({ place }) => {
+      const { span } = place;
+      if (!span) return [];
+      // Over a time the unit goes on behind it.
+      const ppm = { ...place, span: { start: span.start, end: span.start + "ppm".length } };
+      return replacingWith(ppm, ["mg/L", "mg/kg"], false);
+    },
+    background: "A litre of sea water weighs about 1.023 kg at salinity 35 and 25 °C (EOS-80, UNESCO 1983).",
+    example: {
+      fires:
+        "saltwater vat-mix\n  calcium 425 ppm\n\nsystem vat\n  tank main 500 L\n  flows-through 20 L/day with vat-mix\n",
+      silent:
+        "saltwater vat-mix\n  calcium 425 mg/L\n\nsystem vat\n  tank main 500 L\n  flows-through 20 L/day with vat-mix\n",
+    },
+  },
+};

@@ -1,0 +1,116 @@
+/** Files and clock: the only door to the outside. Finds a farm, reads its files, writes where it is told to. */
+import { randomBytes } from "node:crypto";
+import { access, lstat, readdir, readFile, realpath, rename, rm, stat, writeFile } from "node:fs/promises";
+import { basename, dirname, join, relative, resolve, sep } from "node:path";
+import type { FileChange } from "./farm.ts";
+
+/** A farm on disk: its folder, and for a path asked about, where that lies in it. */
+export interface FarmOnDisk {
+  readonly root: string;
+  /** Relative to the root with `/`; empty for the whole farm. */
+  readonly asked: string;
+}
+
+export type Found<T> =
+  | { readonly ok: true; readonly value: T }
+  | { readonly ok: false; readonly reason: string };
+
+const farmPage = "farm.marl";
+const isMarl = (name: string): boolean => name.endsWith(".marl");
+
+/**
+ * The farm that a path belongs to: the nearest folder upward with a `farm.marl`, else the nearest with `.git`,
+ * else the path itself or its folder.
+ */
+export async function findFarm(path: string): Promise<Found<FarmOnDisk>> {
+  let real: string;
+  let isFolder: boolean;
+  try {
+    real = await realpath(resolve(path));
+    isFolder = (await stat(real)).isDirectory();
+  } catch {
+    return { ok: false, reason: `${path} can't be read` };
+  }
+  if (!isFolder && !isMarl(real)) return { ok: false, reason: `${path} is no .marl file` };
+  const folder = isFolder ? real : dirname(real);
+  const root = (await nearestHolding(folder, farmPage)) ?? (await nearestHolding(folder, ".git")) ?? folder;
+  return { ok: true, value: { root, asked: relative(root, real).split(sep).join("/") } };
+}
+
+async function nearestHolding(folder: string, name: string): Promise<string | null> {
+  for (let here = folder; ; here = dirname(here)) {
+    if (await exists(join(here, name))) return here;
+    if (dirname(here) === here) return null;
+  }
+}
+
+const exists = (path: string): Promise<boolean> =>
+  access(path).then(
+    () => true,
+    () => false,
+  );
+
+/**
+ * All files of a farm with their texts. Dot-folders and `node_modules` are left out, links aren't followed, a
+ * folder below with a `farm.marl` of its own is another farm.
+ */
+export async function readFarm(root: string): Promise<ReadonlyMap<string, FileChange>> {
+  const files = new Map<string, FileChange>();
+  await readFolder(root, "", files);
+  return files;
+}
+
+async function readFolder(root: string, folder: string, files: Map<string, FileChange>): Promise<void> {
+  let names: string[];
+  try {
+    names = (await readdir(join(root, folder))).sort();
+  } catch {
+    return;
+  }
+  if (folder !== "" && names.includes(farmPage)) return;
+  for (const name of names) {
+    const path = folder === "" ? name : `${folder}/${name}`;
+    const kind = await lstat(join(root, path)).catch(() => null);
+    if (kind?.isDirectory()) {
+      if (!name.startsWith(".") && name !== "node_modules") await readFolder(root, path, files);
+    } else if (kind?.isFile() && isMarl(name)) files.set(path, await readText(join(root, path)));
+  }
+}
+
+const utf8 = new TextDecoder("utf-8", { fatal: true, ignoreBOM: true });
+
+async function readText(path: string): Promise<FileChange> {
+  let bytes: Buffer;
+  try {
+    bytes = await readFile(path);
+  } catch (error) {
+    const { code } = error as NodeJS.ErrnoException;
+    return { unreadable: code === "EACCES" ? "no permission to read it" : "it can't be read" };
+  }
+  try {
+    const text = utf8.decode(bytes);
+    return text.includes("\0") ? { unreadable: "it isn't text" } : { text };
+  } catch {
+    return { unreadable: "it isn't UTF-8 text" };
+  }
+}
+
+/** Writes a file whole or not at all, and never over another unless asked to. */
+export async function writeWhole(path: string, text: string, replace: boolean): Promise<Found<null>> {
+  if (!replace && (await exists(path)))
+    return { ok: false, reason: `${path} exists; --replace writes over it` };
+  const beside = join(dirname(path), `.${basename(path)}.${randomBytes(6).toString("hex")}`);
+  try {
+    await writeFile(beside, text, { flag: "wx" });
+    await rename(beside, path);
+    return { ok: true, value: null };
+  } catch (error) {
+    await rm(beside, { force: true });
+    return { ok: false, reason: `${path} can't be written: ${(error as Error).message}` };
+  }
+}
+
+/** The wall clock now, in minutes since 1970-01-01 as written without a zone. */
+export function clockNow(now = new Date()): number {
+  return Math.floor(now.getTime() / 60_000) - now.getTimezoneOffset();
+}

@@ -1,0 +1,143 @@
+/** The sheet's first part, what to dose today, and what the doses do. */
+import { writeMoment } from "../../grammar/dates.ts";
+import type { ParameterName } from "../../grammar/parameters.ts";
+import { changeFigure, doseFigure, figure, rounded, valueFigure } from "../checks/figures.ts";
+import { aboutWhen, atStart, nameOf, oneOf } from "../checks/words.ts";
+import { plainUnit } from "../culture/binder.ts";
+import { factAt } from "../culture/history.ts";
+import type { FarmModel } from "../culture/model.ts";
+import type { Assessment } from "../dosing/assess.ts";
+import { balanceOf } from "../dosing/balance.ts";
+import type { Plan } from "../dosing/make-plan.ts";
+import type { PlannedSource } from "../dosing/plan-problem.ts";
+import { minutesPerDay } from "../dosing/water-state.ts";
+import { type Section, section } from "./sheet-model.ts";
+
+const unitIn = ({ constants, at }: Assessment, name: ParameterName) =>
+  factAt(constants.facts.holds.get(name), at)?.value.unit ?? plainUnit(name);
+
+export function dosesSection(model: FarmModel, assessment: Assessment): Section {
+  const title = "Dose today";
+  const { plan, volume } = assessment;
+  if (!plan) {
+    const why =
+      volume.litres === null
+        ? "its volume isn't known"
+        : assessment.constants.facts.holds.size === 0
+          ? "nothing is held"
+          : "nothing that is held has a source";
+    return section(title, { lines: [`Nothing can be planned: ${why}.`] });
+  }
+  const rows = plan.sources.map(({ source }, index) => {
+    const planned = plan.answer.sources[index]!;
+    const name = model.solutions.get(source.solution)?.name ?? nameOf(source.solution);
+    return [
+      name,
+      source.device === "hand" ? "by hand" : source.by,
+      planned.totalLPerDay === null ? "unknown" : doseFigure(planned.totalLPerDay),
+      deliveryText(planned),
+      planned.maintenanceLPerDay === null ? "unknown" : doseFigure(planned.maintenanceLPerDay),
+      correctionText(plan, planned),
+    ];
+  });
+  const columns = [
+    { title: "solution", align: "left" },
+    { title: "by", align: "left" },
+    { title: "a day", align: "right" },
+    { title: "given as", align: "left" },
+    { title: "to hold", align: "right" },
+    { title: "to correct", align: "left" },
+  ] as const;
+  return section(title, {
+    table: { columns, rows },
+    lines: planLines(assessment, plan),
+    marl: setLine(assessment, plan),
+  });
+}
+
+function deliveryText({ dosesPerDay, litresPerDose, everyDays, totalLPerDay }: PlannedSource): string {
+  if (totalLPerDay === null || dosesPerDay === 0) return "";
+  const doses = dosesPerDay === 1 ? "1 dose" : `${dosesPerDay} doses`;
+  return `${doses} of ${doseFigure(litresPerDose)}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
+}
+
+function correctionText({ answer }: Plan, { correctionLPerDay, serves }: PlannedSource): string {
+  const days = answer.corrections.find(({ parameter }) => parameter === serves)?.days;
+  return correctionLPerDay > 0 && days !== undefined
+    ? `${doseFigure(correctionLPerDay)} for ${figure(days, "days")}`
+    : "";
+}
+
+function planLines(assessment: Assessment, { answer, problem }: Plan): string[] {
+  const { at } = assessment;
+  const corrections = answer.corrections.map(({ parameter, amount, days, limitedBy }) => {
+    const unit = unitIn(assessment, parameter);
+    const until = aboutWhen(at + days * minutesPerDay);
+    const slowed = limitedBy ? `, no faster because of the limit on ${limitedBy}` : "";
+    return `${atStart(parameter)} comes up by ${changeFigure(parameter, amount, unit)} until ${until}${slowed}.`;
+  });
+  const cuts = answer.cuts.map(({ parameter, perDay, days }) => {
+    const unit = unitIn(assessment, parameter);
+    return `${atStart(parameter)} is above its aim: maintenance runs ${changeFigure(parameter, perDay, unit)} a day lower until ${aboutWhen(at + days * minutesPerDay)}.`;
+  });
+  const unknown = problem.parameters.filter(({ needPerDay }) => needPerDay === null).map(({ name }) => name);
+  const unknownLines =
+    unknown.length > 0
+      ? [
+          `What the corals take of ${oneOf(unknown).replace(" or ", " and ")} isn't known, so no maintenance is planned for it.`,
+        ]
+      : [];
+  return [...corrections, ...cuts, ...unknownLines];
+}
+
+/** The `set` line that puts the pumps' part of the plan into the log. */
+function setLine({ at }: Assessment, { answer, sources }: Plan): string[] {
+  const items = sources.flatMap(({ source }, index) => {
+    const total = answer.sources[index]?.totalLPerDay;
+    if (source.device !== "pump" || total === null || total === undefined) return [];
+    const millilitres = total * 1000;
+    return [`${source.by} ${rounded(millilitres, millilitres < 10 ? 1 : 0)} mL/day`];
+  });
+  return items.length > 0 ? [`${writeMoment(at).replace("T", " ")} set ${items.join(", ")}`] : [];
+}
+
+/** What the doses do to the water, and what they leave behind. */
+export function effectsSection(model: FarmModel, assessment: Assessment): Section | null {
+  const { plan, salt, uptake, afterPlan } = assessment;
+  if (!plan) return null;
+  const lines: string[] = [];
+  const { peak, answer } = plan;
+  if (peak) {
+    lines.push(
+      `Right after the largest dose: pH ${figure(peak.pHTotal, "pH")} on the total scale (${figure(peak.pHNbs, "pH")} NBS), Ω of aragonite ${figure(peak.omegaAragonite, "Ω")} in the mixed water; far higher where it runs in, so dose slowly into strong flow.`,
+    );
+  }
+  if (afterPlan && answer.correctionDays > 0) {
+    const held = plan.problem.parameters.flatMap(({ name }) => {
+      const value = name in afterPlan ? afterPlan[name as keyof typeof afterPlan] : undefined;
+      return value === undefined ? [] : [`${name} ${valueFigure(name, value, unitIn(assessment, name))}`];
+    });
+    lines.push(`In ${figure(answer.correctionDays, "days")}, when corrections end: ${held.join(", ")}.`);
+  }
+  if (salt) {
+    const gain = `Dosing leaves salt behind: salinity ${salt.salinityGainPerMonth < 0 ? "falls" : "rises"} by ${rounded(Math.abs(salt.salinityGainPerMonth), 2)} a month.`;
+    const swap =
+      salt.freshWaterSwapLPerWeek > 0.05
+        ? ` Taking out ${figure(salt.freshWaterSwapLPerWeek, "L")} a week and filling with fresh water holds it.`
+        : "";
+    lines.push(gain + swap);
+  }
+  if (uptake && uptake.calcificationGPerDay !== null) {
+    const { given, taken, pairs } = balanceOf(plan, uptake.magnesiumFraction);
+    if (given) {
+      lines.push(
+        `For each meq of alkalinity ${rounded(given.calciumMgPerMeq, 1)} mg of calcium and ${rounded(given.magnesiumMgPerMeq, 2)} mg of magnesium are given; the skeleton takes ${rounded(taken.calciumMgPerMeq, 1)} and ${rounded(taken.magnesiumMgPerMeq, 2)}.`,
+      );
+    }
+    const name = (ref: string) => model.solutions.get(ref)?.name ?? nameOf(ref);
+    for (const { alkaline, calcic, millilitres } of pairs) {
+      lines.push(`1 mL of ${name(alkaline)} goes with ${rounded(millilitres, 2)} mL of ${name(calcic)}.`);
+    }
+  }
+  return lines.length > 0 ? section("What the doses do", { lines }) : null;
+}
