@@ -89,7 +89,8 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
     title: "A name that isn't declared",
     says: undeclared,
     why: "What this line says of it is left out.",
-    todo: undeclaredTodo,
+    todo: "Correct the name, declare it, or use the file that declares it.",
+    todoHere: undeclaredTodo,
     fixes: undeclaredFixes,
     background:
       "A file sees its own names and those of the files that it uses, and that these use. Pumps, hand doses and cohorts are names of one system.",
@@ -105,7 +106,8 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
     title: "A name, fact or value given twice",
     says: twice,
     why: "Two that differ can't both hold; the first one counts.",
-    todo: ({ what, first }) =>
+    todo: "Keep one, give the other a name of its own, or write from which date the newer one holds.",
+    todoHere: ({ what, first }) =>
       what === "fact"
         ? "Keep one, or write from which date the newer one holds: from 2026-12-01."
         : what === "reading"
@@ -126,7 +128,8 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
     title: "A reagent that is sold with different amounts of water",
     says: ({ word }) => `${inQuotes(word)} names several salts, which differ in their water.`,
     why: "Their strengths differ up to twofold, so the recipe's strength stays unknown.",
-    todo: ({ offers }) => `Write ${oneOf(offers)}, as the label says.`,
+    todo: "Write the name with its water, as the label of the sack says: anhydrous, dihydrate, hexahydrate, heptahydrate.",
+    todoHere: ({ offers }) => `Write ${oneOf(offers)}, as the label says.`,
     fixes: ({ place, offers }) => replacingWith(place, offers, false),
     example: {
       fires:

@@ -123,7 +123,8 @@ const dosedRule = (parameter: Dosed) => ({
         : `With this dose ${parameter} rises by ${rise} within a day; the limit is ${most} a day${byDefault(finding)}.`;
     },
     why: "Corals follow a slow change of their water, and suffer from a fast one.",
-    todo: ({ solution }: OfDosed) =>
+    todo: "Spread it over more days.",
+    todoHere: ({ solution }: OfDosed) =>
       solution === null ? "Set less, and reach the aim over more days." : "Spread it over more days.",
     background: riseBackground[parameter],
     example: exampleOf(parameter, "rise"),
@@ -198,8 +199,9 @@ const precipitation: Rule<"overdose/precipitation"> = {
   says: ({ omega, pH }) =>
     `Right after this dose Ω of aragonite was ${figure(omega, "Ω")} and pH ${figure(pH, "pH")}.`,
   why: "What falls out takes calcium and alkalinity with it, clouds the water and clogs pumps and heaters.",
-  because: ({ grade }) => precipitationWhy[grade],
-  todo: ({ grade }) =>
+  whyHere: ({ grade }) => precipitationWhy[grade],
+  todo: "Give less at a time, slowly, diluted, into strong flow.",
+  todoHere: ({ grade }) =>
     grade === "info"
       ? "Give it slowly, diluted, into strong flow."
       : "Give less at a time, slowly, diluted, into strong flow.",

@@ -18,6 +18,10 @@ const sourceOf = (by: string): string => {
   return words[0] === "hand" ? `${nameOf(words[1] ?? "")} by hand` : words.join(" ");
 };
 
+/** Nothing at all is corrected for this, where a limit only slows it down. */
+const isWithheld = (by: string): boolean =>
+  by === "no recent reading" || by === "salinity" || /^(magnesium under|calcium over) /.test(by);
+
 /** What stands in the way, in words. */
 function reason(by: string): string {
   if (by === "no recent reading") return "there is no recent reading of it";
@@ -66,12 +70,13 @@ export const planRules: Rules<
     says: (finding) => {
       const amount = perDay(finding);
       const parameter = atStart(finding.parameter);
-      return amount === null
+      return amount === null || isWithheld(finding.by)
         ? `${parameter} isn't corrected: ${reason(finding.by)}.`
         : `${parameter} moves ${amount} slower than it should: ${reason(finding.by)}.`;
     },
     why: "Until then it stays away from its aim.",
-    todo: heldBackTodo,
+    todo: "Do first what the message names, or leave it: with a limit in the way it takes more days.",
+    todoHere: heldBackTodo,
     background:
       "A correction takes 7 days from inside the band and a day from outside, cut down to what the limits allow. Alkalinity isn't raised while magnesium is under 1150 mg/L or calcium over 480 mg/L. All of this is common practice without a source.",
     example: {

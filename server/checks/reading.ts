@@ -33,7 +33,8 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
         ? `Sea water can't have ${asWritten(finding)} of ${finding.parameter}.`
         : `Sea water can't have a ${finding.parameter} of ${asWritten(finding)}.`,
     why: "It stays in the report and is left out of every estimate.",
-    todo: (finding) =>
+    todo: "Check the number and its unit.",
+    todoHere: (finding) =>
       finding.tenth
         ? `Is this ${finding.tenth}?`
         : `Check the number and its unit; possible is ${range(finding)}.`,
@@ -50,7 +51,8 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
     says: (finding) =>
       `${asWritten(finding)} is unusual for ${finding.parameter}; usual is ${range(finding)}.`,
     why: "It counts as it stands, and a slip in it would set the doses wrong.",
-    todo: ({ tenth }) =>
+    todo: "Test again; if the reading was wrong, end its line with disregard and the reason.",
+    todoHere: ({ tenth }) =>
       tenth
         ? `Is this ${tenth}?`
         : "Test again; if the reading was wrong, end its line with disregard and the reason.",

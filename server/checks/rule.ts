@@ -40,12 +40,12 @@ export interface Rule<C extends Code = Code> {
   readonly title: string;
   /** What is wrong, with its numbers: a sentence or two. */
   readonly says: (finding: Of<C>) => string;
-  /** Why it matters. */
+  /** Why it matters, as the page says it; and what the message says instead, with the finding's own numbers. */
   readonly why: string;
-  /** The same with the finding's own numbers, where it has some. */
-  readonly because?: (finding: Of<C>) => string;
-  /** What to do. */
-  readonly todo: string | ((finding: Of<C>) => string);
+  readonly whyHere?: (finding: Of<C>) => string;
+  /** What to do, likewise. */
+  readonly todo: string;
+  readonly todoHere?: (finding: Of<C>) => string;
   readonly related?: (finding: Of<C>) => Problem["related"];
   readonly fixes?: (finding: Of<C>) => readonly LineFix[];
   /** For the page: what stands behind a threshold, and anything else worth knowing. */

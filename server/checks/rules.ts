@@ -50,8 +50,8 @@ function problemOf(finding: Finding): Problem {
   // The table's own type holds each rule to the findings of its code.
   const rule = rules[known.code] as unknown as Rule;
   const of = known as Parameters<Rule["says"]>[0];
-  const why = rule.because?.(of) ?? rule.why;
-  const todo = typeof rule.todo === "string" ? rule.todo : rule.todo(of);
+  const why = rule.whyHere?.(of) ?? rule.why;
+  const todo = rule.todoHere?.(of) ?? rule.todo;
   return {
     code: known.code,
     severity: typeof rule.severity === "string" ? rule.severity : rule.severity(of),

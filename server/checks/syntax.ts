@@ -118,8 +118,9 @@ export const syntaxRules: Rules<
     title: "A word that has no meaning where it stands",
     says: unknownWord,
     why,
-    because: leftOut,
-    todo: ({ expected, nearest }) =>
+    whyHere: leftOut,
+    todo: "Write the word as the language spells it; the message offers the nearest ones, or names what can stand there.",
+    todoHere: ({ expected, nearest }) =>
       nearest.length > 0
         ? `Is ${oneOf(nearest)} meant?`
         : isFormula(expected)
@@ -147,9 +148,10 @@ export const syntaxRules: Rules<
           ? "This text in quotes isn't closed."
           : "This line stops short.",
     why,
-    because: (finding) =>
+    whyHere: (finding) =>
       isRecipe(finding) ? "Its strength stays unknown, so no dose of it can be worked out." : leftOut(),
-    todo: (finding) => {
+    todo: "Add what the message says comes next; of a recipe, the line that it lacks.",
+    todoHere: (finding) => {
       const { expected } = finding;
       if (isRecipe(finding))
         return expected.includes("make up to")
@@ -169,8 +171,9 @@ export const syntaxRules: Rules<
     title: "A number that can be read in more than one way, or can't be one",
     says: numberForm,
     why,
-    because: leftOut,
-    todo: numberTodo,
+    whyHere: leftOut,
+    todo: "Write the digits with a point before decimals and nothing between thousands.",
+    todoHere: numberTodo,
     fixes: ({ place, word, readings }) => replacingWith(place, readings, sameNumber(word, readings)),
     background:
       "A point stands before decimals, and nothing between thousands: 1,250 is 1.25 to some and 1250 to others, and a dose a thousand times too large is not to be guessed at.",
@@ -187,8 +190,9 @@ export const syntaxRules: Rules<
         ? `${inQuotes(word)} isn't a time of day written like 08:10.`
         : `${inQuotes(word)} isn't a day written like 2026-12-01.`,
     why,
-    because: leftOut,
-    todo: ({ word, readings }) =>
+    whyHere: leftOut,
+    todo: "Write year, month and day as 2026-12-01, and the time as 08:10.",
+    todoHere: ({ word, readings }) =>
       readings.length > 0
         ? `Write ${oneOf(readings)}.`
         : isTime(word)
@@ -206,8 +210,9 @@ export const syntaxRules: Rules<
     title: "A line or a word at a place where it doesn't belong",
     says: (finding) => misplaced[finding.why].says(finding),
     why,
-    because: leftOut,
-    todo: (finding) => misplaced[finding.why].todo(finding),
+    whyHere: leftOut,
+    todo: "Move the line or the word to where the message says that it belongs.",
+    todoHere: (finding) => misplaced[finding.why].todo(finding),
     fixes: ({ place: { file, line }, why }) =>
       why === "margin"
         ? [{ title: "Indent the line", safe: false, edits: [{ file, line, start: 0, end: 0, text: "  " }] }]

@@ -23,7 +23,8 @@ export const systemRules: Rules<
     says: ({ reason, volumeL }) =>
       reason === "no-tank" ? "This system has neither a tank nor a measured volume." : nothingLeft(volumeL),
     why: "Without its volume no dose can be worked out.",
-    todo: ({ reason }) =>
+    todo: "Add a tank line or a measured volume, or check the sizes.",
+    todoHere: ({ reason }) =>
       reason === "no-tank"
         ? "Add a tank line, or one with measured volume."
         : "Check the sizes of the tanks and of what is displaced.",

@@ -22,7 +22,8 @@ export const unitRules: Rules<
     title: "A unit that isn't known",
     says: ({ word }) => `${inQuotes(word)} is no unit.`,
     why: leftOut,
-    todo: ({ nearest }) =>
+    todo: "Write the unit as the language spells it.",
+    todoHere: ({ nearest }) =>
       nearest.length > 0 ? `Is ${oneOf(nearest)} meant?` : "Write a unit such as mL, mg/L, meq/L or dKH.",
     fixes: ({ place, word, nearest }) =>
       // Of a unit like `mgg/L` only a part is misspelt, and where that part stands isn't known here.
@@ -40,7 +41,8 @@ export const unitRules: Rules<
     says: ({ unit, expected }) =>
       `${unit === "" ? "A number without a unit" : unit} doesn't measure ${expected}.`,
     why: leftOut,
-    todo: ({ examples }) => `Write it ${written(examples)}.`,
+    todo: "Write the number in one of the units that the message gives as examples.",
+    todoHere: ({ examples }) => `Write it ${written(examples)}.`,
     background:
       "Every number is checked against what it stands for, so that a volume can't pass for a flow, or a mass for a volume.",
     example: {
@@ -53,7 +55,8 @@ export const unitRules: Rules<
     title: "A number without its unit",
     says: ({ number, expected }) => `${number} stands without a unit, where ${expected} is wanted.`,
     why: `Only salinity, pH and counts stand bare: 8 dKH and 8 meq/L are far apart. ${leftOut}`,
-    todo: ({ number, examples }) =>
+    todo: "Write the unit behind the number.",
+    todoHere: ({ number, examples }) =>
       `Write ${oneOf(examples.filter(hasUnit).map((unit) => `${number} ${unit}`))}.`,
     fixes: ({ place, examples }) =>
       [...new Set(examples)].filter(hasUnit).flatMap((unit) => adding(place, ` ${unit}`, false)),
@@ -70,11 +73,12 @@ export const unitRules: Rules<
         ? `As CaCO3 can't follow ${unit} here.`
         : `Alkalinity in ${unit} says nothing without what it is counted as.`,
     why: `50 mg/L as CaCO3 are 1 meq/L; as another substance they are something else. ${leftOut}`,
-    because: ({ written: isWritten }) =>
+    whyHere: ({ written: isWritten }) =>
       isWritten
         ? `Only alkalinity, and calcium and magnesium in mg/L, are told so. ${leftOut}`
-        : `A number of mg or mmol stands for another alkalinity with every substance that it may count. ${leftOut}`,
-    todo: ({ unit, written: isWritten }) =>
+        : `So many mg or mmol are more or less alkalinity, depending on the substance that they count. ${leftOut}`,
+    todo: "Write as CaCO3 where the kit counts so, or use meq or dKH; remove it where it is out of place.",
+    todoHere: ({ unit, written: isWritten }) =>
       isWritten
         ? "Remove it, and give the value of the element itself."
         : `Write ${unit} as CaCO3, or use meq or dKH.`,

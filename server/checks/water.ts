@@ -77,8 +77,9 @@ const leaves = (severity: "warning" | "info", within: number, example: Rule["exa
     says: ({ parameter, unit, at, edge }: Leaves) =>
       `${atStart(parameter)} leaves its band on ${aboutWhen(at)} (${edgeFigure(parameter, edge, unit)}).`,
     why: "With what is set now the water drifts out of the band that it is kept in.",
-    because: leavesBecause,
-    todo: leavesTodo,
+    whyHere: leavesBecause,
+    todo: "Set or give what the plan says, which the message names.",
+    todoHere: leavesTodo,
     background:
       "Judged on the mean of 24 hours, with pumps as they are set and uptake as it is known. A warning up to 3 days ahead, a note up to 7: common practice, no source.",
     example,
@@ -105,7 +106,8 @@ export const waterRules: Rules<
     says: ({ parameter, value, low, high, unit }) =>
       `${atStart(parameter)} is ${valueBeside(parameter, value, [low, high], unit)}; its band is ${bandFigure(parameter, low, high, unit)}.`,
     why: "The band is what these corals are kept in.",
-    todo: outsideTodo,
+    todo: "Follow the plan, no faster than it says, and test again if the value surprises you. Salinity is mended with fresh or saltier water; a low pH with the room's air.",
+    todoHere: outsideTodo,
     example: {
       fires:
         "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC\n\nlog vat\n  2026-12-01 07:00 read temperature 27.4 degC\n",
@@ -127,7 +129,8 @@ export const waterRules: Rules<
     says: ({ parameter, which, value, limit, unit }) =>
       `${atStart(parameter)} is ${valueBeside(parameter, value, [limit], unit)}, ${which === "max" ? "above" : "below"} its limit of ${edgeFigure(parameter, limit, unit)}.`,
     why: "Beyond a limit not growth but lives are at risk.",
-    todo: ({ which }) =>
+    todo: "Test again with another kit. If it is confirmed, stop what drives it, and renew water where it is too high.",
+    todoHere: ({ which }) =>
       which === "max"
         ? "Stop what raises it, test again with another kit, and renew water if it is confirmed."
         : "Test again with another kit; if it is confirmed, raise it as planned, not all at once.",
@@ -151,7 +154,8 @@ export const waterRules: Rules<
         : `${atStart(parameter)} (${now}) is outside its band because salinity is ${at}; at the aim of ${aim} it would be ${then}.`;
     },
     why: "Salinity raises and lowers everything dissolved, and dosing for one of it would mend the wrong thing.",
-    todo: ({ parameter, hidden }) =>
+    todo: "Mend salinity first, slowly, and test again on the way.",
+    todoHere: ({ parameter, hidden }) =>
       hidden
         ? `Mend salinity first, slowly, and test ${parameter} again on the way.`
         : `Mend salinity first, slowly; until then ${parameter} is kept up and not corrected.`,
@@ -191,7 +195,8 @@ export const waterRules: Rules<
       return `No reading of ${names} in the last 7 days (${allOf(last)}).`;
     },
     why: "A value is carried forward 7 days at most; after that doses are kept up and nothing is corrected.",
-    todo: ({ parameters }) => `Test ${allOf(parameters.map(({ name }) => name))}.`,
+    todo: "Test what the message names.",
+    todoHere: ({ parameters }) => `Test ${allOf(parameters.map(({ name }) => name))}.`,
     background: "Seven days: common practice, no source.",
     example: {
       fires: held("  2026-11-20 07:00 read alkalinity 8 dKH\n", "  2026-11-20 07:00 set head-1 22 mL/day\n"),

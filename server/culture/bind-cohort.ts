@@ -1,10 +1,10 @@
 /** Cohorts: how many corals, and what they take. */
-import type { StockCount } from "../../grammar/syntax.ts";
+import type { QuantityText, StockCount } from "../../grammar/syntax.ts";
 import { readCohortUptake } from "../quantity/concentration.ts";
 import {
   amountOf,
   type Line,
-  plainWithDeviation,
+  plain,
   positive,
   type ReferenceWater,
   reportSpan,
@@ -23,8 +23,9 @@ export function bindCohort(
   const count = stockCount(line, fact.count);
   const read = amountOf(line, fact.uptake, alkalinity, readCohortUptake(fact.uptake, alkalinity), water);
   const magnesiumFraction = fact.magnesium ? shareQuantity(line, fact.magnesium) : null;
-  const growth = fact.grows ? plainWithDeviation(line, fact.grows, "growth") : { value: 0 };
-  if (count === null || !read || read.amount.sort !== "dissolved" || !growth) return;
+  const growth = fact.grows ? growthPerDay(line, fact.grows) : 0;
+  if (count === null || !read || read.amount.sort !== "dissolved" || growth === null) return;
+  if (fact.magnesium && magnesiumFraction === null) return;
   const uptakeOf = read.amount.per === "area" ? "square metre" : fact.each ? "piece" : "all";
   if (!countFits(line, fact, uptakeOf)) return;
   // An area's uptake is per dm² in base units.
@@ -36,10 +37,25 @@ export function bindCohort(
     uptakeOf,
     uptakeDeviation: read.deviation === null ? null : read.deviation * scale,
     magnesiumFraction,
-    growthPerDay: growth.value,
+    growthPerDay: growth,
   };
   enter(line, into(draft.cohorts, cohort.name), fact, cohort, `cohort ${cohort.name}`);
 }
+
+/** A share a day; null after reporting what no living thing does: to lose all, or more than to double, in a week. */
+function growthPerDay(line: Line, grows: QuantityText): number | null {
+  const perDay = plain(line, grows, "growth");
+  if (perDay === null || Math.abs(perDay * daysPerWeek) < 1) return perDay;
+  reportSpan(line, {
+    code: "syntax/number-form",
+    span: grows.number,
+    word: grows.number.text,
+    readings: [],
+  });
+  return null;
+}
+
+const daysPerWeek = 7;
 
 /** An uptake of a piece needs pieces, one over an area an area. */
 function countFits(line: Line, fact: FactOf<"cohort">, uptakeOf: Cohort["uptakeOf"]): boolean {

@@ -6,8 +6,9 @@ import type { Event, LogEvent, QuantityText, Word } from "../../grammar/syntax.t
 import { writeStatement } from "../../grammar/write.ts";
 import type { Written } from "../quantity/concentration.ts";
 import { stockCount } from "./bind-cohort.ts";
-import { type Line, named, placeOf, positive } from "./binder.ts";
+import { aboveZero, type Line, named, placeOf, positive } from "./binder.ts";
 import type { OwnKind } from "./finding.ts";
+import { factAt } from "./history.ts";
 import type { EventHead, SystemEvent, SystemFacts } from "./model.ts";
 import { takeReadItems } from "./readings.ts";
 
@@ -32,8 +33,6 @@ export type BoundEvent = Exclude<SystemEvent, { kind: "read" }> | PendingRead;
 /** What an event may name in its system. */
 export interface OwnNames {
   readonly facts: SystemFacts;
-  /** The solution's reference behind a name in the system's own file. */
-  readonly solutionOf: (source: string) => string | undefined;
 }
 
 /** Binds one event line; null where it can't count. */
@@ -96,8 +95,8 @@ export function bindEvent(line: Line, event: Event, own: OwnNames): BoundEvent |
     case "calibrated": {
       const pump = pumpNamed(line, event.pump, own);
       const litres = positive(line, event.volume, "volume");
-      const days = positive(line, event.time, "time");
-      return pump !== null && litres !== null && days
+      const days = aboveZero(line, event.time, "time");
+      return pump !== null && litres !== null && days !== null
         ? { ...head, kind: "calibrated", pump, flowLPerDay: litres / days }
         : null;
     }
@@ -121,7 +120,7 @@ function bindSet(
   head: EventHead,
 ): BoundEvent | null {
   const rates = items.flatMap(({ name, quantity, start, end }) => {
-    const source = sourceNamed(line, name, own);
+    const source = sourceNamed(line, name, own, head.minute);
     const litresPerDay = positive(line, quantity, "flow");
     return source !== null && litresPerDay !== null
       ? [{ source, litresPerDay, place: placeOf(line, { start, end }) }]
@@ -130,13 +129,18 @@ function bindSet(
   return rates.length > 0 ? { ...head, kind: "set", rates } : null;
 }
 
-/** A pump by its name, or the one source that gives a solution. */
-function sourceNamed(line: Line, word: Word, own: OwnNames): string | null {
+/** A pump by its name, or the one source that gives a solution at that moment, else at any. */
+function sourceNamed(line: Line, word: Word, own: OwnNames, minute: number): string | null {
   if (own.facts.sources.has(word.text)) return word.text;
   const visible = line.names.visible.get(line.file)?.get(word.text);
   if (visible?.kind !== "solution") return pumpNamed(line, word, own);
   line.used.add(visible);
-  const giving = [...own.facts.sources.keys()].filter((key) => own.solutionOf(key) === visible.ref);
+  const all = [...own.facts.sources].flatMap(([key, history]) => {
+    const giving = history.some(({ value }) => value.solution === visible.ref);
+    return giving ? [{ key, givesNow: factAt(history, minute)?.value.solution === visible.ref }] : [];
+  });
+  const now = all.filter(({ givesNow }) => givesNow);
+  const giving = (now.length > 0 ? now : all).map(({ key }) => key);
   const [only] = giving;
   if (giving.length === 1 && only !== undefined) return only;
   if (giving.length === 0) return undeclared(line, word, ["pump", "source"], [...own.facts.sources.keys()]);

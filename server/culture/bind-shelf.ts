@@ -22,7 +22,8 @@ import {
   type ReferenceWater,
   shareQuantity,
 } from "./binder.ts";
-import { addEntry, type Entry, entryOf } from "./history.ts";
+import { enter } from "./facts-draft.ts";
+import { addEntry, type Entry } from "./history.ts";
 import type { Kit, SaltWater } from "./model.ts";
 import type { Declaration } from "./names.ts";
 import { reagentNamed } from "./reagent.ts";
@@ -58,17 +59,7 @@ export function bindWater(
     if (!value) continue;
     const history = values.get(value.parameter) ?? [];
     values.set(value.parameter, history);
-    const same = addEntry(history, entryOf(fact, value.value, placeOf(line, null)));
-    const what = "fact";
-    if (same)
-      line.report({
-        code: "name/twice",
-        place: placeOf(line, null),
-        system: null,
-        word: value.parameter,
-        what,
-        first: same.place,
-      });
+    enter(line, history, fact, value.value, value.parameter);
   }
   for (const { line, event } of events) {
     if (event.kind !== "read" || event.disregard) continue;
@@ -133,17 +124,7 @@ export function bindKit(
     const history = deviations.get(parameter.name) ?? [];
     deviations.set(parameter.name, history);
     const deviation = { value: value / deviationsIn[fact.kind], relative };
-    const same = addEntry(history, entryOf(fact, deviation, placeOf(line, null)));
-    const what = "fact";
-    if (same)
-      line.report({
-        code: "name/twice",
-        place: placeOf(line, null),
-        system: null,
-        word: parameter.name,
-        what,
-        first: same.place,
-      });
+    enter(line, history, fact, deviation, parameter.name);
   }
   for (const { line, event } of events) {
     if (event.kind !== "checked") continue;

@@ -5,9 +5,10 @@ import type { Fact, ReagentFact, SolutionFact } from "../../grammar/syntax.ts";
 import type { ReagentName } from "../chemistry/reagents.ts";
 import { saturatedStrength } from "../chemistry/solubility.ts";
 import { readStrength } from "../quantity/concentration.ts";
-import { amountOf, defaultWater, type Line, parameterNamed, placeOf, plain, positive } from "./binder.ts";
+import { aboveZero, amountOf, defaultWater, type Line, parameterNamed, plain, positive } from "./binder.ts";
 import { defaults } from "./defaults.ts";
-import { addEntry, changesOf, type Entry, entryOf, factAt, type History } from "./history.ts";
+import { enter } from "./facts-draft.ts";
+import { changesOf, type Entry, factAt, type History } from "./history.ts";
 import type { Assumption, Solution, Strength } from "./model.ts";
 import type { Declaration } from "./names.ts";
 import type { Place } from "./place.ts";
@@ -92,8 +93,8 @@ function readRecipe(
         break;
       }
       case "make-up": {
-        const litres = positive(line, solutionFact.volume, "volume");
-        if (litres) enter(line, recipe.makeUpL, solutionFact, litres, "make up to");
+        const litres = aboveZero(line, solutionFact.volume, "volume");
+        if (litres !== null) enter(line, recipe.makeUpL, solutionFact, litres, "make up to");
         break;
       }
       case "keep": {
@@ -128,19 +129,6 @@ function readSupplied(line: Line, fact: Extract<SolutionFact, { kind: "supplies"
     { parameter, perMl: read.value / millilitresPerL, as: fact.as },
     `supplies ${parameter.name}`,
   );
-}
-
-function enter<T>(line: Line, history: Entry<T>[], fact: SolutionFact, value: T, what: string): void {
-  const same = addEntry(history, entryOf(fact, value, placeOf(line, null)));
-  if (same)
-    line.report({
-      code: "name/twice",
-      place: placeOf(line, null),
-      system: null,
-      word: what,
-      what: "fact",
-      first: same.place,
-    });
 }
 
 /** A recipe that names nothing, or no volume to make up to, has no strength. */

@@ -1,6 +1,6 @@
 /** Sources of a solution: pumps and hands. */
 import type { QuantityText } from "../../grammar/syntax.ts";
-import { type Line, named, positive, reportSpan } from "./binder.ts";
+import { type Line, named, positive, wholeNumber } from "./binder.ts";
 import { enter, type FactOf, type FactsDraft, hoursOf, into } from "./facts-draft.ts";
 import { type Source, sourceKey } from "./model.ts";
 
@@ -12,6 +12,8 @@ export function bindPump(draft: FactsDraft, line: Line, fact: FactOf<"pump">): v
   const least = optional(fact.least, "volume");
   const always = optional(fact.always, "flow");
   const holding = optional(fact.holding, "volume");
+  const failed = (quantity: QuantityText | null, value: number | null) => quantity !== null && value === null;
+  if (failed(fact.least, least) || failed(fact.always, always) || failed(fact.holding, holding)) return;
   if (!solution || flow === null) return;
   const source: Source = {
     by: fact.name.text,
@@ -30,17 +32,8 @@ export function bindPump(draft: FactsDraft, line: Line, fact: FactOf<"pump">): v
 export function bindByHand(draft: FactsDraft, line: Line, fact: FactOf<"by-hand">): void {
   const solution = named(line, fact.solution, ["solution"]);
   const always = fact.always ? positive(line, fact.always, "flow") : null;
-  const times = fact.times ? Number(fact.times.text) : 1;
-  if (!solution || !Number.isInteger(times) || times < 1) {
-    if (solution && fact.times)
-      reportSpan(line, {
-        code: "syntax/number-form",
-        span: fact.times,
-        word: fact.times.text,
-        readings: [],
-      });
-    return;
-  }
+  const times = fact.times ? wholeNumber(line, fact.times) : 1;
+  if (!solution || times === null || (fact.always && always === null)) return;
   const source: Source = {
     by: "hand",
     device: "hand",

@@ -1,13 +1,13 @@
 /** Tanks and what takes up room in them. */
 import type { QuantityText, TankSize } from "../../grammar/syntax.ts";
-import { type Line, positive } from "./binder.ts";
+import { aboveZero, type Line, positive, wholeNumber } from "./binder.ts";
 import { enter, type FactOf, type FactsDraft, into } from "./facts-draft.ts";
 import { tankLitres } from "./tank.ts";
 
 export function bindTank(draft: FactsDraft, line: Line, fact: FactOf<"tank">): void {
   const litres = tankSize(line, fact.size);
-  const times = fact.times ? Number(fact.times.text) : 1;
-  if (litres === null || !Number.isFinite(times) || times < 0) return;
+  const times = fact.times ? wholeNumber(line, fact.times) : 1;
+  if (litres === null || times === null) return;
   enter(line, into(draft.tanks, fact.name.text), fact, litres * times, `tank ${fact.name.text}`);
 }
 
@@ -28,6 +28,6 @@ function tankSize(line: Line, size: TankSize): number | null {
 function displaced(line: Line, amount: QuantityText, density: QuantityText | null): number | null {
   if (!density) return positive(line, amount, "volume");
   const grams = positive(line, amount, "mass");
-  const gramsPerL = positive(line, density, "density");
-  return grams === null || !gramsPerL ? null : grams / gramsPerL;
+  const gramsPerL = aboveZero(line, density, "density");
+  return grams === null || gramsPerL === null ? null : grams / gramsPerL;
 }

@@ -2,7 +2,7 @@
 
 import { nearestWords } from "../../grammar/nearest.ts";
 import { type Parameter, type ParameterName, parameterOf, parameterTable } from "../../grammar/parameters.ts";
-import type { QuantityText, Span, Word } from "../../grammar/syntax.ts";
+import type { NumberWord, QuantityText, Span, Word } from "../../grammar/syntax.ts";
 import { answeredRange } from "../chemistry/constants-at.ts";
 import { densityKgPerL } from "../chemistry/sea-water.ts";
 import { type Amount, asDifference, readConcentration, type Written } from "../quantity/concentration.ts";
@@ -105,6 +105,27 @@ export function positive(line: Line, quantity: QuantityText, kind: PlainKind): n
     word: text,
     readings: [text.replace("-", "")],
   });
+  return null;
+}
+
+/** The same where it can't be zero either. */
+export function aboveZero(line: Line, quantity: QuantityText, kind: PlainKind): number | null {
+  const value = positive(line, quantity, kind);
+  if (value !== 0) return value;
+  reportSpan(line, {
+    code: "syntax/number-form",
+    span: quantity.number,
+    word: quantity.number.text,
+    readings: [],
+  });
+  return null;
+}
+
+/** How many times something is there or done: 1, 2, 3 … */
+export function wholeNumber(line: Line, number: NumberWord): number | null {
+  const value = Number(number.text);
+  if (Number.isSafeInteger(value) && value > 0) return value;
+  reportSpan(line, { code: "syntax/number-form", span: number, word: number.text, readings: [] });
   return null;
 }
 

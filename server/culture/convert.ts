@@ -1,9 +1,16 @@
 /** From amounts as written to one unit a parameter: meq/L, mg/L, PSS-78, °C, pH. Decimal in, a double out. */
 import { type Parameter, parameterOf } from "../../grammar/parameters.ts";
 import { molarMassText, parseFormula } from "../chemistry/formula.ts";
-import { salinityFromConductivity, salinityFromSpecificGravity } from "../chemistry/salinity.ts";
+import {
+  conductivityFromSalinity,
+  salinityFromConductivity,
+  salinityFromSpecificGravity,
+  specificGravity,
+  specificGravityScales,
+} from "../chemistry/salinity.ts";
 import type { Amount } from "../quantity/concentration.ts";
 import { Decimal34, toDouble } from "../quantity/decimal.ts";
+import { defaults } from "./defaults.ts";
 
 /** Molar mass of a formula in decimal, g/mol, equal to mg/mmol. */
 const molarMass = (formula: string): Decimal34 => {
@@ -38,7 +45,9 @@ export function inModelUnit(
     case "pH":
       return toDouble(amount.value);
     case "salinity":
-      return salinityOf(amount.by, amount.value);
+      return amount.difference
+        ? salinityChange(amount.by, amount.value)
+        : salinityOf(amount.by, amount.value);
     case "dissolved": {
       const decimal = dissolvedAmount(amount, parameter);
       const value = decimal && toDouble(decimal);
@@ -59,6 +68,22 @@ function salinityOf(by: Extract<Amount, { sort: "salinity" }>["by"], value: Deci
       ? salinityFromConductivity(number, conductivityDegC)
       : salinityFromSpecificGravity(number, by.slice("specific gravity ".length) as "25/25 °C");
   return reading.ok ? reading.salinity : null;
+}
+
+/**
+ * A change of specific gravity or conductivity as one of salinity, by the slope at the default salinity: from
+ * 25 to 42 it differs from that by less than 5 % (computed).
+ */
+function salinityChange(by: Extract<Amount, { sort: "salinity" }>["by"], value: Decimal34): number | null {
+  const number = toDouble(value);
+  if (number === null || by === "PSS-78") return number;
+  const shown = (salinity: number): number => {
+    if (by === "conductivity") return conductivityFromSalinity(salinity, conductivityDegC) ?? Number.NaN;
+    const degC = specificGravityScales[by.slice("specific gravity ".length) as "25/25 °C"];
+    return specificGravity(salinity, degC, degC);
+  };
+  const slope = shown(defaults.salinity.value + 0.5) - shown(defaults.salinity.value - 0.5);
+  return slope > 0 ? number / slope : null;
 }
 
 /** In meq for alkalinity, in mg for the rest; per whatever it is per. */

@@ -200,7 +200,6 @@ function bindSystems(
       const draft = system && drafts.get(system.ref);
       if (!draft) continue;
       draft.logFiles.add(file);
-      const solutionOf = (key: string) => draft.facts.sources.get(key)?.[0]?.value.solution;
       let latest = Number.NEGATIVE_INFINITY;
       for (const { line, event } of eventLines(house, file, index, section.name.text)) {
         if (event.at.minute < latest) {
@@ -211,7 +210,7 @@ function bindSystems(
           });
         }
         latest = Math.max(latest, event.at.minute);
-        const bound = bindEvent(line, event, { facts: draft.facts, solutionOf });
+        const bound = bindEvent(line, event, { facts: draft.facts });
         if (bound) draft.events.push(bound);
       }
     }
@@ -236,7 +235,7 @@ function dropDoubled(events: BoundEvent[], system: string, findings: CultureFind
   let kept = 0;
   for (const event of events) {
     const before = events[kept - 1];
-    if (before && before.minute === event.minute && before.text === event.text && event.kind !== "note") {
+    if (before && before.minute === event.minute && before.text === event.text) {
       findings.push({ code: "log/twice", place: event.place, system, first: before.place });
       continue;
     }
@@ -253,15 +252,20 @@ type Drafts = ReadonlyMap<
 /** Corals moved to a system arrive in its cohort of the same name. */
 function arrive(drafts: Drafts, findings: CultureFinding[]): void {
   const arrivals: { readonly into: BoundEvent[]; readonly event: BoundEvent }[] = [];
-  for (const { declaration, events } of drafts.values()) {
+  for (const { declaration, facts, events } of drafts.values()) {
     for (const event of events) {
       if (event.kind !== "moved" || !event.system) continue;
       const target = drafts.get(event.system);
       if (!target) continue;
-      if (target.facts.cohorts.has(event.cohort))
+      const here = facts.cohorts.get(event.cohort)?.[0]?.value.count.by;
+      const there = target.facts.cohorts.get(event.cohort)?.[0]?.value.count.by;
+      if (there !== undefined && there === here)
         arrivals.push({ into: target.events, event: { ...event, kind: "stocked" } });
       else {
-        const why = `${target.declaration.name} has no cohort ${event.cohort}, so what they take there isn't counted`;
+        const why =
+          there === undefined
+            ? `${target.declaration.name} has no cohort ${event.cohort}, so what they take there isn't counted`
+            : `${target.declaration.name} counts ${event.cohort} in ${there === "pieces" ? "pieces" : "an area"}, so what they take there isn't counted`;
         findings.push({ code: "log/no-effect", place: event.place, system: declaration.name, why });
       }
     }

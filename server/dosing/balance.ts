@@ -1,6 +1,7 @@
 /** Whether what is given is in the proportion that the corals' mineral takes: shown, not assumed. */
 import { calcificationPerMeq } from "../chemistry/calcification.ts";
-import type { Plan, SourceInPlan } from "./make-plan.ts";
+import type { Plan, Situation, SourceInPlan } from "./make-plan.ts";
+import { topOffFlow } from "./rates.ts";
 import { broughtPerLitre, type Dosed } from "./tracked.ts";
 
 export interface Balance {
@@ -16,14 +17,22 @@ export interface Balance {
   }[];
 }
 
-/** Balance of the plan's maintenance against a mineral with this mole fraction of magnesium. */
-export function balanceOf(plan: Plan, magnesiumFraction: number): Balance {
-  const mineral = calcificationPerMeq(magnesiumFraction);
+/** Balance of the plan's maintenance, with what a top-off solution brings, against the mineral laid down. */
+export function balanceOf(
+  plan: Plan,
+  { constants, state, uptake }: Pick<Situation, "constants" | "state" | "uptake">,
+): Balance {
+  const mineral = calcificationPerMeq(uptake.magnesiumFraction);
+  const topOff = topOffFlow(constants, state.minute);
+  const inTopOff = topOff && constants.strengthAt(topOff.solution, state.minute);
   const given = (name: Dosed): number =>
-    plan.sources.reduce((sum, { strength }, index) => {
-      const litres = plan.answer.sources[index]?.maintenanceLPerDay ?? 0;
-      return sum + litres * (broughtPerLitre(strength, name) ?? 0);
-    }, 0);
+    plan.sources.reduce(
+      (sum, { strength }, index) => {
+        const litres = plan.answer.sources[index]?.maintenanceLPerDay ?? 0;
+        return sum + litres * (broughtPerLitre(strength, name) ?? 0);
+      },
+      topOff && inTopOff ? topOff.litresPerDay * (broughtPerLitre(inTopOff, name) ?? 0) : 0,
+    );
   const alkalinity = given("alkalinity");
   const brings = (name: Dosed) => plan.sources.filter((source) => perLitre(source, name) > 0);
   const onlyAlkaline = brings("alkalinity").filter((source) => perLitre(source, "calcium") === 0);

@@ -1,6 +1,7 @@
 /** What a system's fold needs beside its events: one value, untouched by an edit of the log. */
 import type { ParameterName } from "../../grammar/parameters.ts";
-import { densityKgPerL, seaWaterComposition } from "../chemistry/sea-water.ts";
+import { seaWaterComposition } from "../chemistry/sea-water.ts";
+import { densityOf } from "../culture/binder.ts";
 import { defaults } from "../culture/defaults.ts";
 import { changesOf, factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Strength, System, SystemFacts } from "../culture/model.ts";
@@ -24,9 +25,11 @@ export interface ExchangeWater {
 
 export function constantsOf(model: FarmModel, system: System): SystemConstants {
   const { facts } = system;
-  const solutions = new Set(
-    [...facts.sources.values()].flatMap((history) => history.map(({ value }) => value.solution)),
-  );
+  const solutions = new Set([
+    ...[...facts.sources.values()].flatMap((history) => history.map(({ value }) => value.solution)),
+    ...facts.topOff.flatMap(({ value }) => value.solution ?? []),
+  ]);
+  const waters = new Set(facts.flowsThrough.map(({ value }) => value.water));
   const histories = [
     ...facts.tanks.values(),
     ...facts.displacements.values(),
@@ -39,7 +42,8 @@ export function constantsOf(model: FarmModel, system: System): SystemConstants {
     facts.topOff,
     facts.flowsThrough,
     ...facts.sources.values(),
-    ...[...solutions].flatMap((ref) => model.solutions.get(ref)?.strengths ?? []).map((entry) => [entry]),
+    ...[...solutions].map((ref) => model.solutions.get(ref)?.strengths ?? []),
+    ...[...waters].flatMap((ref) => [...(model.waters.get(ref)?.values.values() ?? [])]),
   ];
   return {
     facts,
@@ -60,8 +64,8 @@ function exchangeWater(model: FarmModel, ref: string, minute: number): ExchangeW
     return other ? lastReading(other, parameter, minute) : null;
   };
   const salinity = stated("salinity") ?? defaults.salinity.value;
-  const temperature = stated("temperature") ?? defaults.temperature.value;
-  const density = densityKgPerL(salinity, temperature);
+  const temperatureDegC = stated("temperature") ?? defaults.temperature.value;
+  const density = densityOf({ salinity, temperatureDegC });
   const sea = seaWaterComposition(salinity);
   const reference: ByTracked<number> = {
     alkalinity: (sea.alkalinityUmolPerKg / 1000) * density,

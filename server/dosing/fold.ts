@@ -22,7 +22,7 @@ export interface Folded {
 
 /** Folds all events up to a minute, and carries the water to it. Later events wait silently. */
 export function foldEvents(constants: SystemConstants, events: readonly SystemEvent[], at: number): Folded {
-  let state = startState(events[0]?.minute ?? at);
+  let state = startState(Math.min(events[0]?.minute ?? at, at));
   const doses: DoseInLog[] = [];
   for (const event of events) {
     if (event.minute > at) break;
@@ -43,14 +43,22 @@ export function carryTo(state: WaterState, minute: number, constants: SystemCons
   if (minute <= state.minute) return state;
   let { carried } = state;
   let from = state.minute;
-  for (const change of constants.changes) {
-    if (change <= from) continue;
-    if (change >= minute) break;
+  for (const change of changesBetween(state, minute, constants)) {
     carried = carryPiece({ ...state, minute: from, carried }, change, constants);
     from = change;
   }
   carried = carryPiece({ ...state, minute: from, carried }, minute, constants);
   return { ...state, minute, carried };
+}
+
+/** The minutes at which a fact changes or a value ceases to be carried: growth is taken at the middle of a piece. */
+function changesBetween(state: WaterState, minute: number, { changes }: SystemConstants): number[] {
+  const ends = tracked.flatMap((name) => {
+    const carried = state.carried[name];
+    return carried ? [carried.readAt + carriedMinutes] : [];
+  });
+  const within = [...changes, ...ends].filter((change) => change > state.minute && change < minute);
+  return [...new Set(within)].sort((left, right) => left - right);
 }
 
 function carryPiece(state: WaterState, to: number, constants: SystemConstants): ByTracked<Carried | null> {
@@ -174,13 +182,14 @@ function renew(state: WaterState, water: string, litres: number, constants: Syst
 }
 
 function restock(state: WaterState, cohort: string, change: number, constants: SystemConstants): WaterState {
-  const entry =
-    factAt(constants.facts.cohorts.get(cohort), state.minute) ?? constants.facts.cohorts.get(cohort)?.[0];
+  const entry = factAt(constants.facts.cohorts.get(cohort), state.minute);
+  // What came and went before a count was made is in it.
   if (!entry) return state;
   const before = state.stock.get(cohort);
   const counted = before && before.from === entry.from ? before.change : 0;
-  return {
-    ...state,
-    stock: new Map(state.stock).set(cohort, { from: entry.from, change: counted + change }),
-  };
+  const { count } = entry.value;
+  const declared = count.by === "pieces" ? count.number : count.squareMetres;
+  // No more can go than are there: what comes later adds to none.
+  const left = Math.max(-declared, counted + change);
+  return { ...state, stock: new Map(state.stock).set(cohort, { from: entry.from, change: left }) };
 }

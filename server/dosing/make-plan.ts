@@ -12,7 +12,7 @@ import { ratesAt } from "./fold.ts";
 import { limitAt } from "./limits.ts";
 import type { PlanAnswer, PlanParameter, PlanProblem, PlanSource } from "./plan-problem.ts";
 import { solvePlan } from "./plan-solve.ts";
-import { type Flow, litresSet, sourcesAt, topOffFlow } from "./rates.ts";
+import { type Flow, sourcesAt, topOffFlow } from "./rates.ts";
 import { judgeSalinity } from "./salinity-cause.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
@@ -112,7 +112,7 @@ function whyHeldBack(situation: Situation, hold: Hold, value: number | null): st
   const { constants, state } = situation;
   const salinityHold = factAt(constants.facts.holds.get("salinity"), state.minute)?.value;
   const salinity = state.carried.salinity;
-  if (salinityHold && salinity) {
+  if (salinityHold && salinity && !isStale(salinity, state.minute)) {
     const judgement = judgeSalinity(
       value,
       hold,
@@ -137,7 +137,7 @@ function whyHeldBack(situation: Situation, hold: Hold, value: number | null): st
 const minutesBetweenDoses = 5;
 
 function planSource(situation: Situation, { key, source, strength }: SourceInPlan): PlanSource {
-  const { state, assumed } = situation;
+  const { assumed } = situation;
   const isPump = source.device === "pump";
   const hours = hoursOpen(source);
   const largest = largestDelivery(situation, source, strength);
@@ -154,7 +154,6 @@ function planSource(situation: Situation, { key, source, strength }: SourceInPla
       ? { kind: "at-most", count: Math.max(1, Math.floor(hours / minutesBetweenDoses)) }
       : { kind: "fixed", count: source.times },
     alwaysLPerDay: source.alwaysLPerDay,
-    setLPerDay: litresSet(state, key, source),
   };
 }
 

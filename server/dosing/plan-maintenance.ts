@@ -133,7 +133,9 @@ function deviationRows(
   return known.map((p, index) => {
     const open = (states[p]!.targetPerDay! - supplyOf(numbers, p, always)) / numbers.dayScale[p]!;
     const sign = open >= 0 ? 1 : -1;
-    const effects = scaledEffects(numbers, p, planned).map((value) => sign * value);
+    const effects = scaledEffects(numbers, p, planned).map((value, column) =>
+      value > 0 && !numbers.raises[p]![planned[column]!] ? 0 : sign * value,
+    );
     const extra = (value: number): number[] => known.map((_, other) => (other === index ? value : 0));
     return {
       row: { coefficients: [...effects, ...extra(-1)], atMost: Math.abs(open) },

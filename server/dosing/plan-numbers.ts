@@ -20,9 +20,12 @@ export interface PlanNumbers {
   readonly preference: readonly number[];
 }
 
-/** Fractions of a source's main effect: under the first it is rounding of a recipe, under the second no use. */
+/**
+ * Fractions of a source's main effect: under the first it is rounding of a recipe; under the second a trace, which
+ * counts in the limits but is no reason to give the source: it would run litres for what another is short of.
+ */
 const roundingOfRecipe = 1e-9;
-const ofNoUse = 1e-5;
+const trace = 0.005;
 
 /** Below this fraction of its scale a figure is rounding. */
 export const rounding = 1e-9;
@@ -54,7 +57,7 @@ export function planNumbers(problem: PlanProblem): PlanNumbers {
     parameters,
     sources,
     effect,
-    raises: raw.map((row, p) => row.map((_, j) => share(p, j) > ofNoUse)),
+    raises: raw.map((row, p) => row.map((_, j) => share(p, j) > trace)),
     ceilingL: ceilings.map(({ litres }, j) => Math.max(litres, sources[j]!.alwaysLPerDay)),
     ceilingBy: ceilings.map(({ by }) => by),
     dayScale,
@@ -67,9 +70,9 @@ export function planNumbers(problem: PlanProblem): PlanNumbers {
 export const supplyOf = (numbers: PlanNumbers, p: number, litresPerDay: readonly number[]): number =>
   litresPerDay.reduce((sum, litres, j) => sum + numbers.effect[p]![j]! * litres, 0);
 
-/** Distances to the aim smaller than this are none. */
+/** Distances to the aim smaller than this are none: half a hundredth of the band, far below what any test shows. */
 export const negligible = (numbers: PlanNumbers, p: number): number =>
-  rounding * Math.max(7 * numbers.dayScale[p]!, Math.abs(numbers.parameters[p]!.aim));
+  Math.max(0.005 * 7 * numbers.dayScale[p]!, rounding * Math.abs(numbers.parameters[p]!.aim));
 
 /** Whether a parameter stands at its greatest value or above, so that nothing may raise it. */
 export const atMax = ({ now, max }: Pick<PlanParameter, "now" | "max">): boolean =>
@@ -100,7 +103,6 @@ function cleanSource(source: PlanSource): PlanSource {
         : source.capacityLPerDay && positive(source.capacityLPerDay),
     deliveries: { ...source.deliveries, count: Math.floor(positive(source.deliveries.count)) },
     alwaysLPerDay: positive(source.alwaysLPerDay),
-    setLPerDay: positive(source.setLPerDay),
   };
 }
 

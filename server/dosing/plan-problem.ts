@@ -44,8 +44,6 @@ export interface PlanSource {
   readonly deliveries: { readonly kind: "fixed" | "at-most"; readonly count: number };
   /** Runs at this rate whatever is planned, L/day. */
   readonly alwaysLPerDay: number;
-  /** What it is set to now, L/day. */
-  readonly setLPerDay: number;
 }
 
 export interface PlanProblem {
@@ -96,7 +94,7 @@ export interface PlannedSource {
 /** What stands in the way of what should be given. */
 export interface PlanObstacle {
   readonly parameter: ParameterName;
-  /** `held-back`: correction or maintenance less than wished; `no-source`: nothing can raise it; `passive-breach`: without any dose a limit breaks. */
+  /** `held-back`: maintenance less than wished, or no correction at all; `no-source`: nothing can raise it; `passive-breach`: without any dose a limit breaks. */
   readonly kind: "held-back" | "no-source" | "passive-breach";
   /** In words of the report: "alkalinity rise", "magnesium under 1150 mg/L", "head-1 hours". */
   readonly by: string;

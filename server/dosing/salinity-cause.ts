@@ -1,5 +1,5 @@
 /** Whether salinity, not dosing, puts a parameter outside its band. */
-import { densityKgPerL } from "../chemistry/sea-water.ts";
+import { densityOf } from "../culture/binder.ts";
 
 export interface SalinityJudgement {
   /** The value at the salinity aim. */
@@ -30,7 +30,7 @@ export function judgeSalinity(
   temperatureDegC: number,
 ): SalinityJudgement | null {
   if (inside(salinity, salinityBand) || salinity <= 0) return null;
-  const density = (at: number) => densityKgPerL(at, temperatureDegC);
+  const density = (at: number) => densityOf({ salinity: at, temperatureDegC });
   const scaled = (value * (salinityBand.aim / salinity) * density(salinityBand.aim)) / density(salinity);
   return {
     scaled,

@@ -111,10 +111,13 @@ function cohortUptakes(
     const size = cohort.uptakeOf === "all" ? (declared > 0 ? count / declared : 0) : count;
     const since = Number.isFinite(entry.from) ? entry.from : (firstEvent ?? minute);
     const days = Math.max(0, minute - since) / minutesPerDay;
-    const grown = (1 + cohort.growthPerDay * daysPerWeek) ** (days / daysPerWeek);
+    const grown = Math.min(mostGrown, (1 + cohort.growthPerDay * daysPerWeek) ** (days / daysPerWeek));
     return [{ cohort, meqPerDay: size * cohort.uptakeMeqPerDay * grown }];
   });
 }
 
 /** `grows 1 %/week` compounds week by week. */
 const daysPerWeek = 7;
+
+/** However long ago its count was made, a cohort takes no more than this many times what was stated. */
+const mostGrown = 1e6;

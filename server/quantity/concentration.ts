@@ -6,7 +6,7 @@
 
 import type { Parameter } from "../../grammar/parameters.ts";
 import type { QuantityText } from "../../grammar/syntax.ts";
-import type { Base, Dimension } from "../../grammar/units.ts";
+import { type Base, type Dimension, unitTable } from "../../grammar/units.ts";
 import type { Decimal34 } from "./decimal.ts";
 import { type Measured, measuredUnit, numberOf, plainNumber, sameDimension, without } from "./dimension.ts";
 import { bad, good, type QuantityFinding, type Reading } from "./finding.ts";
@@ -23,7 +23,13 @@ export type Amount =
       readonly per: "litre" | "kilogram" | "area" | "whole";
       readonly value: Decimal34;
     }
-  | { readonly sort: "salinity"; readonly by: "PSS-78" | SalinityBase; readonly value: Decimal34 }
+  | {
+      readonly sort: "salinity";
+      readonly by: "PSS-78" | SalinityBase;
+      readonly value: Decimal34;
+      /** A change, not a value: what it is in salinity depends on where it is taken. */
+      readonly difference: boolean;
+    }
   | { readonly sort: "temperature"; readonly value: Decimal34 }
   | { readonly sort: "pH"; readonly scale: "NBS" | "total"; readonly value: Decimal34 };
 
@@ -165,7 +171,7 @@ function sortAmount(
     });
   if (!unit) {
     if (asCaCO3) return missing(quantity, ask);
-    if (measure === "salinity") return good({ sort: "salinity", by: "PSS-78", value: number });
+    if (measure === "salinity") return good({ sort: "salinity", by: "PSS-78", value: number, difference });
     if (measure === "pH") return good({ sort: "pH", scale: "NBS", value: number });
     return missing(quantity, ask);
   }
@@ -178,16 +184,18 @@ function sortAmount(
   if (asCaCO3) return wrong();
   if (measure === "temperature")
     return sameDimension(still, { temperature: 1 }) ? good({ sort: "temperature", value }) : wrong();
+  // What cancels out (`mL/L`) is no bare number, though it has no dimension; a bare rate (`/day`) is.
+  const bare = sameDimension(still, {}) && unit.spelling.startsWith("/");
   if (measure === "pH") {
-    if (sameDimension(still, {})) return good({ sort: "pH", scale: "NBS", value });
+    if (bare) return good({ sort: "pH", scale: "NBS", value });
     return sameDimension(still, { "pH on the total scale": 1 })
       ? good({ sort: "pH", scale: "total", value })
       : wrong();
   }
-  if (sameDimension(still, {}) || sameDimension(still, { salinity: 1 }))
-    return good({ sort: "salinity", by: "PSS-78", value });
+  if (bare || sameDimension(still, { salinity: 1 }))
+    return good({ sort: "salinity", by: "PSS-78", value, difference });
   for (const by of salinityBases) {
-    if (sameDimension(still, { [by]: 1 })) return good({ sort: "salinity", by, value });
+    if (sameDimension(still, { [by]: 1 })) return good({ sort: "salinity", by, value, difference });
   }
   return wrong();
 }
@@ -241,8 +249,9 @@ function dissolved(
     if (!asCaCO3)
       notes.push({ code: "unit/ppm", span: quantity.unit ?? quantity, number: quantity.number.text });
   } else {
-    // A bare rate (`/day`) counts nothing; without this it would pass for grams in a gram.
-    kind = unit.spelling.startsWith("/") ? null : kindOf(still);
+    // A bare rate (`/day`) and volumes in a volume (`mL/L`) count nothing; without this they would pass for
+    // grams in a gram.
+    kind = countsMass(unit) || !sameDimension(still, {}) ? kindOf(still) : null;
     if (!kind) return wrong();
     // Masses are in g, so per litre they become mg; a kilogram is 1000 g.
     if (kind.base === "mass") value = value.mul(milli);
@@ -292,6 +301,11 @@ function dissolved(
     notes,
   );
 }
+
+const countsMass = ({ spelling }: Measured): boolean => {
+  const row = unitTable.find((entry) => entry.spelling === spelling.split("/")[0]);
+  return row !== undefined && sameDimension(row.measures, { mass: 1 });
+};
 
 /** Sorts a timeless dimension: what is counted, in what. */
 function kindOf(

@@ -10,6 +10,7 @@ import type { Assessment } from "../dosing/assess.ts";
 import { balanceOf } from "../dosing/balance.ts";
 import type { Plan } from "../dosing/make-plan.ts";
 import type { PlannedSource } from "../dosing/plan-problem.ts";
+import { topOffFlow } from "../dosing/rates.ts";
 import { minutesPerDay } from "../dosing/water-state.ts";
 import { type Section, section } from "./sheet-model.ts";
 
@@ -50,9 +51,19 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
   ] as const;
   return section(title, {
     table: { columns, rows },
-    lines: planLines(assessment, plan),
+    lines: [...topOffLine(model, assessment), ...planLines(assessment, plan)],
     marl: setLine(assessment, plan),
   });
+}
+
+/** What runs in by itself, and the plan works around. */
+function topOffLine(model: FarmModel, { constants, at }: Assessment): string[] {
+  const flow = topOffFlow(constants, at);
+  if (!flow) return [];
+  const name = model.solutions.get(flow.solution)?.name ?? nameOf(flow.solution);
+  return [
+    `The top-off brings ${figure(flow.litresPerDay, "L")} of ${name} a day by itself; the plan gives the rest.`,
+  ];
 }
 
 function deliveryText({ dosesPerDay, litresPerDose, everyDays, totalLPerDay }: PlannedSource): string {
@@ -128,7 +139,7 @@ export function effectsSection(model: FarmModel, assessment: Assessment): Sectio
     lines.push(gain + swap);
   }
   if (uptake && uptake.calcificationGPerDay !== null) {
-    const { given, taken, pairs } = balanceOf(plan, uptake.magnesiumFraction);
+    const { given, taken, pairs } = balanceOf(plan, { ...assessment, uptake });
     if (given) {
       lines.push(
         `For each meq of alkalinity ${rounded(given.calciumMgPerMeq, 1)} mg of calcium and ${rounded(given.magnesiumMgPerMeq, 2)} mg of magnesium are given; the skeleton takes ${rounded(taken.calciumMgPerMeq, 1)} and ${rounded(taken.magnesiumMgPerMeq, 2)}.`,

@@ -39,14 +39,16 @@ export function waterSection(assessment: Assessment): Section {
     const latest = latestOf(assessment, name);
     if (!hold && !latest) return [];
     const unit = hold?.unit ?? latest?.reading?.unit ?? plainUnit(name);
+    // The unit stands beside the value: a column of it again would make the table too wide.
+    const bare = { ...unit, spelling: "" };
     const scale =
       name === "pH" && (latest?.reading?.scale === "total" || hold?.scale === "total") ? " total" : "";
     return [
       [
         name + scale,
         latest ? valueBeside(name, latest.value, hold ? [hold.low, hold.high] : [], unit) : "never read",
-        hold ? bandFigure(name, hold.low, hold.high, unit) : "",
-        hold?.aimStated ? edgeFigure(name, hold.aim, unit) : "",
+        hold ? bandFigure(name, hold.low, hold.high, bare) : "",
+        hold ? edgeFigure(name, hold.aim, bare) : "",
         latest ? ago(at - latest.readAt) : "",
         ...driftCases.map((each) => leavingText(assessment, name, each)),
       ],
@@ -94,9 +96,10 @@ function leavingText(
   if (!drift || drift.points.length === 0) return "";
   if (drift.leavesAt === null) return "stays";
   if (drift.leavesAt <= at) return "outside";
-  const [, day = "", month = ""] = dayText(drift.leavesAt).split(" ");
-  const clock = writeClock(((drift.leavesAt % minutesPerDay) + minutesPerDay) % minutesPerDay);
-  return `${day} ${month.slice(0, 3)} ${clock}`;
+  // Foreseen to the hour: more would pretend to more than is known.
+  const hour = Math.round(drift.leavesAt / minutesPerHour) * minutesPerHour;
+  const [, day = "", month = ""] = dayText(hour).split(" ");
+  return `${day} ${month.slice(0, 3)} ${writeClock(hour % minutesPerDay)}`;
 }
 
 export function uptakeSection(assessment: Assessment): Section {
