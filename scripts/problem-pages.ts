@@ -1,4 +1,4 @@
-// Writes docs/problems/, one page a code, from the rules; a test checks that nothing differs.
+// Writes docs/problems/, one page a code, from the rules (npm run generate); a test checks that nothing differs.
 import { mkdir, readdir, rm, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import type { Rule } from "../server/checks/rule.ts";

@@ -15,8 +15,9 @@ const isRecipe = ({ place }: Of<"syntax/unfinished">): boolean => place.span ===
 const isFormula = (expected: readonly string[]): boolean =>
   expected[0]?.startsWith("a chemical formula") === true;
 
-/** Kinds of words and keywords as a technician calls them. */
-const said = (expected: readonly string[]): string => oneOf(expected);
+/** What could stand there: kinds of words (`a unit`) and parameters as they are, words to be written so in quotes. */
+const said = (expected: readonly string[]): string =>
+  oneOf(expected.map((word) => (/^an? /.test(word) || isParameter(word) ? word : inQuotes(word))));
 
 function unknownWord({ word, expected }: Of<"syntax/unknown-word">): string {
   if (isFormula(expected)) return `${inQuotes(word)} can't be read as part of a chemical formula.`;
