@@ -25,7 +25,6 @@ const isWithheld = (by: string): boolean =>
 /** What stands in the way, in words. */
 function reason(by: string): string {
   if (by === "no recent reading") return "there is no recent reading of it";
-  if (by === "salinity") return "salinity is what puts it off";
   if (/^(magnesium under|calcium over) /.test(by)) return by.replace(/^(magnesium|calcium)/, "$1 is");
   if (by === "sea water") return "more of it at once would be no sea water any more";
   if (by.startsWith("Ω")) return `one dose may bring Ω of aragonite to ${by.slice(2)} at most`;

@@ -51,7 +51,7 @@ export const systemRules: Rules<
     title: "A band with nothing in it",
     says: ({ parameter, low, high, unit }) =>
       `The band of ${parameter} is empty: ${bandFigure(parameter, low, high, unit)}.`,
-    why: "This line is left out, so this parameter isn't held.",
+    why: "The middle of the band is aimed at instead.",
     todo: "Write the lower value first, and a higher one after it.",
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 26.5 to 24.5 degC\n",
@@ -64,7 +64,7 @@ export const systemRules: Rules<
     says: ({ parameter, low, high, aim, unit }) =>
       `${atStart(parameter)} is to aim at ${edgeFigure(parameter, aim, unit)}, outside its band of ${bandFigure(parameter, low, high, unit)}.`,
     why: "This line is left out, so this parameter isn't held.",
-    todo: "Move the aim into the band, or leave it out to aim at the middle.",
+    todo: "Move the aim into the band, or leave it out.",
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 27\n",
       silent: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 25\n",

@@ -103,8 +103,11 @@ export const waterRules: Rules<
   "water/outside-hold": {
     severity: "warning",
     title: "A parameter outside its band",
-    says: ({ parameter, value, low, high, unit }) =>
-      `${atStart(parameter)} is ${valueBeside(parameter, value, [low, high], unit)}; its band is ${bandFigure(parameter, low, high, unit)}.`,
+    says: ({ parameter, value, read, low, high, unit }) => {
+      const now = valueBeside(parameter, value, [low, high], unit);
+      const carried = valueFigure(parameter, value, unit) !== valueFigure(parameter, read, unit);
+      return `${atStart(parameter)} is ${now}${carried ? " by now" : ""}; its band is ${bandFigure(parameter, low, high, unit)}.`;
+    },
     why: "The band is what these corals are kept in.",
     todo: "Follow the plan, no faster than it says, and test again if the value surprises you. Salinity is mended with fresh or saltier water; a low pH with the room's air.",
     todoHere: outsideTodo,

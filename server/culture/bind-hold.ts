@@ -23,13 +23,14 @@ export function bindHold(draft: FactsDraft, line: Line, fact: FactOf<"hold">, wa
     return;
   }
   const middle = (low.value + high.value) / 2;
-  const aimed = aim?.value ?? middle;
-  if (aimed < low.value || aimed > high.value) {
-    line.report({ code: "system/aim-outside", place: placeOf(line, fact.aim), ...shared, aim: aimed });
-    return;
+  const outside = aim !== null && (aim.value < low.value || aim.value > high.value);
+  if (outside) {
+    line.report({ code: "system/aim-outside", place: placeOf(line, fact.aim), ...shared, aim: aim.value });
   }
+  // A band with a wrong aim is still a band: without it nobody would be told that the water has left it.
+  const stated = aim !== null && !outside;
   const scale = low.amount.sort === "pH" ? low.amount.scale : null;
-  const hold: Hold = { ...shared, aim: aimed, aimStated: aim !== null, scale };
+  const hold: Hold = { ...shared, aim: stated ? aim.value : middle, aimStated: stated, scale };
   enter(line, into(draft.holds, parameter.name), fact, hold, `hold ${parameter.name}`);
 }
 

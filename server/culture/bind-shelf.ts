@@ -14,6 +14,7 @@ import { measuredUnit } from "../quantity/dimension.ts";
 import {
   amountOf,
   defaultWater,
+  displayUnit,
   type Line,
   named,
   parameterNamed,
@@ -26,6 +27,7 @@ import { enter } from "./facts-draft.ts";
 import { addEntry, type Entry } from "./history.ts";
 import type { Kit, SaltWater } from "./model.ts";
 import type { Declaration } from "./names.ts";
+import { tenthOf } from "./readings.ts";
 import { reagentNamed } from "./reagent.ts";
 
 interface FactOf<F> {
@@ -84,6 +86,7 @@ export function bindWater(
 /** Salinity and temperature first: they make the water in which the rest is converted. */
 const rank = (parameter: string) => (parameter === "salinity" || parameter === "temperature" ? 0 : 1);
 
+/** A value of a water; null after reporting, also where sea water can't have it. */
 function writtenValue(
   line: Line,
   word: Parameters<typeof parameterNamed>[1],
@@ -93,7 +96,22 @@ function writtenValue(
   const parameter = parameterNamed(line, word);
   const read =
     parameter && amountOf(line, quantity, parameter, readConcentration(quantity, parameter, asValue), water);
-  return parameter && read ? { parameter: parameter.name, value: read.value } : null;
+  if (!parameter || !read) return null;
+  const { possible } = parameter;
+  if (!possible || (read.value >= possible[0] && read.value <= possible[1]))
+    return { parameter: parameter.name, value: read.value };
+  line.report({
+    code: "reading/impossible",
+    place: placeOf(line, { start: word.start, end: quantity.end }),
+    system: line.system,
+    parameter: parameter.name,
+    value: read.value,
+    written: quantity.number.text,
+    unit: displayUnit(quantity, parameter, water),
+    range: possible,
+    tenth: tenthOf(quantity, parameter, water),
+  });
+  return null;
 }
 
 /** A printed tolerance is two standard deviations. */

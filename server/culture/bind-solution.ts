@@ -24,8 +24,11 @@ export interface RecipeSection {
 interface Recipe {
   readonly from: number;
   readonly header: Line;
-  readonly dissolved: Map<string, Entry<{ readonly reagent: PureReagent; readonly grams: number }>[]>;
-  readonly saturated: Entry<PureReagent>[];
+  readonly dissolved: Map<
+    string,
+    Entry<{ readonly reagent: History<PureReagent>; readonly grams: number }>[]
+  >;
+  readonly saturated: Entry<History<PureReagent>>[];
   readonly makeUpL: Entry<number>[];
   readonly keepDegC: Entry<number>[];
   readonly supplied: Map<string, Entry<Supplied>[]>;
@@ -158,6 +161,8 @@ function strengthsOf(
     recipe.makeUpL,
     recipe.keepDegC,
     ...recipe.supplied.values(),
+    ...[...recipe.dissolved.values()].flat().map(({ value }) => value.reagent),
+    ...recipe.saturated.map(({ value }) => value),
   ];
   const starts = [
     recipe.from,
@@ -198,10 +203,17 @@ function strengthAt(
   let strength: Strength | null = null;
   if (parts.length > 0) {
     if (!makeUpL) return null;
-    strength = parts.reduce((sum, { reagent, grams }) => added(sum, reagent, grams / makeUpL), nothing);
+    let sum = nothing;
+    for (const { reagent, grams } of parts) {
+      const now = factAt(reagent, minute)?.value;
+      if (!now) return null;
+      sum = added(sum, now, grams / makeUpL);
+    }
+    strength = sum;
   }
-  const saturated = factAt(recipe.saturated, minute)?.value;
-  if (!saturated) return strength;
+  const stated = factAt(recipe.saturated, minute);
+  const saturated = factAt(stated?.value, minute)?.value;
+  if (!saturated) return stated ? null : strength;
   const kept = factAt(recipe.keepDegC, minute)?.value;
   if (kept === undefined)
     assumptions.push({

@@ -1,7 +1,7 @@
 /** What binding a line needs: where it stands, what it may name, and where its findings go. */
 
 import { nearestWords } from "../../grammar/nearest.ts";
-import { type Parameter, type ParameterName, parameterOf, parameterTable } from "../../grammar/parameters.ts";
+import { type Parameter, parameterOf, parameterTable } from "../../grammar/parameters.ts";
 import type { NumberWord, QuantityText, Span, Word } from "../../grammar/syntax.ts";
 import { answeredRange } from "../chemistry/constants-at.ts";
 import { densityKgPerL } from "../chemistry/sea-water.ts";
@@ -11,6 +11,7 @@ import type { QuantityFinding, Reading } from "../quantity/finding.ts";
 import { type PlainKind, readPlain } from "../quantity/plain.ts";
 import { inModelUnit } from "./convert.ts";
 import { defaults } from "./defaults.ts";
+import { plainUnit } from "./display.ts";
 import type { CultureFinding, NamedKind } from "./finding.ts";
 import type { DisplayUnit } from "./model.ts";
 import { type Declaration, type Names, resolve } from "./names.ts";
@@ -195,15 +196,6 @@ export function amountOf(
   const deviation = written.uncertainty && inModelUnit(written.uncertainty, parameter, density);
   return { value, deviation, amount: written.amount };
 }
-
-const modelUnit: Readonly<Record<ParameterName, string>> = Object.fromEntries(
-  parameterTable.map(({ name, unit }) => [name, unit]),
-) as Record<ParameterName, string>;
-
-export const plainUnit = (parameter: ParameterName): DisplayUnit => ({
-  spelling: modelUnit[parameter],
-  perModelUnit: 1,
-});
 
 /** How the person wrote this parameter, so that messages can answer in the same unit. */
 export function displayUnit(

@@ -1,6 +1,6 @@
 /**
  * The one table of defaults: what is taken where the file says nothing. All are common practice without a
- * source, unless one is named. Written as Marl, so that they read and convert as a technician's own lines do.
+ * source, unless one is named. Beside each value stands the text that a technician would write for it.
  */
 export interface Default {
   /** What it stands for in a list of assumptions. */

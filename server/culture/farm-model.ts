@@ -49,7 +49,10 @@ export function bindFarm(unordered: Files): BoundFarm {
     names.declarations
       .filter((declaration) => declaration.kind === kind)
       .sort((left, right) => comparePlaces(left.place, right.place));
-  for (const reagent of of("reagent")) checkReagent(reagentFacts(house)(reagent), reagentFacts(house));
+  for (const reagent of of("reagent")) {
+    const { file, line } = reagent.place;
+    checkReagent(reagent, lineOf(binder(file, null), line), reagentFacts(house));
+  }
   const solutions = new Map(
     of("solution").map((declaration) => [declaration.ref, solutionOf(house, declaration)]),
   );

@@ -80,6 +80,8 @@ export function bindNames(
     tables.set(file, table);
   }
   const visible = new Map<string, Map<string, Declaration>>();
+  // Two that clash do so in every file that sees both; that is told once.
+  const told = new Set<string>();
   for (const file of files.keys()) {
     const table = new Map(tables.get(file));
     for (const other of reachable(file, used)) {
@@ -87,8 +89,10 @@ export function bindNames(
         const mine = table.get(theirs.name);
         if (!mine) table.set(theirs.name, theirs);
         else if (mine !== theirs) {
+          const pair = [mine.ref, theirs.ref].sort().join("\n");
           if (joinsRecipe(theirs, mine)) table.set(theirs.name, theirs);
-          else findings.push(twice(mine, theirs.place));
+          else if (!told.has(pair)) findings.push(twice(mine, theirs.place));
+          told.add(pair);
         }
       }
     }

@@ -2,11 +2,19 @@
  * Readings: what each value is in the model's unit, whether sea water can have it, and which salinity,
  * temperature and calcium belong to a moment.
  */
-import { type ParameterName, parameterOf } from "../../grammar/parameters.ts";
-import type { ReadItem } from "../../grammar/syntax.ts";
+import { type Parameter, type ParameterName, parameterOf } from "../../grammar/parameters.ts";
+import type { QuantityText, ReadItem } from "../../grammar/syntax.ts";
 import { asValue, readConcentration } from "../quantity/concentration.ts";
 import type { PendingRead, PendingValue } from "./bind-events.ts";
-import { densityOf, displayUnit, type Line, parameterNamed, placeOf, take } from "./binder.ts";
+import {
+  densityOf,
+  displayUnit,
+  type Line,
+  parameterNamed,
+  placeOf,
+  type ReferenceWater,
+  take,
+} from "./binder.ts";
 import { inModelUnit } from "./convert.ts";
 import { defaults } from "./defaults.ts";
 import type { ByParameter, ReadEvent, ReadValue } from "./model.ts";
@@ -150,7 +158,7 @@ function convertValue(
   read: PendingRead,
   parameter: ParameterName,
   pending: PendingValue,
-  water: { readonly salinity: number; readonly temperatureDegC: number },
+  water: ReferenceWater,
 ): ReadValue | null {
   const row = parameterOf(parameter)!;
   const { amount } = pending.written;
@@ -169,7 +177,7 @@ function convertValue(
       ...shared,
       value,
       range: possible,
-      tenth: tenthOf(written, row.usual, value),
+      tenth: tenthOf(pending.quantity, row, water),
     });
     return value === null || !Number.isFinite(value)
       ? null
@@ -181,21 +189,22 @@ function convertValue(
       ...shared,
       value,
       range: row.usual,
-      tenth: tenthOf(written, row.usual, value),
+      tenth: tenthOf(pending.quantity, row, water),
     });
   }
   return { place, value, below: pending.below, impossible, scale, unit };
 }
 
-/** The same digits with the point one place to the left, where a tenth of the value would be usual. */
-function tenthOf(
-  written: string,
-  usual: readonly [number, number] | null,
-  value: number | null,
-): string | null {
-  if (!usual || value === null || value / 10 < usual[0] || value / 10 > usual[1]) return null;
-  const [whole = "0", decimals = ""] = written.split(".");
+/** The same digits with the point one place to the left, where that would be usual. */
+export function tenthOf(quantity: QuantityText, parameter: Parameter, water: ReferenceWater): string | null {
+  const { usual } = parameter;
+  const [whole = "0", decimals = ""] = quantity.number.text.split(".");
+  if (!usual || whole.startsWith("-")) return null;
   const shifted =
     whole.length > 1 ? `${whole.slice(0, -1)}.${whole.slice(-1)}${decimals}` : `0.${whole}${decimals}`;
-  return shifted.replace(/\.?0+$/, "");
+  // Read again rather than divided: 780 degF isn't ten times 78 degF.
+  const number = { ...quantity.number, text: shifted };
+  const read = readConcentration({ ...quantity, number, uncertainty: null }, parameter, asValue);
+  const value = read.ok ? inModelUnit(read.value.amount, parameter, () => densityOf(water)) : null;
+  return value === null || value < usual[0] || value > usual[1] ? null : shifted.replace(/\.?0+$/, "");
 }

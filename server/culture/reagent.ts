@@ -12,6 +12,8 @@ import {
   reagents,
 } from "../chemistry/reagents.ts";
 import { type Line, named, placeOf, shareQuantity } from "./binder.ts";
+import { enter } from "./facts-draft.ts";
+import { addEntry, changesOf, type Entry, entryOf, factAt, type History } from "./history.ts";
 import type { Declaration } from "./names.ts";
 import { resolve } from "./names.ts";
 
@@ -40,13 +42,13 @@ const longestChain = 8;
 
 type FactsOf = (declaration: Declaration) => readonly { readonly line: Line; readonly fact: ReagentFact }[];
 
-/** The reagent that a word names, or null after reporting. */
+/** The reagent that a word names, over time; null after reporting. */
 export function reagentNamed(
   line: Line,
   word: Word,
   factsOf: FactsOf,
   chain = longestChain,
-): PureReagent | null {
+): History<PureReagent> | null {
   const offers = ambiguousReagents.get(word.text);
   const visible = line.names.visible.get(line.file)?.get(word.text);
   if (visible?.kind === "reagent") {
@@ -54,12 +56,13 @@ export function reagentNamed(
     return chain > 0 ? ownReagent(visible, factsOf, chain) : null;
   }
   if (isReagent(word.text)) {
-    return {
+    const pure = {
       composition: composition(reagentElements(word.text)),
       purity: 1,
       builtIn: word.text,
       weights: ionWeights,
     };
+    return [entryOf({ from: null, until: null }, pure, placeOf(line, word))];
   }
   if (offers) {
     line.report({
@@ -79,27 +82,45 @@ export function reagentNamed(
   return null;
 }
 
-/** Works out a reagent of the farm's own; the newest `is` or `formula` counts. */
-function ownReagent(declaration: Declaration, factsOf: FactsOf, chain: number): PureReagent | null {
-  for (const { line, fact } of [...factsOf(declaration)].reverse()) {
-    if (fact.kind === "is") {
-      const other = reagentNamed(silent(line), fact.reagent, factsOf, chain - 1);
-      const purity = purityOf(line, fact.purity);
-      return other && purity !== null ? { ...other, purity: other.purity * purity } : null;
-    }
-    if (fact.kind === "formula") {
-      const parsed = parseFormula(fact.formula.text);
-      const purity = purityOf(line, fact.purity);
-      if (!parsed.ok || purity === null) return null;
-      return {
-        composition: composition(parsed.elements),
-        purity,
-        builtIn: builtInOf(fact.formula.text),
-        weights: ionWeights,
-      };
-    }
+/** Works out a reagent of the farm's own: of its `is` and `formula` lines the newest in force counts. */
+function ownReagent(declaration: Declaration, factsOf: FactsOf, chain: number): History<PureReagent> | null {
+  const lines: Entry<History<PureReagent>>[] = [];
+  for (const { line, fact } of factsOf(declaration)) {
+    const named =
+      fact.kind === "is"
+        ? reagentNamed(silent(line), fact.reagent, factsOf, chain - 1)
+        : fact.kind === "formula"
+          ? byFormula(line, fact.formula.text)
+          : null;
+    if (!named || (fact.kind !== "is" && fact.kind !== "formula")) continue;
+    const purity = purityOf(line, fact.purity);
+    if (purity === null) continue;
+    const impure = named.map((entry) => ({
+      ...entry,
+      value: { ...entry.value, purity: entry.value.purity * purity },
+    }));
+    addEntry(lines, entryOf(fact, impure, placeOf(line, null)));
   }
-  return null;
+  const changes = changesOf([lines, ...lines.map(({ value }) => value)]);
+  const history = [Number.NEGATIVE_INFINITY, ...changes].flatMap((from, index) => {
+    const until = changes[index] ?? Number.POSITIVE_INFINITY;
+    const minute = Number.isFinite(from) ? from : Math.min(until, Number.MAX_SAFE_INTEGER) - 1;
+    const found = factAt(factAt(lines, minute)?.value, minute);
+    return found ? [{ ...found, from, until }] : [];
+  });
+  return history.length > 0 ? history : null;
+}
+
+function byFormula(line: Line, formula: string): History<PureReagent> | null {
+  const parsed = parseFormula(formula);
+  if (!parsed.ok) return null;
+  const pure = {
+    composition: composition(parsed.elements),
+    purity: 1,
+    builtIn: builtInOf(formula),
+    weights: ionWeights,
+  };
+  return [entryOf({ from: null, until: null }, pure, placeOf(line, null))];
 }
 
 /** The built-in reagent with the same formula, so that solubilities are found. */
@@ -117,14 +138,37 @@ function purityOf(line: Line, purity: QuantityText | null): number | null {
 /** The section's own lines are reported once, where they are checked, not at every mention. */
 const silent = (line: Line): Line => ({ ...line, report: () => {} });
 
+/** The reagents that one is called in turn end in one that is known, and soon. */
+function endsWell(line: Line, reagent: Word, factsOf: FactsOf, chain = longestChain): boolean {
+  const own = line.names.visible.get(line.file)?.get(reagent.text);
+  if (own?.kind !== "reagent") return true;
+  if (chain <= 0) return false;
+  return factsOf(own).every(
+    (next) => next.fact.kind !== "is" || endsWell(next.line, next.fact.reagent, factsOf, chain - 1),
+  );
+}
+
 /** Checks the lines of a reagent's own section. */
-export function checkReagent(
-  lines: readonly { readonly line: Line; readonly fact: ReagentFact }[],
-  factsOf: FactsOf,
-): void {
+export function checkReagent(declaration: Declaration, header: Line, factsOf: FactsOf): void {
+  const lines = factsOf(declaration);
+  if (!lines.some(({ fact }) => fact.kind === "is" || fact.kind === "formula")) {
+    const place = placeOf(header, null);
+    header.report({ code: "syntax/unfinished", place, system: null, expected: ["is", "formula"] });
+  }
+  const said: Entry<ReagentFact["kind"]>[] = [];
   for (const { line, fact } of lines) {
     if ((fact.kind === "is" || fact.kind === "formula") && fact.purity) shareQuantity(line, fact.purity);
-    if (fact.kind === "is") reagentNamed(line, fact.reagent, factsOf);
+    if (fact.kind === "is" || fact.kind === "formula") enter(line, said, fact, fact.kind, fact.kind);
+    if (fact.kind === "is" && !endsWell(line, fact.reagent, factsOf)) {
+      line.report({
+        code: "syntax/unknown-word",
+        place: placeOf(line, fact.reagent),
+        system: null,
+        word: fact.reagent.text,
+        expected: ["a reagent that isn't called by this one's name again"],
+        nearest: [],
+      });
+    } else if (fact.kind === "is") reagentNamed(line, fact.reagent, factsOf);
     if (fact.kind !== "formula") continue;
     const parsed = parseFormula(fact.formula.text);
     if (!parsed.ok) {

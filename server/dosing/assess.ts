@@ -203,10 +203,20 @@ function driftOf(
 function volumeFindings(system: System, volume: Volume): DosingFinding[] {
   const shared = { system: system.name };
   if (volume.litres === null) {
-    const nothing = volume.geometricL === null;
-    const place = nothing ? system.place : (volume.largestDisplacement ?? system.place);
+    const nothing = volume.geometricL === null && volume.measuredL === null;
+    const place = nothing
+      ? system.place
+      : (volume.measuredPlace ?? volume.largestDisplacement ?? system.place);
     const reason = nothing ? "no-tank" : "nothing-left";
-    return [{ ...shared, code: "system/no-volume", place, reason, volumeL: volume.geometricL ?? 0 }];
+    return [
+      {
+        ...shared,
+        code: "system/no-volume",
+        place,
+        reason,
+        volumeL: volume.measuredL ?? volume.geometricL ?? 0,
+      },
+    ];
   }
   const { measuredL, geometricL, measuredPlace } = volume;
   if (measuredL === null || geometricL === null || !measuredPlace) return [];

@@ -14,6 +14,8 @@ type Own = { readonly place: Place; readonly system: string } & (
   | (OfParameter & {
       readonly code: "water/outside-hold";
       readonly value: number;
+      /** What was read; `value` is what has become of it since. */
+      readonly read: number;
       readonly low: number;
       readonly high: number;
     })

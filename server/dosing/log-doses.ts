@@ -1,6 +1,6 @@
 /** Doses of the log that broke a limit of the system, however old they are. */
 
-import { plainUnit } from "../culture/binder.ts";
+import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { SystemEvent } from "../culture/model.ts";
 import type { Place } from "../culture/place.ts";
@@ -87,7 +87,7 @@ function checkGiven(
   for (const name of dosed) {
     const rise = raised(state, constants, given, name);
     if (rise <= 0) continue;
-    const unit = factAt(facts.holds.get(name), minute)?.value.unit ?? plainUnit(name);
+    const unit = shownIn(facts, name, minute);
     const shared = { place, system, parameter: name, unit, solution };
     const dose = limitAt(facts, name, "dose", "hand", minute, null);
     if (dose && rise > dose.value * tolerance) {
@@ -112,7 +112,7 @@ function checkGiven(
     }
     const carried = state.carried[name];
     const max = limitAt(facts, name, "max", "hand", minute, null);
-    if (max && carried && !isStale(carried, minute) && carried.value + rise > max.value * tolerance) {
+    if (max && carried && !isStale(carried, minute) && carried.value + rise / tolerance > max.value) {
       const value = carried.value + rise;
       findings.push({
         ...shared,
@@ -221,7 +221,7 @@ function checkSet(
       return strength && (broughtPerLitre(strength, name) ?? 0) > 0;
     });
     if (!serving) continue;
-    const unit = factAt(constants.facts.holds.get(name), event.minute)?.value.unit ?? plainUnit(name);
+    const unit = shownIn(constants.facts, name, event.minute);
     findings.push({
       code: `overdose/${name}-rise`,
       place: serving.place,

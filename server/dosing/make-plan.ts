@@ -105,6 +105,7 @@ function planParameter(situation: Situation, hold: Hold): PlanParameter {
 }
 
 export const noRecentReading = "no recent reading";
+export const salinityFirst = "salinity";
 
 /** Why a parameter isn't corrected, though it may be off its aim. */
 function whyHeldBack(situation: Situation, hold: Hold, value: number | null): string | null {
@@ -120,7 +121,7 @@ function whyHeldBack(situation: Situation, hold: Hold, value: number | null): st
       salinityHold,
       temperatureNow(state, constants, null),
     );
-    if (judgement?.isTheCause) return "salinity";
+    if (judgement?.isTheCause) return salinityFirst;
   }
   if (hold.parameter !== "alkalinity") return null;
   const now = (name: "magnesium" | "calcium") => {

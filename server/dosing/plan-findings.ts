@@ -2,7 +2,7 @@
 import { factAt } from "../culture/history.ts";
 import type { System } from "../culture/model.ts";
 import type { DosingFinding } from "./finding.ts";
-import { heldNow, noRecentReading, type Plan, type Situation } from "./make-plan.ts";
+import { heldNow, noRecentReading, type Plan, type Situation, salinityFirst } from "./make-plan.ts";
 import type { PlanObstacle } from "./plan-problem.ts";
 
 export function planFindings(situation: Situation, system: System, plan: Plan): DosingFinding[] {
@@ -23,9 +23,9 @@ function obstacleFindings(situation: Situation, system: System, plan: Plan): Dos
   });
 }
 
-/** A test that is missing, and water that is beyond a limit already, have problems of their own. */
+/** A test that is missing, salinity that is the cause, and water that is beyond a limit already, have problems of their own. */
 function isToldElsewhere({ parameter, kind, by }: PlanObstacle, plan: Plan): boolean {
-  if (by === noRecentReading) return true;
+  if (by === noRecentReading || by === salinityFirst) return true;
   const problem = plan.problem.parameters.find(({ name }) => name === parameter);
   if (kind !== "passive-breach" || !problem || problem.now === null) return false;
   const { now, max, min } = problem;

@@ -31,7 +31,11 @@ const strengthField = {
 
 const carbonateGPerMol = atomicWeight.C + 3 * atomicWeight.O;
 
-/** Dissolved salt in a millilitre of solution, g; carbon counts as carbonate. What isn't known counts as none. */
+/**
+ * Salt that a millilitre of solution leaves in the water, g: its ions, and for its alkalinity as much carbonate as
+ * the skeleton takes with it; hydroxide takes that up from the air, bicarbonate gives the rest off to it. What isn't
+ * known counts as none.
+ */
 export function saltGPerMl(strength: Strength): number {
   const ions = [
     strength.sodiumMg,
@@ -43,7 +47,7 @@ export function saltGPerMl(strength: Strength): number {
     strength.magnesiumMg,
   ];
   const milligrams = ions.reduce<number>((sum, ion) => sum + (ion ?? 0), 0);
-  return (milligrams + (strength.carbonMmol ?? 0) * carbonateGPerMol) / 1000;
+  return (milligrams + ((strength.alkalinityMeq ?? 0) / 2) * carbonateGPerMol) / 1000;
 }
 
 /** Salinity that a gram of salt brings to a litre of sea water, near enough at one density for all of it. */

@@ -3,8 +3,8 @@
 import { pco2OfAir } from "../chemistry/carbon-before.ts";
 import { fromAlkalinityAndPco2 } from "../chemistry/carbonate-system.ts";
 import { constantsAt } from "../chemistry/constants-at.ts";
-import { plainUnit } from "../culture/binder.ts";
 import { outdoorAirPpm } from "../culture/defaults.ts";
+import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { Hold, ReadValue, System } from "../culture/model.ts";
 import type { ReadingWithCarbonate } from "./carbonate-of-reading.ts";
@@ -77,7 +77,17 @@ function outsideHold(seen: WaterSeen): DosingFinding[] {
     const read = on(now.reading.value);
     const place = read < low || read > high ? now.reading.place : hold.place;
     return [
-      { code: "water/outside-hold", place, system: seen.system.name, parameter, unit, value, low, high },
+      {
+        code: "water/outside-hold",
+        place,
+        system: seen.system.name,
+        parameter,
+        unit,
+        value,
+        read,
+        low,
+        high,
+      },
     ];
   });
 }
@@ -115,7 +125,7 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
       const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
       const broken = which === "max" ? value > limit.value : value < limit.value;
       if (!broken) return [];
-      const unit = holdOf(seen, parameter)?.value.unit ?? now.reading.unit ?? plainUnit(parameter);
+      const unit = shownIn(seen.constants.facts, parameter, seen.at, now.reading);
       const { place } = now.reading;
       return [
         {
@@ -268,8 +278,10 @@ function roomAir(seen: WaterSeen): DosingFinding[] {
   ];
 }
 
+/** A system that is only being written down, without any log yet, isn't asked for tests. */
 function stale(seen: WaterSeen): DosingFinding[] {
-  if (seen.staleParameters.length === 0) return [];
+  const hasLog = seen.system.events.some(({ minute }) => minute <= seen.at);
+  if (seen.staleParameters.length === 0 || !hasLog) return [];
   const parameters = seen.staleParameters.map((name) => ({
     name,
     readAt: seen.state.carried[name]?.readAt ?? null,

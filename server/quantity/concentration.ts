@@ -207,7 +207,7 @@ const salinityBases: readonly SalinityBase[] = [
   "conductivity",
 ];
 
-/** The dimension with its `/time` taken off; a bare number stands for a rate where the parameter has no unit. */
+/** The dimension with its `/time` taken off; null where it is no rate. */
 function timeless(unit: Measured, measure: Parameter["measure"]): Dimension | null {
   const taken = without(unit.dimension, "time", -1);
   if (taken) return taken;

@@ -3,8 +3,7 @@ import { writeMoment } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
 import { changeFigure, doseFigure, figure, rounded, valueFigure } from "../checks/figures.ts";
 import { aboutWhen, atStart, nameOf, oneOf } from "../checks/words.ts";
-import { plainUnit } from "../culture/binder.ts";
-import { factAt } from "../culture/history.ts";
+import { shownIn } from "../culture/display.ts";
 import type { FarmModel } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import { balanceOf } from "../dosing/balance.ts";
@@ -14,8 +13,7 @@ import { topOffFlow } from "../dosing/rates.ts";
 import { minutesPerDay } from "../dosing/water-state.ts";
 import { type Section, section } from "./sheet-model.ts";
 
-const unitIn = ({ constants, at }: Assessment, name: ParameterName) =>
-  factAt(constants.facts.holds.get(name), at)?.value.unit ?? plainUnit(name);
+const unitIn = ({ constants, at }: Assessment, name: ParameterName) => shownIn(constants.facts, name, at);
 
 export function dosesSection(model: FarmModel, assessment: Assessment): Section {
   const title = "Dose today";
@@ -131,7 +129,11 @@ export function effectsSection(model: FarmModel, assessment: Assessment): Sectio
     lines.push(`In ${figure(answer.correctionDays, "days")}, when corrections end: ${held.join(", ")}.`);
   }
   if (salt) {
-    const gain = `Dosing leaves salt behind: salinity ${salt.salinityGainPerMonth < 0 ? "falls" : "rises"} by ${rounded(Math.abs(salt.salinityGainPerMonth), 2)} a month.`;
+    const change = rounded(Math.abs(salt.salinityGainPerMonth), 2);
+    const gain =
+      salt.salinityGainPerMonth < 0
+        ? `With this dosing and exchange, salinity falls by ${change} a month.`
+        : `Dosing leaves salt behind: salinity rises by ${change} a month.`;
     const swap =
       salt.freshWaterSwapLPerWeek > 0.05
         ? ` Taking out ${figure(salt.freshWaterSwapLPerWeek, "L")} a week and filling with fresh water holds it.`

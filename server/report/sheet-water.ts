@@ -4,7 +4,7 @@ import { writeClock } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
 import { bandFigure, changeFigure, edgeFigure, figure, valueBeside } from "../checks/figures.ts";
 import { dayText } from "../checks/words.ts";
-import { plainUnit } from "../culture/binder.ts";
+import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { ReadValue } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
@@ -38,7 +38,7 @@ export function waterSection(assessment: Assessment): Section {
     const hold = factAt(constants.facts.holds.get(name), at)?.value;
     const latest = latestOf(assessment, name);
     if (!hold && !latest) return [];
-    const unit = hold?.unit ?? latest?.reading?.unit ?? plainUnit(name);
+    const unit = shownIn(constants.facts, name, at, latest?.reading);
     // The unit stands beside the value: a column of it again would make the table too wide.
     const bare = { ...unit, spelling: "" };
     const scale =
@@ -109,8 +109,7 @@ export function uptakeSection(assessment: Assessment): Section {
     return section(title, { lines: ["Not known: neither `uptake` nor a `cohort` is written down."] });
   }
   const litres = volume.litres;
-  const unit = (name: ParameterName) =>
-    factAt(constants.facts.holds.get(name), at)?.value.unit ?? plainUnit(name);
+  const unit = (name: ParameterName) => shownIn(constants.facts, name, at);
   const taken = (["alkalinity", "calcium", "magnesium", "potassium", "strontium"] as const).flatMap(
     (name) => {
       const perDay = uptake.perDay[name];

@@ -172,7 +172,6 @@ log vat
 system vat
   tank main 500 L
   hold calcium 410 to 440 mg/L
-  ^^^^^^^^^^^^^^^^^^^^^^^^^^^^ warning plan/held-back Calcium isn't corrected: salinity is what puts it off. Until then it stays away from its aim. Mend salinity first.
   hold salinity 34 to 36
   uptake calcium 0 mg/L/day
   by-hand part
