@@ -19,12 +19,10 @@ const sourceOf = (by: string): string => {
 };
 
 /** Nothing at all is corrected for this, where a limit only slows it down. */
-const isWithheld = (by: string): boolean =>
-  by === "no recent reading" || by === "salinity" || /^(magnesium under|calcium over) /.test(by);
+const isWithheld = (by: string): boolean => /^(magnesium under|calcium over) /.test(by);
 
 /** What stands in the way, in words. */
 function reason(by: string): string {
-  if (by === "no recent reading") return "there is no recent reading of it";
   if (/^(magnesium under|calcium over) /.test(by)) return by.replace(/^(magnesium|calcium)/, "$1 is");
   if (by === "sea water") return "more of it at once would be no sea water any more";
   if (by.startsWith("Ω")) return `one dose may bring Ω of aragonite to ${by.slice(2)} at most`;
@@ -40,9 +38,7 @@ const limitIn = (by: string): string | null => {
   return limit !== undefined && isParameter(parameter ?? "") ? limit : null;
 };
 
-function heldBackTodo({ by, parameter }: Obstacle): string {
-  if (by === "no recent reading") return `Test ${parameter}.`;
-  if (by === "salinity") return "Mend salinity first.";
+function heldBackTodo({ by }: Obstacle): string {
   const first = /^(magnesium under|calcium over) /.exec(by);
   if (first) return by.startsWith("magnesium") ? "Raise magnesium first." : "Let calcium come down first.";
   if (by.endsWith(" hours")) return "Give the pump more hours or a faster head, or make a stronger solution.";

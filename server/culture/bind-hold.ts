@@ -5,6 +5,7 @@ import { asDifference, asRate, asValue, readConcentration } from "../quantity/co
 import { amountOf, displayUnit, type Line, parameterNamed, placeOf, type ReferenceWater } from "./binder.ts";
 import { enter, type FactOf, type FactsDraft, into } from "./facts-draft.ts";
 import type { Hold } from "./model.ts";
+import { isPossible } from "./readings.ts";
 
 export function bindHold(draft: FactsDraft, line: Line, fact: FactOf<"hold">, water: ReferenceWater): void {
   const parameter = parameterNamed(line, fact.parameter);
@@ -15,6 +16,8 @@ export function bindHold(draft: FactsDraft, line: Line, fact: FactOf<"hold">, wa
   const high = value(fact.high);
   const aim = fact.aim ? value(fact.aim) : null;
   if (!low || !high || (fact.aim && !aim)) return;
+  for (const [quantity, { value }] of [[fact.low, low] as const, [fact.high, high] as const])
+    if (!isPossible(line, quantity, quantity, parameter, value, water)) return;
   const unit = displayUnit(fact.low, parameter, water);
   const shared = { system: line.system, parameter: parameter.name, low: low.value, high: high.value, unit };
   if (low.value >= high.value) {
@@ -54,6 +57,8 @@ export function bindLimit(draft: FactsDraft, line: Line, fact: FactOf<"limit">, 
     water,
   );
   if (!read) return;
+  const isLevel = mannerOf[fact.which] === asValue;
+  if (isLevel && !isPossible(line, fact.value, fact.value, parameter, read.value, water)) return;
   const scale = read.amount.sort === "pH" ? read.amount.scale : null;
   const key = `${parameter.name} ${fact.which}`;
   enter(

@@ -14,7 +14,6 @@ import { measuredUnit } from "../quantity/dimension.ts";
 import {
   amountOf,
   defaultWater,
-  displayUnit,
   type Line,
   named,
   parameterNamed,
@@ -27,7 +26,7 @@ import { enter } from "./facts-draft.ts";
 import { addEntry, type Entry } from "./history.ts";
 import type { Kit, SaltWater } from "./model.ts";
 import type { Declaration } from "./names.ts";
-import { tenthOf } from "./readings.ts";
+import { isPossible } from "./readings.ts";
 import { reagentNamed } from "./reagent.ts";
 
 interface FactOf<F> {
@@ -97,21 +96,10 @@ function writtenValue(
   const read =
     parameter && amountOf(line, quantity, parameter, readConcentration(quantity, parameter, asValue), water);
   if (!parameter || !read) return null;
-  const { possible } = parameter;
-  if (!possible || (read.value >= possible[0] && read.value <= possible[1]))
-    return { parameter: parameter.name, value: read.value };
-  line.report({
-    code: "reading/impossible",
-    place: placeOf(line, { start: word.start, end: quantity.end }),
-    system: line.system,
-    parameter: parameter.name,
-    value: read.value,
-    written: quantity.number.text,
-    unit: displayUnit(quantity, parameter, water),
-    range: possible,
-    tenth: tenthOf(quantity, parameter, water),
-  });
-  return null;
+  const span = { start: word.start, end: quantity.end };
+  return isPossible(line, quantity, span, parameter, read.value, water)
+    ? { parameter: parameter.name, value: read.value }
+    : null;
 }
 
 /** A printed tolerance is two standard deviations. */

@@ -19,9 +19,16 @@ export interface RecipeSection {
   readonly header: Line;
   readonly from: number | null;
   readonly lines: readonly { readonly line: Line; readonly fact: Fact }[];
+  /** A line of it can't be read. */
+  readonly hasUnreadLine: boolean;
 }
 
 interface Recipe {
+  /**
+   * All its lines could be read and bound. Else its strength is unknown: with an ingredient left out it would
+   * pass for weaker than it is, and be overdosed.
+   */
+  isWhole: boolean;
   readonly from: number;
   readonly header: Line;
   readonly dissolved: Map<
@@ -70,6 +77,7 @@ function readRecipe(
   reagentFacts: (declaration: Declaration) => readonly { line: Line; fact: ReagentFact }[],
 ): Recipe {
   const recipe: Recipe = {
+    isWhole: !section.hasUnreadLine,
     from: section.from ?? Number.NEGATIVE_INFINITY,
     header: section.header,
     dissolved: new Map(),
@@ -84,7 +92,10 @@ function readRecipe(
       case "dissolve": {
         const reagent = reagentNamed(line, solutionFact.reagent, reagentFacts);
         const grams = positive(line, solutionFact.mass, "mass");
-        if (!reagent || grams === null) break;
+        if (!reagent || grams === null) {
+          recipe.isWhole = false;
+          break;
+        }
         const history = recipe.dissolved.get(solutionFact.reagent.text) ?? [];
         recipe.dissolved.set(solutionFact.reagent.text, history);
         enter(line, history, solutionFact, { reagent, grams }, `dissolve ${solutionFact.reagent.text}`);
@@ -93,11 +104,13 @@ function readRecipe(
       case "saturated": {
         const reagent = reagentNamed(line, solutionFact.reagent, reagentFacts);
         if (reagent) enter(line, recipe.saturated, solutionFact, reagent, "saturated");
+        else recipe.isWhole = false;
         break;
       }
       case "make-up": {
         const litres = aboveZero(line, solutionFact.volume, "volume");
         if (litres !== null) enter(line, recipe.makeUpL, solutionFact, litres, "make up to");
+        else recipe.isWhole = false;
         break;
       }
       case "keep": {
@@ -106,7 +119,7 @@ function readRecipe(
         break;
       }
       case "supplies":
-        readSupplied(line, solutionFact, recipe);
+        if (!readSupplied(line, solutionFact, recipe)) recipe.isWhole = false;
         break;
       case "acknowledge":
         break;
@@ -116,12 +129,17 @@ function readRecipe(
   return recipe;
 }
 
-function readSupplied(line: Line, fact: Extract<SolutionFact, { kind: "supplies" }>, recipe: Recipe): void {
+function readSupplied(
+  line: Line,
+  fact: Extract<SolutionFact, { kind: "supplies" }>,
+  recipe: Recipe,
+): boolean {
   const dissolves = (row: Parameter) => row.measure === "alkalinity" || row.measure === "dissolved";
   const parameter = parameterNamed(line, fact.parameter, dissolves);
-  if (!parameter) return;
-  const read = amountOf(line, fact.strength, parameter, readStrength(fact.strength, parameter), defaultWater);
-  if (!read) return;
+  const read =
+    parameter &&
+    amountOf(line, fact.strength, parameter, readStrength(fact.strength, parameter), defaultWater);
+  if (!parameter || !read || read.value < 0) return false;
   const history = recipe.supplied.get(parameter.name) ?? [];
   recipe.supplied.set(parameter.name, history);
   const millilitresPerL = 1000;
@@ -132,6 +150,7 @@ function readSupplied(line: Line, fact: Extract<SolutionFact, { kind: "supplies"
     { parameter, perMl: read.value / millilitresPerL, as: fact.as },
     `supplies ${parameter.name}`,
   );
+  return true;
 }
 
 /** A recipe that names nothing, or no volume to make up to, has no strength. */
@@ -196,6 +215,11 @@ function strengthAt(
   name: string,
   assumptions: Assumption[],
 ): Strength | null {
+  if (!recipe.isWhole) {
+    const basis = "a line of its recipe can't be read";
+    assumptions.push({ what: `strength of ${name}`, value: "unknown", basis });
+    return null;
+  }
   const supplied = inForce(recipe.supplied, minute);
   if (supplied.length > 0) return suppliedStrength(supplied, name, assumptions);
   const parts = inForce(recipe.dissolved, minute);

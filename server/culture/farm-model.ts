@@ -150,8 +150,11 @@ const titleOf = (house: House, declaration: Declaration): string | null => {
 
 function solutionOf(house: House, declaration: Declaration): Solution {
   const sections = declaration.sections.map(({ file, section, from }): RecipeSection => {
-    const headerLine = house.files.get(file)?.sections[section]?.headerLine ?? 0;
+    const document = house.files.get(file);
+    const { headerLine = 0, lastLine = -1 } = document?.sections[section] ?? {};
+    const lines = document?.lines.slice(headerLine, lastLine + 1) ?? [];
     return {
+      hasUnreadLine: lines.some(({ statement, findings }) => !statement && findings.length > 0),
       header: lineOf(house.binder(file, null), headerLine),
       from,
       lines: factLines(house, file, section, null),

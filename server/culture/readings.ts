@@ -3,7 +3,7 @@
  * temperature and calcium belong to a moment.
  */
 import { type Parameter, type ParameterName, parameterOf } from "../../grammar/parameters.ts";
-import type { QuantityText, ReadItem } from "../../grammar/syntax.ts";
+import type { QuantityText, ReadItem, Span } from "../../grammar/syntax.ts";
 import { asValue, readConcentration } from "../quantity/concentration.ts";
 import type { PendingRead, PendingValue } from "./bind-events.ts";
 import {
@@ -195,8 +195,33 @@ function convertValue(
   return { place, value, below: pending.below, impossible, scale, unit };
 }
 
+/** Says so where sea water can't have a value; false then. */
+export function isPossible(
+  line: Line,
+  quantity: QuantityText,
+  span: Span,
+  parameter: Parameter,
+  value: number,
+  water: ReferenceWater,
+): boolean {
+  const { possible } = parameter;
+  if (!possible || (value >= possible[0] && value <= possible[1])) return true;
+  line.report({
+    code: "reading/impossible",
+    place: placeOf(line, span),
+    system: line.system,
+    parameter: parameter.name,
+    value,
+    written: quantity.number.text,
+    unit: displayUnit(quantity, parameter, water),
+    range: possible,
+    tenth: tenthOf(quantity, parameter, water),
+  });
+  return false;
+}
+
 /** The same digits with the point one place to the left, where that would be usual. */
-export function tenthOf(quantity: QuantityText, parameter: Parameter, water: ReferenceWater): string | null {
+function tenthOf(quantity: QuantityText, parameter: Parameter, water: ReferenceWater): string | null {
   const { usual } = parameter;
   const [whole = "0", decimals = ""] = quantity.number.text.split(".");
   if (!usual || whole.startsWith("-")) return null;

@@ -2,7 +2,7 @@
 import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Hold, System } from "../culture/model.ts";
-import { assuming } from "./assumptions.ts";
+import { assumeDensity, assuming } from "./assumptions.ts";
 import { type ReadingWithCarbonate, readingsUpTo } from "./carbonate-of-reading.ts";
 import { constantsOf, type SystemConstants } from "./constants.ts";
 import type { DosingFinding } from "./finding.ts";
@@ -26,7 +26,7 @@ import { dosed, type Tracked, tracked } from "./tracked.ts";
 import { type Uptake, uptakeAt } from "./uptake.ts";
 import { type Volume, volumeAt } from "./volume.ts";
 import { waterFindings } from "./water-findings.ts";
-import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+import { carriedMinutes, isStale, minutesPerDay, type WaterState } from "./water-state.ts";
 
 export interface Assessment {
   readonly system: System;
@@ -92,7 +92,7 @@ function assessFolded(
   const solved = makePlan(situation);
   const plan = solved && solved.sources.length > 0 ? solved : null;
   if (solved) findings.push(...planFindings(situation, system, solved));
-  listAssumptions(situation, model);
+  listAssumptions(situation, model, system);
   const projections = projectCases(situation, plan);
   const drifts = driftsOf(situation, projections);
   findings.push(...waterFindings({ ...shared, staleParameters, drifts, plan, uptake }));
@@ -122,7 +122,12 @@ function valuesAfter(projection: Projection, days: number): Partial<Record<Track
 }
 
 /** What the results rest on beside the defaults that were used on the way. */
-function listAssumptions({ constants, state, uptake, assumed }: Situation, model: FarmModel): void {
+function listAssumptions(
+  { constants, state, uptake, assumed }: Situation,
+  model: FarmModel,
+  system: System,
+): void {
+  assumeDensity(system, state.minute, assumed);
   if (uptake.basis !== "none" || tracked.some((name) => state.carried[name])) {
     assumed.add({
       what: "the day's course",
@@ -146,14 +151,25 @@ function listAssumptions({ constants, state, uptake, assumed }: Situation, model
       basis: "not stated",
     });
   }
+  const addWater = (water: string, minute: number) => {
+    for (const assumption of constants.waterAt(water, minute).assumptions) assumed.add(assumption);
+  };
+  const addSolution = (solution: string) => {
+    for (const assumption of model.solutions.get(solution)?.assumptions ?? []) assumed.add(assumption);
+  };
   const through = factAt(constants.facts.flowsThrough, state.minute)?.value;
-  if (through)
-    for (const assumption of constants.waterAt(through.water, state.minute).assumptions)
-      assumed.add(assumption);
+  if (through) addWater(through.water, state.minute);
+  if (topOff?.solution) addSolution(topOff.solution);
   for (const history of constants.facts.sources.values()) {
     const source = factAt(history, state.minute)?.value;
-    for (const assumption of (source && model.solutions.get(source.solution)?.assumptions) ?? [])
-      assumed.add(assumption);
+    if (source) addSolution(source.solution);
+  }
+  // What was given or exchanged while the values carried now were on their way.
+  for (const event of system.events) {
+    if (event.minute > state.minute || event.minute < state.minute - carriedMinutes) continue;
+    if (event.kind === "renewed") addWater(event.water, event.minute);
+    if (event.kind === "topped" && event.solution) addSolution(event.solution);
+    if (event.kind === "gave") for (const { solution } of event.doses) addSolution(solution);
   }
 }
 

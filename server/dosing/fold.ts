@@ -8,9 +8,9 @@ import { uptakeAt } from "./uptake.ts";
 import { volumeAt } from "./volume.ts";
 import { type Carried, carriedMinutes, minutesPerDay, startState, type WaterState } from "./water-state.ts";
 
-/** A dose of the log with the water just before it. */
+/** A dose of the log, or a change of what pumps give, with the water before and after it. */
 export interface DoseInLog {
-  readonly event: Extract<SystemEvent, { kind: "gave" | "set" | "topped" }>;
+  readonly event: Extract<SystemEvent, { kind: "gave" | "topped" | "set" | "started" }>;
   readonly before: WaterState;
   readonly after: WaterState;
 }
@@ -28,7 +28,7 @@ export function foldEvents(constants: SystemConstants, events: readonly SystemEv
     if (event.minute > at) break;
     const before = carryTo(state, event.minute, constants);
     state = happen(before, event, constants);
-    if (event.kind === "gave" || event.kind === "set" || event.kind === "topped")
+    if (event.kind === "gave" || event.kind === "topped" || event.kind === "set" || event.kind === "started")
       doses.push({ event, before, after: state });
   }
   return { state: carryTo(state, at, constants), doses };

@@ -11,7 +11,6 @@ import type { DoseInLog } from "./fold.ts";
 import { ratesAsSet } from "./fold.ts";
 import { limitAt } from "./limits.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
-import { uptakeAt } from "./uptake.ts";
 import { volumeAt } from "./volume.ts";
 import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
 
@@ -35,7 +34,7 @@ export function checkDoses(
   const findings: DosingFinding[] = [];
   const lastDay: Given[] = [];
   for (const { event, before, after } of doses) {
-    if (event.kind === "set") {
+    if (event.kind === "set" || event.kind === "started") {
       findings.push(...checkSet(system, constants, event, after));
       continue;
     }
@@ -129,7 +128,11 @@ function checkGiven(
 /** A limit counts as broken from here on: a dose planned to the limit and rounded to a millilitre breaks none. */
 const tolerance = 1.005;
 
-/** The change of the day's mean that the doses of the last day make together; null where uptake isn't known. */
+/**
+ * The change of the day's mean that the doses of the last day make together. Where uptake isn't known, null for
+ * alkalinity, of which corals may take as much in a day; of the rest they take so little beside the limit on a
+ * rise that the doses alone tell.
+ */
 function risePerDay(
   constants: SystemConstants,
   state: WaterState,
@@ -139,10 +142,9 @@ function risePerDay(
   const rates = ratesAsSet(state, state.minute, constants);
   const gain = rates?.gainPerDay[name];
   const litres = volumeAt(constants.facts, state.minute).litres;
-  if (gain === null || gain === undefined || litres === null) return null;
-  const uptake = uptakeAt(constants.facts, state, state.minute, litres, constants.firstEvent);
-  if (uptake.perDay[name] === null) return null;
-  return gain + lastDay.reduce((sum, given) => sum + raised(state, constants, given, name), 0);
+  if (!rates || gain === undefined || litres === null || (gain === null && name === "alkalinity"))
+    return null;
+  return (gain ?? 0) + lastDay.reduce((sum, given) => sum + raised(state, constants, given, name), 0);
 }
 
 /** pH and Ω right after the dose, carbon closed. */
@@ -205,9 +207,10 @@ function checkPeak(
 function checkSet(
   system: string,
   constants: SystemConstants,
-  event: Extract<SystemEvent, { kind: "set" }>,
+  event: Extract<SystemEvent, { kind: "set" | "started" }>,
   state: WaterState,
 ): DosingFinding[] {
+  const turnedOn = event.kind === "set" ? event.rates : [{ source: event.pump, place: event.place }];
   const rates = ratesAsSet(state, state.minute, constants);
   if (!rates) return [];
   const findings: DosingFinding[] = [];
@@ -215,7 +218,7 @@ function checkSet(
     const gain = rates.gainPerDay[name];
     const limit = limitAt(constants.facts, name, "rise", "pump", event.minute, null);
     if (gain === null || !limit || gain <= limit.value * tolerance) continue;
-    const serving = event.rates.find(({ source }) => {
+    const serving = turnedOn.find(({ source }) => {
       const entry = factAt(constants.facts.sources.get(source), event.minute);
       const strength = entry && constants.strengthAt(entry.value.solution, event.minute);
       return strength && (broughtPerLitre(strength, name) ?? 0) > 0;

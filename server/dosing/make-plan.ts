@@ -56,11 +56,17 @@ export function makePlan(situation: Situation): Plan | null {
   const sources = sourcesInPlan(situation);
   const problem: PlanProblem = {
     volumeL: situation.litres,
+    exchangePerDay: exchangePerDay(situation),
     parameters: holds.map((hold) => planParameter(situation, hold)),
     sources: sources.map((entry) => planSource(situation, entry)),
   };
   const answer = solvePlan(problem);
   return { problem, answer, sources, peak: peakOf(situation, sources, answer) };
+}
+
+function exchangePerDay({ constants, state, litres }: Situation): number {
+  const through = factAt(constants.facts.flowsThrough, state.minute)?.value;
+  return through ? through.litresPerDay / litres : 0;
 }
 
 function sourcesInPlan({ constants, state }: Situation): SourceInPlan[] {

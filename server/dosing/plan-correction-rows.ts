@@ -7,6 +7,10 @@ import type { LinearRow } from "./plan-simplex.ts";
 /** A correction to be planned. */
 export interface Task {
   readonly parameter: number;
+  /** How far it stands below, and what comes in a day beyond the need. */
+  readonly open: number;
+  readonly surplus: number;
+  /** What doses bring of that at the wished rate. */
   readonly amount: number;
   readonly wishedPerDay: number;
   /** Indices of the sources that may serve it. */

@@ -10,7 +10,7 @@ import {
   type Maintenance,
   type WaterState,
 } from "./plan-maintenance.ts";
-import { type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
+import { daysToClose, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
 import { lexicographicMinimum } from "./plan-simplex.ts";
 
 export interface Correction {
@@ -39,14 +39,19 @@ export function corrections(numbers: PlanNumbers, cuts: CutPlan): Correction[] {
         (j) =>
           numbers.raises[parameter]![j] && !ledger.serving[j] && forbiddenBy(numbers, states, j) === null,
       );
-    const amount = openAmount(numbers, ledger, parameter);
+    const open = openAmount(numbers, ledger, parameter);
+    const surplus = ledger.surplus[parameter]!;
     const correction = correct(numbers, ledger, states, current, {
       parameter,
-      amount,
+      open,
+      surplus,
+      amount: wished * daysToClose(numbers, open, wished + surplus),
       wishedPerDay: wished,
       candidates,
     });
     enter(numbers, ledger, correction);
+    // The part that closes by itself isn't open for what lighter corrections bring beside.
+    if (correction.perDay > 0) ledger.broughtUp[parameter]! += open - correction.amount;
     return [correction];
   });
 }
@@ -58,7 +63,7 @@ function correct(
   current: Maintenance,
   task: Task,
 ): Correction {
-  const { parameter, amount, candidates } = task;
+  const { parameter, open, surplus, candidates } = task;
   const free = [...ledger.freeLitres];
   const freeBy = [...numbers.ceilingBy];
   let solved = solve(numbers, ledger, task, free, freeBy);
@@ -75,12 +80,13 @@ function correct(
   const reached = supplyOf(numbers, parameter, solved.litres);
   const none = reached <= 1e-6 * task.wishedPerDay;
   const slowed = reached < task.wishedPerDay * (1 - rounding);
+  const days = none ? 0 : daysToClose(numbers, open, reached + surplus);
   return {
     parameter,
-    amount,
+    amount: none ? open : reached * days,
     wishedPerDay: task.wishedPerDay,
     perDay: none ? 0 : reached,
-    days: none ? 0 : amount / reached,
+    days,
     limitedBy: slowed ? whatHolds(numbers, ledger, states, task, solved) : null,
     litres: none ? solved.litres.map(() => 0) : solved.litres,
   };

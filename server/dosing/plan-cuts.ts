@@ -1,6 +1,14 @@
 /** The way down from above the aim: how much lower maintenance runs, how long, and maintenance at each stage of it. */
 import { type Maintenance, maintenance, type WaterState } from "./plan-maintenance.ts";
-import { atMax, negligible, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
+import {
+  atMax,
+  daysToClose,
+  leftAfter,
+  negligible,
+  type PlanNumbers,
+  rounding,
+  supplyOf,
+} from "./plan-numbers.ts";
 
 /** Parameters (by index) whose cut still runs. */
 export type Running = ReadonlySet<number>;
@@ -70,14 +78,16 @@ export function cutStages(
     const { fromDays, running } = stages.at(-1)!;
     const { litres } = plan.during(running);
     const rates = new Map([...running].map((p) => [p, fallRate(numbers, p, litres)] as const));
-    const durations = [...running].flatMap((p) => (rates.get(p)! > 0 ? [left.get(p)! / rates.get(p)!] : []));
+    const durations = [...running].flatMap((p) =>
+      rates.get(p)! > 0 ? [daysToClose(numbers, left.get(p)!, rates.get(p)!)] : [],
+    );
     const step = Math.min(...durations);
     if (!Number.isFinite(fromDays + step)) return { stages, endDays };
     const still = new Set<number>();
     for (const p of running) {
       const rate = rates.get(p)!;
-      const ends = rate > 0 && left.get(p)! / rate <= step * (1 + rounding);
-      left.set(p, left.get(p)! - rate * step);
+      const ends = rate > 0 && daysToClose(numbers, left.get(p)!, rate) <= step * (1 + rounding);
+      left.set(p, leftAfter(numbers, left.get(p)!, rate, step));
       if (ends) endDays.set(p, fromDays + step);
       else still.add(p);
     }

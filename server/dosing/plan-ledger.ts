@@ -1,7 +1,7 @@
 /** What the corrections planned so far leave free: litres, room under the limits, distances to the aims. */
 import { type CutPlan, subsetsOf, wishedRate } from "./plan-cuts.ts";
 import { type Room, roomBeside } from "./plan-limits.ts";
-import { negligible, type PlanNumbers, supplyOf } from "./plan-numbers.ts";
+import { negligible, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
 
 export interface Ledger {
   /** Litres a day free at every stage of the cuts. */
@@ -9,6 +9,8 @@ export interface Ledger {
   readonly rooms: Room[];
   /** What each parameter rises a day at most without corrections, ≥ 0. */
   readonly rising: readonly number[];
+  /** What comes in a day beyond the need though it isn't dosed for, ≥ 0: it does a part of the correction by itself. */
+  readonly surplus: readonly number[];
   /** In all, by parameter; what raises and what lowers kept apart, as they may end on different days. */
   readonly broughtUp: number[];
   readonly broughtDown: number[];
@@ -40,11 +42,21 @@ export function openLedger(numbers: PlanNumbers, cuts: CutPlan): Ledger {
   return {
     freeLitres: numbers.ceilingL.map((most, j) => most - Math.max(...stages.map(({ litres }) => litres[j]!))),
     rooms,
+    surplus: surplusOf(numbers, cuts),
     rising: anyway.map((changes) => Math.max(0, ...changes)),
     broughtUp: numbers.parameters.map(() => 0),
     broughtDown: numbers.parameters.map(() => 0),
     serving: numbers.sources.map(() => false),
   };
+}
+
+/** What maintenance can't help bringing, once all cuts are over. */
+function surplusOf(numbers: PlanNumbers, cuts: CutPlan): number[] {
+  const { litres } = cuts.during(new Set());
+  return numbers.parameters.map(({ needPerDay }, p) => {
+    const beyond = needPerDay === null ? 0 : supplyOf(numbers, p, litres) - needPerDay;
+    return beyond > rounding * numbers.dayScale[p]! ? beyond : 0;
+  });
 }
 
 export function enter(
@@ -79,11 +91,12 @@ export function openAmount(numbers: PlanNumbers, ledger: Ledger, p: number): num
   return reach - now - ledger.broughtUp[p]! - ledger.broughtDown[p]!;
 }
 
-/** The rate that a correction should have; 0 where none should be planned. */
+/** The rate that a correction should have beside what comes in anyway; 0 where none should be planned. */
 export function wishedPerDay(numbers: PlanNumbers, ledger: Ledger, p: number): number {
   const { aim, now, low, heldBack } = numbers.parameters[p]!;
   const amount = openAmount(numbers, ledger, p);
   const possible = now !== null && heldBack === null && numbers.raises[p]!.includes(true);
   if (!possible || amount <= negligible(numbers, p)) return 0;
-  return Math.min(wishedRate(aim - now, low - now), amount / shortestDays);
+  const whole = Math.min(wishedRate(aim - now, low - now), amount / shortestDays);
+  return Math.max(0, whole - ledger.surplus[p]!);
 }

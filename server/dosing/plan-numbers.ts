@@ -2,6 +2,7 @@
 import type { PlanParameter, PlanProblem, PlanSource } from "./plan-problem.ts";
 
 export interface PlanNumbers {
+  readonly exchangePerDay: number;
   /** As given, with what isn't a finite number taken out. */
   readonly parameters: readonly PlanParameter[];
   readonly sources: readonly PlanSource[];
@@ -54,6 +55,7 @@ export function planNumbers(problem: PlanProblem): PlanNumbers {
   const ceilings = sources.map(ceiling);
   const always = (j: number): number => (sources[j]!.alwaysLPerDay > 0 ? 1 : 0);
   return {
+    exchangePerDay: positive(problem.exchangePerDay),
     parameters,
     sources,
     effect,
@@ -64,6 +66,24 @@ export function planNumbers(problem: PlanProblem): PlanNumbers {
     litreScale: mainEffect.map((most) => (most > 0 ? 1 / most : 1)),
     preference: sources.map((_, j) => j).sort((a, b) => always(a) - always(b) || a - b),
   };
+}
+
+/**
+ * Days in which a distance closes at a steady rate while exchange takes its share of what is left:
+ * D' = −rate − exchange × D.
+ */
+export const daysToClose = ({ exchangePerDay: k }: PlanNumbers, distance: number, perDay: number): number =>
+  k > 0 ? Math.log1p((k * distance) / perDay) / k : distance / perDay;
+
+/** What is left of a distance after some days of the same. */
+export function leftAfter(
+  { exchangePerDay: k }: PlanNumbers,
+  distance: number,
+  perDay: number,
+  days: number,
+): number {
+  if (!(k > 0)) return distance - perDay * days;
+  return distance * Math.exp(-k * days) + (perDay * Math.expm1(-k * days)) / k;
 }
 
 /** What all sources together bring of a parameter a day. */

@@ -48,6 +48,8 @@ export interface PlanSource {
 
 export interface PlanProblem {
   readonly volumeL: number;
+  /** The share of the water that flows through a day: distances to the aim shrink by it, beside what is dosed. */
+  readonly exchangePerDay: number;
   readonly parameters: readonly PlanParameter[];
   readonly sources: readonly PlanSource[];
 }

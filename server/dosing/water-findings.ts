@@ -1,5 +1,6 @@
 /** What is wrong with the water now, and what soon will be. */
 
+import { parameterTable } from "../../grammar/parameters.ts";
 import { pco2OfAir } from "../chemistry/carbon-before.ts";
 import { fromAlkalinityAndPco2 } from "../chemistry/carbonate-system.ts";
 import { constantsAt } from "../chemistry/constants-at.ts";
@@ -16,7 +17,7 @@ import type { Plan } from "./make-plan.ts";
 import type { Drift } from "./projection.ts";
 import { flowsSet, topOffFlow } from "./rates.ts";
 import { judgeSalinity } from "./salinity-cause.ts";
-import { broughtPerLitre, dosed, isTracked, type Tracked, tracked } from "./tracked.ts";
+import { broughtPerLitre, dosed, isTracked, type Tracked } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
 import { carriedMinutes, isStale, minutesPerDay, type WaterState } from "./water-state.ts";
 
@@ -47,11 +48,12 @@ export function waterFindings(seen: WaterSeen): DosingFinding[] {
 const holdOf = ({ constants, at }: WaterSeen, name: Hold["parameter"]) =>
   factAt(constants.facts.holds.get(name), at);
 
-/** The value now of what isn't stale: carried for what is dosed, as last read for temperature and pH. */
+/** The value now of what isn't stale: carried for what is dosed, as last read for the rest. */
 function valueNow(
-  { state, at }: WaterSeen,
+  seen: WaterSeen,
   name: Hold["parameter"],
 ): { readonly value: number; readonly reading: ReadValue } | null {
+  const { state, at } = seen;
   if (isTracked(name)) {
     const carried = state.carried[name];
     return carried && !isStale(carried, at) ? carried : null;
@@ -60,14 +62,14 @@ function valueNow(
     const { pH } = state;
     return pH && at - pH.minute <= carriedMinutes ? { value: pH.reading.value, reading: pH.reading } : null;
   }
-  return null;
+  return lastRead(seen, name);
 }
 
 /** Where to point: at the reading that shows it, else at the hold that the carried value has left. */
 function outsideHold(seen: WaterSeen): DosingFinding[] {
   return [...seen.constants.facts.holds.keys()].flatMap((parameter): DosingFinding[] => {
     const hold = holdOf(seen, parameter);
-    const now = parameter === "temperature" ? lastRead(seen, parameter) : valueNow(seen, parameter);
+    const now = valueNow(seen, parameter);
     if (!hold || !now) return [];
     const { low, high, scale, unit } = hold.value;
     const on = (value: number) => sameScale(seen, value, now.reading.scale, scale);
@@ -92,7 +94,7 @@ function outsideHold(seen: WaterSeen): DosingFinding[] {
   });
 }
 
-function lastRead({ readings, at }: WaterSeen, parameter: "temperature") {
+function lastRead({ readings, at }: WaterSeen, parameter: Hold["parameter"]) {
   const found = readings.findLast(({ event }) => {
     const value = event.values[parameter];
     return value && !event.disregarded && !value.impossible && !value.below;
@@ -117,7 +119,7 @@ function sameScale(
 }
 
 function beyondLimit(seen: WaterSeen): DosingFinding[] {
-  return [...tracked, "pH" as const].flatMap((parameter) =>
+  return parameterTable.flatMap(({ name: parameter }) =>
     (["max", "min"] as const).flatMap((which): DosingFinding[] => {
       const now = valueNow(seen, parameter);
       const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);

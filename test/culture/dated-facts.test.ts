@@ -116,6 +116,26 @@ system vat
   });
 });
 
+describe("what sea water can't have", () => {
+  it("is neither held nor a limit", () => {
+    const bound = farm(`
+system vat
+  tank main 500 L
+  hold alkalinity 79 to 84 dKH
+                  ^^ reading/impossible, parameter alkalinity, value 28.176, tenth 7.9
+  hold salinity 34 to 350
+                      ^^^ reading/impossible, parameter salinity, value 350, tenth 35
+  limit alkalinity max 110 dKH
+                       ^^^^^^^ reading/impossible, parameter alkalinity, value 39.232, tenth 11
+  limit calcium rise 2000 mg/L/day
+  limit pH max 8.6
+`);
+    const { holds, limits } = systemIn(bound).facts;
+    expect([...holds.values()].flat()).toEqual([]);
+    expect([...limits.keys()]).toEqual(["calcium rise", "pH max"]);
+  });
+});
+
 describe("a band", () => {
   it("aims at its middle, in the parameter's own unit", () => {
     const bound = farm(`

@@ -6,6 +6,7 @@ import { type BoundFarm, bindFarm } from "../../server/culture/farm-model.ts";
 import type { CultureFinding } from "../../server/culture/finding.ts";
 import { factAt, type History } from "../../server/culture/history.ts";
 import type { Solution, Strength, System } from "../../server/culture/model.ts";
+import { comparePlaces } from "../../server/culture/place.ts";
 
 /** Texts by file; what stands before the first `--- NAME` is `farm.marl`. */
 export function filesOf(text: string): Map<string, string> {
@@ -32,7 +33,10 @@ export function minute(text: string): number {
 /** A finding in one line: its code and what it is about. */
 function inWords(finding: CultureFinding): string {
   const about = Object.entries(finding).flatMap(([key, value]) => {
-    if (["code", "place", "system", "unit", "range", "expected", "examples", "first"].includes(key)) return [];
+    if (
+      ["code", "place", "system", "unit", "range", "expected", "examples", "first", "written"].includes(key)
+    )
+      return [];
     if (value === null || value === "") return [];
     if (Array.isArray(value)) return value.length === 0 ? [] : `${key} ${value.slice(0, 4).join(" ")}`;
     return `${key} ${typeof value === "number" ? Number(value.toPrecision(5)) : value}`;
@@ -48,11 +52,12 @@ function drawn(files: ReadonlyMap<string, string>, findings: readonly CultureFin
     const lines = text.split("\n").flatMap((line, number) => {
       const here = findings
         .filter(({ place }) => place.file === file && place.line === number)
+        .sort((left, right) => comparePlaces(left.place, right.place))
         .map((finding) => {
           const span = finding.place.span ?? { start: line.search(/\S/), end: line.trimEnd().length };
           return `${" ".repeat(span.start)}${"^".repeat(Math.max(1, span.end - span.start))} ${inWords(finding)}`;
         });
-      return [line, ...here.sort()];
+      return [line, ...here];
     });
     return [file, lines.join("\n")];
   };
@@ -63,7 +68,13 @@ function drawn(files: ReadonlyMap<string, string>, findings: readonly CultureFin
 export function farm(text: string): BoundFarm {
   const wished = filesOf(text);
   const files = new Map(
-    [...wished].map(([file, own]) => [file, own.split("\n").filter((line) => !isUnder(line)).join("\n")]),
+    [...wished].map(([file, own]) => [
+      file,
+      own
+        .split("\n")
+        .filter((line) => !isUnder(line))
+        .join("\n"),
+    ]),
   );
   const bound = bindFarm(new Map([...files].map(([file, own]) => [file, readDocument(own)])));
   const told = bound.findings.filter(({ code }) => code !== "name/unused");

@@ -3,7 +3,10 @@ import { describe, expect, it } from "vitest";
 import { farm, solutionIn, strength } from "./fixture.ts";
 
 const of = (lines: string, more = "") => {
-  const indented = lines.trim().split("\n").map((line) => `  ${line.trim()}`);
+  const indented = lines
+    .trim()
+    .split("\n")
+    .map((line) => `  ${line.trim()}`);
   return farm(`${more}solution part\n${indented.join("\n")}\n`);
 };
 
@@ -179,7 +182,7 @@ solution part
   supplies salinity 35
            ^^^^^^^^ syntax/unknown-word, word salinity
   supplies alkalinity 80 g/L
-                         ^^^ unit/as-caco3, written false
+                         ^^^ unit/as-caco3
   supplies calcium 72 mg
                       ^^ unit/dimension
 `);
@@ -268,7 +271,9 @@ solution part
       "  is sodium-carbonate purity 99 % from 2026-10-01",
     ];
     for (const order of [facts, [...facts].reverse()]) {
-      const bound = farm(`reagent sack\n${order.join("\n")}\n\nsolution part\n  dissolve sack 100 g\n  make up to 1 L\n`);
+      const bound = farm(
+        `reagent sack\n${order.join("\n")}\n\nsolution part\n  dissolve sack 100 g\n  make up to 1 L\n`,
+      );
       const alkalinity = (moment: string) => strength(bound, "part", moment).alkalinityMeq;
       expect(alkalinity("2026-09-30")).toBeCloseTo((2 * 90) / 105.988, 10);
       expect(alkalinity("2026-10-01")).toBeCloseTo((2 * 99) / 105.988, 10);

@@ -4,7 +4,10 @@ import { volumeAt } from "../../server/dosing/volume.ts";
 import { farm, minute, systemIn } from "./fixture.ts";
 
 function litres(facts: string, moment = "2026-12-01"): number | null {
-  const indented = facts.trim().split("\n").map((line) => `  ${line.trim()}`);
+  const indented = facts
+    .trim()
+    .split("\n")
+    .map((line) => `  ${line.trim()}`);
   const bound = farm(["system vat", ...indented, ""].join("\n"));
   return volumeAt(systemIn(bound).facts, minute(moment)).litres;
 }
@@ -59,7 +62,10 @@ describe("what takes up room", () => {
     // 60 kg at 2.4 kg/L are 25 L.
     expect(litres("tank main 500 L\ndisplace rubble 60 kg at 2.4 kg/L")).toBeCloseTo(475, 12);
     expect(litres("tank main 500 L\ndisplace rubble 60 kg at 2.4 g/mL")).toBeCloseTo(475, 12);
-    expect(litres("tank main 500 L\ndisplace rubble 100 lb at 2.5 kg/L")).toBeCloseTo(500 - 45.359237 / 2.5, 12);
+    expect(litres("tank main 500 L\ndisplace rubble 100 lb at 2.5 kg/L")).toBeCloseTo(
+      500 - 45.359237 / 2.5,
+      12,
+    );
   });
 
   it("is gone after `until`", () => {

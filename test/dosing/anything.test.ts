@@ -163,9 +163,49 @@ function check(example: Example): void {
   expect(plain(walk(example.files, example.moments))).toBe(plain(first));
 }
 
-const absurd = ["0", "-1", "-5.5", "1", "999999999999999", "0.000000000000001", "100000", "1e9", "7,9", "60", "12"];
-const words = ["dKH", "mg/L", "%", "%/week", "L", "mL/min", "meq/day", "as", "CaCO3", "from", "until", "2026-11-01"];
-const strange = ["system", "log", "x", "to", "±", "total", "SG", "degF", "each", '"', "#", "below", "pieces", "mL/L"];
+const absurd = [
+  "0",
+  "-1",
+  "-5.5",
+  "1",
+  "999999999999999",
+  "0.000000000000001",
+  "100000",
+  "1e9",
+  "7,9",
+  "60",
+  "12",
+];
+const words = [
+  "dKH",
+  "mg/L",
+  "%",
+  "%/week",
+  "L",
+  "mL/min",
+  "meq/day",
+  "as",
+  "CaCO3",
+  "from",
+  "until",
+  "2026-11-01",
+];
+const strange = [
+  "system",
+  "log",
+  "x",
+  "to",
+  "±",
+  "total",
+  "SG",
+  "degF",
+  "each",
+  '"',
+  "#",
+  "below",
+  "pieces",
+  "mL/L",
+];
 
 type Edit =
   | { readonly kind: "number" | "token"; readonly line: number; readonly word: number; readonly by: string }
@@ -178,7 +218,10 @@ type Edit =
 
 const place = { line: fc.nat(), word: fc.nat() };
 const edit: fc.Arbitrary<Edit> = fc.oneof(
-  { weight: 5, arbitrary: fc.record({ kind: fc.constant("number" as const), ...place, by: fc.constantFrom(...absurd) }) },
+  {
+    weight: 5,
+    arbitrary: fc.record({ kind: fc.constant("number" as const), ...place, by: fc.constantFrom(...absurd) }),
+  },
   {
     weight: 2,
     arbitrary: fc.record({
@@ -252,7 +295,9 @@ describe("the whole walk", () => {
   it("has nothing wrong with the examples as they stand", () => {
     for (const { files, moments } of [halls, nursery]) {
       const { bound, assessments } = walk(files, moments);
-      expect(bound.findings.filter(({ code }) => code.startsWith("syntax/") || code === "name/undeclared")).toEqual([]);
+      expect(
+        bound.findings.filter(({ code }) => code.startsWith("syntax/") || code === "name/undeclared"),
+      ).toEqual([]);
       expect(assessments.length).toBeGreaterThan(0);
       expect(assessments.some(({ plan }) => plan !== null)).toBe(true);
     }

@@ -181,6 +181,7 @@ export const randomProblem: fc.Arbitrary<PlanProblem & { exchange: boolean }> = 
   .chain(({ held, exchange, volumeL }) =>
     fc.record({
       volumeL: fc.constant(volumeL),
+      exchangePerDay: fc.constant(0),
       exchange: fc.constant(exchange),
       parameters: fc.tuple(...held.map((name) => parameterOf(name, exchange))),
       sources: fc
@@ -256,7 +257,7 @@ export const wellEquipped: fc.Arbitrary<PlanProblem> = fc
           .map((source, index) => ({ source, place: order[index]! }))
           .sort((a, b) => a.place - b.place)
           .map(({ source }) => source);
-        return { volumeL, parameters, sources };
+        return { volumeL, exchangePerDay: 0, parameters, sources };
       }),
   );
 

@@ -125,6 +125,7 @@ test("a hair in the inputs moves every rate by a hair: two sources of the same d
           ];
           return {
             volumeL: 1000 * (1 + by[5]!),
+            exchangePerDay: 0,
             parameters: [
               alkalinity({
                 needPerDay: 0.4 * need * (1 + by[6]!),

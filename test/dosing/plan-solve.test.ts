@@ -5,7 +5,7 @@ import { solvePlan } from "../../server/dosing/plan-solve.ts";
 import { alkalinity, calcium, magnesium, meqPerLPerDkh, pump, valueAt } from "./plan-fixtures.ts";
 
 const plan = (parameters: PlanProblem["parameters"], sources: PlanProblem["sources"], volumeL = 1000) => {
-  const problem = { volumeL, parameters, sources };
+  const problem = { volumeL, exchangePerDay: 0, parameters, sources };
   return { problem, ...solvePlan(problem) };
 };
 
@@ -372,4 +372,44 @@ test("a trace of alkalinity in the calcium part is no reason to give litres of i
   // 4 mg/L × 1000 L ÷ 32 mg/mL = 125 mL, not more.
   closeTo(sources[1]?.maintenanceLPerDay, 0.125);
   expect(obstacles).toMatchObject([{ parameter: "alkalinity", kind: "held-back", by: "head-1 hours" }]);
+});
+
+test("what comes in beyond the need does its part of a correction by itself", () => {
+  // Limewater in the top-off brings 1 mg/L a day more than is taken; 14 mg/L below the aim, inside the band.
+  const low = calcium({ now: 406, low: 400, high: 440, aim: 420, needPerDay: -1, passivePerDay: 1 });
+  const part = pump("head-2", { calcium: 32_000 });
+  const { corrections, sources } = plan([low], [part]);
+  // Wished 14/7 = 2 mg/L a day, of which 1 comes by itself: 1 mg/L for 7 days.
+  closeTo(corrections[0]?.perDay, 1);
+  closeTo(corrections[0]?.days, 7);
+  closeTo(corrections[0]?.amount, 7);
+  closeTo(sources[0]?.correctionLPerDay, 1 / 32);
+});
+
+test("with flow-through a correction is over sooner, since exchange closes a part of the distance", () => {
+  const exchangePerDay = 0.05;
+  // Need at the aim 4; 14 mg/L lower, 5 % of the water a day brings 0.7 mg/L more of it.
+  const low = calcium({
+    now: 406,
+    low: 400,
+    high: 440,
+    aim: 420,
+    needPerDay: 4,
+    passivePerDay: -4 + 14 * exchangePerDay,
+  });
+  const problem = {
+    volumeL: 1000,
+    exchangePerDay,
+    parameters: [low],
+    sources: [pump("head-2", { calcium: 32_000 })],
+  };
+  const { corrections, phases } = solvePlan(problem);
+  closeTo(corrections[0]?.perDay, 2);
+  closeTo(corrections[0]?.days, Math.log1p((exchangePerDay * 14) / 2) / exchangePerDay);
+  // D' = −2 − 0.05 D from 14, by small steps.
+  let left = 14;
+  const steps = 20_000;
+  for (let step = 0; step < steps; step += 1)
+    left -= ((2 + exchangePerDay * left) * phases[0]!.untilDays!) / steps;
+  expect(Math.abs(left)).toBeLessThan(0.001);
 });

@@ -243,7 +243,11 @@ describe("uptake", () => {
     ["500 meq", "uptake", 'unit/dimension "meq" for an uptake: dKH/day, meq/day'],
     ["240 mmol/m2/day", "cohort uptake", 'unit/as-caco3 "mmol/m2/day"'],
     ["5 g/m2/day", "cohort uptake", 'unit/as-caco3 "g/m2/day"'],
-    ["0.3 meq/L/day", "cohort uptake", 'unit/dimension "meq/L/day" for an uptake: meq/day, mmol/day as CaCO3'],
+    [
+      "0.3 meq/L/day",
+      "cohort uptake",
+      'unit/dimension "meq/L/day" for an uptake: meq/day, mmol/day as CaCO3',
+    ],
     ["500 meq/day as CaCO3", "uptake", 'unit/dimension "meq/day" for an uptake: dKH/day, meq/day'],
   ] as const)("%s of a %s is wrong", (text, use, expected) => {
     expect(amount(text, "alkalinity", use)).toBe(expected);

@@ -92,5 +92,7 @@ export function plain(text: string, kind: PlainKind): string {
 
 export function carbonDioxide(text: string): string {
   const reading = readCarbonDioxide(written(text));
-  return reading.ok ? `${number(reading.value.value)} ${reading.value.unit}` : findingInWords(text, reading.finding);
+  return reading.ok
+    ? `${number(reading.value.value)} ${reading.value.unit}`
+    : findingInWords(text, reading.finding);
 }

@@ -106,11 +106,15 @@ const kinds = { volume: "volume", length: "length", area: "area", mass: "mass", 
 describe("any number", () => {
   it("comes back from base units by the unit's own factor", () => {
     fc.assert(
-      fc.property(decimal, fc.constantFrom(...unitTable.filter(({ kind }) => kind in kinds)), (number, row) => {
-        const base = plain(`${number} ${row.spelling}`, kinds[row.kind as keyof typeof kinds]);
-        const back = Number(base) / factorOf(row.factor).toNumber();
-        expect(Math.abs(back - Number(number))).toBeLessThanOrEqual(1e-13 * Number(number));
-      }),
+      fc.property(
+        decimal,
+        fc.constantFrom(...unitTable.filter(({ kind }) => kind in kinds)),
+        (number, row) => {
+          const base = plain(`${number} ${row.spelling}`, kinds[row.kind as keyof typeof kinds]);
+          const back = Number(base) / factorOf(row.factor).toNumber();
+          expect(Math.abs(back - Number(number))).toBeLessThanOrEqual(1e-13 * Number(number));
+        },
+      ),
     );
   });
 
@@ -122,10 +126,14 @@ describe("any number", () => {
       ["m", "mm"],
     ] as const;
     fc.assert(
-      fc.property(fc.integer({ min: 1, max: 999_999 }), fc.constantFrom(...thousandths), (whole, [large, small]) => {
-        const kind = large.endsWith("g") ? "mass" : large === "m" ? "length" : "volume";
-        expect(plain(`${whole}000 ${small}`, kind)).toBe(plain(`${whole} ${large}`, kind));
-      }),
+      fc.property(
+        fc.integer({ min: 1, max: 999_999 }),
+        fc.constantFrom(...thousandths),
+        (whole, [large, small]) => {
+          const kind = large.endsWith("g") ? "mass" : large === "m" ? "length" : "volume";
+          expect(plain(`${whole}000 ${small}`, kind)).toBe(plain(`${whole} ${large}`, kind));
+        },
+      ),
     );
   });
 
