@@ -86,9 +86,9 @@ const samples: Readonly<Record<Dosed, Sample>> = {
     usual: "8",
     nearMax: "12",
     max: "12.5",
-    large: "150 mL",
+    large: "80 mL",
     small: "40 mL",
-    limit: "1",
+    limit: "0.5",
   },
 };
 
@@ -102,10 +102,9 @@ function exampleOf(parameter: Dosed, which: "rise" | "dose" | "max"): Example {
     max: `limit ${parameter} max ${max} ${unit}\nlimit ${parameter} dose ${Number(limit) * 5} ${unit}`,
   }[which];
   // A second reading stands for what was done about it.
-  const amount = which === "max" ? "250 mL" : large;
   const later = which === "max" ? `  2026-11-30 20:00 read ${reading}\n` : "";
   return {
-    fires: oneDose(supplies, facts, reading, amount) + later,
+    fires: oneDose(supplies, facts, reading, large) + later,
     silent: oneDose(supplies, facts, reading, small),
   };
 }

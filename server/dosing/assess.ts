@@ -152,7 +152,8 @@ function listAssumptions(
     });
   }
   const addWater = (water: string, minute: number) => {
-    for (const assumption of constants.waterAt(water, minute).assumptions) assumed.add(assumption);
+    for (const { parameter, ...assumption } of constants.waterAt(water, minute).assumptions)
+      if (state.carried[parameter]) assumed.add(assumption);
   };
   const addSolution = (solution: string) => {
     for (const assumption of model.solutions.get(solution)?.assumptions ?? []) assumed.add(assumption);

@@ -5,7 +5,7 @@ import { densityOf } from "../culture/binder.ts";
 import { defaults } from "../culture/defaults.ts";
 import { changesOf, factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Strength, System, SystemFacts } from "../culture/model.ts";
-import { type ByTracked, byTracked, isTracked, tracked } from "./tracked.ts";
+import { type ByTracked, byTracked, isTracked, type Tracked, tracked } from "./tracked.ts";
 
 export interface SystemConstants {
   readonly facts: SystemFacts;
@@ -20,7 +20,7 @@ export interface SystemConstants {
 /** A water to exchange with; what it doesn't state is sea water's at its salinity. */
 export interface ExchangeWater {
   readonly values: ByTracked<number>;
-  readonly assumptions: readonly Assumption[];
+  readonly assumptions: readonly (Assumption & { readonly parameter: Tracked })[];
 }
 
 export function constantsOf(model: FarmModel, system: System): SystemConstants {
@@ -77,6 +77,7 @@ function exchangeWater(model: FarmModel, ref: string, minute: number): ExchangeW
   };
   const missing = tracked.filter((parameter) => stated(parameter) === null);
   const assumptions = missing.map((parameter) => ({
+    parameter,
     what: `${parameter} of ${name}`,
     value: parameter === "salinity" ? defaults.salinity.text : `as in sea water of salinity ${salinity}`,
     basis: parameter === "salinity" ? defaults.salinity.basis : "Millero et al. 2008",

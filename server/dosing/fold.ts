@@ -10,7 +10,7 @@ import { type Carried, carriedMinutes, minutesPerDay, startState, type WaterStat
 
 /** A dose of the log, or a change of what pumps give, with the water before and after it. */
 export interface DoseInLog {
-  readonly event: Extract<SystemEvent, { kind: "gave" | "topped" | "set" | "started" }>;
+  readonly event: Extract<SystemEvent, { kind: "gave" | "topped" | "set" | "stopped" | "started" }>;
   readonly before: WaterState;
   readonly after: WaterState;
 }

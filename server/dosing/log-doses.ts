@@ -34,7 +34,7 @@ export function checkDoses(
   const findings: DosingFinding[] = [];
   const lastDay: Given[] = [];
   for (const { event, before, after } of doses) {
-    if (event.kind === "set" || event.kind === "started") {
+    if (event.kind !== "gave" && event.kind !== "topped") {
       findings.push(...checkSet(system, constants, event, after));
       continue;
     }
@@ -207,7 +207,7 @@ function checkPeak(
 function checkSet(
   system: string,
   constants: SystemConstants,
-  event: Extract<SystemEvent, { kind: "set" | "started" }>,
+  event: Extract<SystemEvent, { kind: "set" | "stopped" | "started" }>,
   state: WaterState,
 ): DosingFinding[] {
   const turnedOn = event.kind === "set" ? event.rates : [{ source: event.pump, place: event.place }];

@@ -163,6 +163,106 @@ function check(example: Example): void {
   expect(plain(walk(example.files, example.moments))).toBe(plain(first));
 }
 
+/** A whole farm around a few strange lines: facts of its system, lines of its log, sections. */
+const around = (facts: string, log = "", sections = ""): Example => ({
+  files: {
+    "farm.marl": `solution ash
+  supplies alkalinity 1 meq/mL as hydroxide
+  supplies calcium 40 mg/mL
+
+system vat
+  tank main 1000 L
+  hold alkalinity 7 to 9 dKH
+  hold calcium 400 to 440 mg/L
+  pump one gives ash at 40 mL/min
+${facts}
+
+log vat
+  2026-11-01 08:00 read alkalinity 8 dKH, calcium 420 mg/L, salinity 35, pH 8.1
+${log}
+  2026-11-02 08:00 gave ash 10 mL
+
+${sections}
+`,
+  },
+  moments: ["2026-11-02 08:00", "2026-11-12", "1900-01-01", "9999-12-31"],
+});
+
+const strangeFarms: Readonly<Record<string, Example>> = {
+  "fresh water held": around(
+    "  hold salinity 0 to 1\n  hold temperature -2 to 0 degC",
+    "  2026-11-01 09:00 read salinity 0, temperature 0 degC",
+  ),
+  "negative salinity held": around("  hold salinity -5 to -1"),
+  "a thimble and an ocean": {
+    ...around(""),
+    files: {
+      "a.marl": around("  measured volume 0.000001 mL").files["farm.marl"]!,
+      "b.marl": around("  measured volume 999999999999999 m3\n  uptake alkalinity 1 meq/day").files[
+        "farm.marl"
+      ]!,
+    },
+  },
+  "uptake of an ocean": around(
+    "  uptake alkalinity 999999999999999 dKH/s\n  uptake calcium 999999999999999 kg/s",
+  ),
+  "uptake below nothing": around(
+    "  uptake alkalinity -5 dKH/day\n  cohort plugs 5 pieces uptake -9 meq/day each",
+  ),
+  "growth and decay without end": around(
+    "  cohort plugs 999999999999999 pieces uptake 999999999999999 mol/s as CaCO3 each grows 99 %/week from 1900-01-01\n  cohort tips 5 pieces uptake 9 meq/day each grows -99 %/week from 1900-01-01",
+  ),
+  "growth past any": around("  cohort tips 5 pieces uptake 9 meq/day each grows -300 %/week from 1900-01-01"),
+  "a system that exchanges with itself": around(
+    "  flows-through 10 L/day with vat",
+    "  2026-11-02 07:00 renewed 10 L with vat",
+  ),
+  "systems that exchange with each other": around(
+    "  flows-through 10 L/day with other",
+    "  2026-11-02 07:00 renewed 10 L with other",
+    "system other\n  tank main 10 L\n  flows-through 999999999999999 L/s with vat\n\nlog other\n  2026-11-01 read alkalinity 5 meq/L\n  2026-11-02 renewed 5 L with vat",
+  ),
+  "corals that move to where they are": around(
+    "  cohort plugs 5 pieces uptake 9 meq/day each",
+    "  2026-11-02 07:00 moved plugs 5 pieces to vat\n  2026-11-02 07:00 moved plugs 999999999999999 pieces to vat",
+  ),
+  "a solution of itself": around(
+    "  by-hand self",
+    "  2026-11-02 07:00 gave self 5 L",
+    "solution self\n  dissolve self 5 g\n  make up to 1 L\nreagent ring\n  is ring\nsolution two\n  saturated ring",
+  ),
+  "salt without water": around(
+    "  by-hand brine",
+    "  2026-11-02 07:00 gave brine 999999999999999 m3",
+    "solution brine\n  dissolve sodium-carbonate 999999999999999 kg\n  make up to 0.000000000000001 mL",
+  ),
+  "limits of nothing": around(
+    "  limit alkalinity dose 0 dKH\n  limit alkalinity rise 0 dKH/day\n  limit alkalinity max 0 dKH\n  limit pH dose 0\n  limit pH max 4",
+    "  2026-11-01 09:00 set one 5 L/day",
+  ),
+  "limits without end": around(
+    "  limit alkalinity dose 999999999999999 dKH\n  limit alkalinity rise 999999999999999 dKH/day\n  limit pH max 11\n  limit pH dose 9",
+    "  2026-11-01 09:00 set one 999999999999999 m3/s",
+  ),
+  "a pump of nothing": around(
+    "  pump two gives ash at 0 mL/min least 999999999999999 L between 08:00 and 08:00 always 999999999999999 L/s",
+  ),
+  "a limit below nothing": around(
+    "  limit alkalinity dose -5 dKH\n  limit alkalinity rise -5 dKH/day\n  limit calcium fall -1 mg/L/day",
+  ),
+  "air of nothing, air of CO2": around(
+    "  air CO2 0 ppm\n  air CO2 999999999999999 uatm from 2026-11-05\n  hold pH 8.2 to 8.4",
+  ),
+  "light and hours over midnight": around(
+    "  light between 23:00 and 01:00\n  pump two gives ash at 5 mL/min between 24:00 and 00:00",
+  ),
+  "empty sections": around(
+    "",
+    "",
+    "system\n\nlog\n\nlog vat\n\nsolution\n\nsolution empty\n\nreagent empty-too\n\nstore\n\nkit\n\nsaltwater\n\nsaltwater dry\n\nsystem nothing\n\nsystem",
+  ),
+};
+
 const absurd = [
   "0",
   "-1",
@@ -303,7 +403,9 @@ describe("the whole walk", () => {
     }
   });
 
-  const runs = Number(process.env.RUNS ?? 150);
+  it.each(Object.entries(strangeFarms))("gives an answer to %s", (_, example) => check(example));
+
+  const runs = Number(process.env.RUNS ?? 60);
   it.each([
     ["halls", halls],
     ["nursery", nursery],

@@ -20,7 +20,7 @@ ${log}
 const listed = (facts: string, log: string, moment = "2026-11-03") =>
   system(text(facts, log), moment).assumptions.map(({ what }) => what);
 
-const read = "  2026-11-01 08:00 read alkalinity 3 meq/L";
+const read = "  2026-11-01 08:00 read alkalinity 3 meq/L, calcium 420 mg/L";
 
 describe("assumptions", () => {
   it("the water of what is written for a kilogram", () => {
@@ -40,7 +40,9 @@ describe("assumptions", () => {
     expect(listed("", `${read}\n  2026-11-02 08:00 renewed 100 L with mix`, "2026-11-20")).not.toContain(
       "calcium of mix",
     );
-    expect(listed("  flows-through 10 L/day with mix", read)).toContain("magnesium of mix");
+    expect(listed("  flows-through 10 L/day with mix", read)).toContain("calcium of mix");
+    // Nobody asks for its magnesium.
+    expect(listed("  flows-through 10 L/day with mix", read)).not.toContain("magnesium of mix");
     expect(listed("", read)).not.toContain("calcium of mix");
   });
 
