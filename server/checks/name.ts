@@ -88,7 +88,11 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
     severity: "error",
     title: "A name that isn't declared",
     says: undeclared,
-    why: "What this line says of it is left out.",
+    why: "What names it is left out.",
+    whyHere: (finding) =>
+      "wanted" in finding && finding.wanted.includes("kit")
+        ? "The readings count all the same."
+        : "This line is left out.",
     todo: "Correct the name, declare it, or use the file that declares it.",
     todoHere: undeclaredTodo,
     fixes: undeclaredFixes,

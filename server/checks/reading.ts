@@ -1,6 +1,6 @@
 /** Readings that sea water can't have, rarely has, or that a technician set aside. */
 import { parameterOf } from "../../grammar/parameters.ts";
-import { bandFigure, unitText, valueFigure } from "./figures.ts";
+import { bandFigure } from "./figures.ts";
 import type { Of, Rules } from "./rule.ts";
 import { inQuotes } from "./words.ts";
 
@@ -13,12 +13,8 @@ const isDissolved = ({ parameter }: OffRange): boolean => {
   return measure === "alkalinity" || measure === "dissolved";
 };
 
-/** The value in the digits of the file; where it was turned into another unit, rounded. */
-function asWritten(finding: OffRange): string {
-  const { parameter, value, written, unit } = finding;
-  if (isDissolved(finding)) return `${written} ${unitText(unit)}`.trim();
-  return value === null ? written : valueFigure(parameter, value, unit);
-}
+/** The value in the digits and the unit of the file. */
+const asWritten = ({ written, writtenUnit }: OffRange): string => `${written} ${writtenUnit}`.trim();
 
 const range = ({ parameter, range: [low, high], unit }: OffRange): string =>
   // Nitrate and phosphate have no upper end.

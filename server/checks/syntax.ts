@@ -1,7 +1,9 @@
 /** Lines that can't be read. Each is left out and every other line still counts. */
+
 import { numberReadings } from "../../grammar/numbers.ts";
 import { statementTable } from "../../grammar/statements.ts";
 import type { SectionKind } from "../../grammar/syntax.ts";
+import { isReserved } from "../../grammar/tokens.ts";
 import { replacingWith } from "./fixing.ts";
 import type { Of, Rules } from "./rule.ts";
 import { inQuotes, isParameter, oneOf } from "./words.ts";
@@ -20,6 +22,8 @@ const said = (expected: readonly string[]): string =>
   oneOf(expected.map((word) => (/^an? /.test(word) || isParameter(word) ? word : inQuotes(word))));
 
 function unknownWord({ word, expected }: Of<"syntax/unknown-word">): string {
+  if (expected.includes("a name") && isReserved(word))
+    return `${inQuotes(word)} is a word of the language and can't be a name.`;
   if (isFormula(expected)) return `${inQuotes(word)} can't be read as part of a chemical formula.`;
   if (isParameter(word)) return `${inQuotes(word)} can't be given here.`;
   if (expected.length > 0 && expected.every((other) => other === "a parameter" || isParameter(other)))

@@ -1,11 +1,13 @@
 /** Systems that can't be as they are declared. */
 import { bandFigure, edgeFigure, figure } from "./figures.ts";
-import type { Rules } from "./rule.ts";
+import type { Of, Rules } from "./rule.ts";
 import { atStart } from "./words.ts";
 
-/** Litres that the tanks' sizes leave; more than none where a measured volume says otherwise. */
-function nothingLeft(volumeL: number): string {
-  if (volumeL > 0) return "The measured volume of this system is 0.";
+/** Why there is no water to dose into. */
+function noWater({ reason, volumeL }: Of<"system/no-volume">): string {
+  if (reason === "no-tank") return "This system has neither a tank nor a measured volume.";
+  if (reason === "measured-nothing") return "The measured volume of this system is 0.";
+  if (reason === "empty-tanks") return "The tanks of this system hold nothing.";
   const over = volumeL < 0 ? `${figure(-volumeL, "L")} more than` : "all that";
   return `What is displaced takes up ${over} the tanks hold.`;
 }
@@ -20,8 +22,7 @@ export const systemRules: Rules<
   "system/no-volume": {
     severity: "error",
     title: "A system without water",
-    says: ({ reason, volumeL }) =>
-      reason === "no-tank" ? "This system has neither a tank nor a measured volume." : nothingLeft(volumeL),
+    says: noWater,
     why: "Without its volume no dose can be worked out.",
     todo: "Add a tank line or a measured volume, or check the sizes.",
     todoHere: ({ reason }) =>
@@ -51,7 +52,7 @@ export const systemRules: Rules<
     title: "A band with nothing in it",
     says: ({ parameter, low, high, unit }) =>
       `The band of ${parameter} is empty: ${bandFigure(parameter, low, high, unit)}.`,
-    why: "The middle of the band is aimed at instead.",
+    why: "This line is left out, so this parameter isn't held.",
     todo: "Write the lower value first, and a higher one after it.",
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 26.5 to 24.5 degC\n",
@@ -63,7 +64,7 @@ export const systemRules: Rules<
     title: "An aim outside its band",
     says: ({ parameter, low, high, aim, unit }) =>
       `${atStart(parameter)} is to aim at ${edgeFigure(parameter, aim, unit)}, outside its band of ${bandFigure(parameter, low, high, unit)}.`,
-    why: "This line is left out, so this parameter isn't held.",
+    why: "The middle of the band is aimed at instead.",
     todo: "Move the aim into the band, or leave it out.",
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 27\n",

@@ -3,7 +3,7 @@ import { adding, replacing, replacingWith } from "./fixing.ts";
 import type { Rules } from "./rule.ts";
 import { inQuotes, oneOf } from "./words.ts";
 
-const leftOut = "What this line says of it is left out.";
+const leftOut = "This line is left out.";
 
 /** `dKH or meq/L`; where a bare number will do, said so. */
 function written(examples: readonly string[]): string {

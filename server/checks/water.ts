@@ -66,7 +66,7 @@ function leavesTodo({ parameter, planned, takenPerDay, dosedPerDay }: Leaves): s
   if (advice !== "") return advice;
   if (parameter === "salinity") return "Renew with fresh or salt water before then.";
   return takenPerDay !== null && dosedPerDay > takenPerDay
-    ? "Dose less of it."
+    ? "Dose less of it, or fill the top-off with fresh water."
     : "Give it a pump or a hand dose, or change what is set.";
 }
 

@@ -11,7 +11,7 @@ export const check: Command = {
   name: "check",
   form: "marl check [PATH…]",
   about: "what is wrong in the farm, or in the files and folders named",
-  options: {},
+  options: { strict: { type: "boolean", about: "end with 1 for a warning too" } },
   run: async (words, outlet) => {
     const moment = momentOf(words, outlet.clock);
     if ("reason" in moment) return refuse(outlet, moment.reason);

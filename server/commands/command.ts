@@ -45,7 +45,6 @@ export const sharedOptions = {
     about: "see everything as at 2026-12-01T08:00 (a bare date: noon); default now",
   },
   format: { type: "string", value: "text|json", about: "how to print; default text" },
-  strict: { type: "boolean", about: "end with 1 for a warning too" },
   color: { type: "boolean", about: "colour even where the output is no terminal; NO_COLOR switches it off" },
   help: { type: "boolean", about: "print this" },
 } as const satisfies Record<string, OptionRow>;

@@ -7,6 +7,7 @@ import {
   plain,
   positive,
   type ReferenceWater,
+  refuseNumber,
   reportSpan,
   shareQuantity,
 } from "./binder.ts";
@@ -26,6 +27,7 @@ export function bindCohort(
   const growth = fact.grows ? growthPerDay(line, fact.grows) : 0;
   if (count === null || !read || read.amount.sort !== "dissolved" || growth === null) return;
   if (fact.magnesium && magnesiumFraction === null) return;
+  if (read.value < 0) return void refuseNumber(line, fact.uptake.number);
   const uptakeOf = read.amount.per === "area" ? "square metre" : fact.each ? "piece" : "all";
   if (!countFits(line, fact, uptakeOf)) return;
   // An area's uptake is per dm² in base units.
@@ -46,13 +48,7 @@ export function bindCohort(
 function growthPerDay(line: Line, grows: QuantityText): number | null {
   const perDay = plain(line, grows, "growth");
   if (perDay === null || Math.abs(perDay * daysPerWeek) < 1) return perDay;
-  reportSpan(line, {
-    code: "syntax/number-form",
-    span: grows.number,
-    word: grows.number.text,
-    readings: [],
-  });
-  return null;
+  return refuseNumber(line, grows.number);
 }
 
 const daysPerWeek = 7;
@@ -80,14 +76,8 @@ const squareDecimetresPerMetre = 100;
 export function stockCount(line: Line, count: StockCount): number | null {
   if (count.by === "pieces") {
     const number = Number(count.number.text);
-    if (Number.isFinite(number) && number >= 0) return number;
-    reportSpan(line, {
-      code: "syntax/number-form",
-      span: count.number,
-      word: count.number.text,
-      readings: [],
-    });
-    return null;
+    if (Number.isSafeInteger(number) && number >= 0) return number;
+    return refuseNumber(line, count.number);
   }
   const area = positive(line, count.area, "area");
   return area === null ? null : area / squareDecimetresPerMetre;

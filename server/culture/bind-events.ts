@@ -1,32 +1,14 @@
 /** The events of a system's logs: names bound, volumes in litres, readings still to be converted. */
 
 import { nearestWords } from "../../grammar/nearest.ts";
-import type { ParameterName } from "../../grammar/parameters.ts";
-import type { Event, LogEvent, QuantityText, Word } from "../../grammar/syntax.ts";
+import type { Event, LogEvent, Word } from "../../grammar/syntax.ts";
 import { writeStatement } from "../../grammar/write.ts";
-import type { Written } from "../quantity/concentration.ts";
 import { stockCount } from "./bind-cohort.ts";
 import { aboveZero, type Line, named, placeOf, positive } from "./binder.ts";
 import type { OwnKind } from "./finding.ts";
 import { factAt } from "./history.ts";
 import type { EventHead, SystemEvent, SystemFacts } from "./model.ts";
-import { takeReadItems } from "./readings.ts";
-
-/** A read line with its amounts still as written; `readings.ts` turns them into the model's units. */
-export interface PendingRead extends EventHead {
-  readonly kind: "read";
-  readonly pending: ReadonlyMap<ParameterName, PendingValue>;
-  readonly line: Line;
-  readonly disregard: Word | null;
-  readonly kit: string | null;
-}
-
-export interface PendingValue {
-  readonly quantity: QuantityText;
-  readonly written: Written;
-  readonly word: Word;
-  readonly below: boolean;
-}
+import { type PendingRead, takeReadItems } from "./readings.ts";
 
 export type BoundEvent = Exclude<SystemEvent, { kind: "read" }> | PendingRead;
 
@@ -47,6 +29,7 @@ export function bindEvent(line: Line, event: Event, own: OwnNames): BoundEvent |
   switch (event.kind) {
     case "read": {
       const pending = takeReadItems(line, event.items);
+      if (!pending) return null;
       const kit = event.kit && named(line, event.kit, ["kit"]);
       if (event.disregard) {
         const reason = event.disregard.text;
@@ -62,14 +45,14 @@ export function bindEvent(line: Line, event: Event, own: OwnNames): BoundEvent |
     case "set":
       return bindSet(line, event.items, own, head);
     case "gave": {
-      const doses = event.items.flatMap(({ name, quantity, start, end }) => {
+      const doses = event.items.map(({ name, quantity, start, end }) => {
         const solution = named(line, name, ["solution"]);
         const litres = positive(line, quantity, "volume");
         return solution && litres !== null
-          ? [{ solution: solution.ref, litres, place: placeOf(line, { start, end }) }]
-          : [];
+          ? { solution: solution.ref, litres, place: placeOf(line, { start, end }) }
+          : null;
       });
-      return doses.length > 0 ? { ...head, kind: "gave", doses } : null;
+      return isWhole(doses) ? { ...head, kind: "gave", doses } : null;
     }
     case "renewed": {
       const litres = positive(line, event.volume, "volume");
@@ -119,15 +102,19 @@ function bindSet(
   own: OwnNames,
   head: EventHead,
 ): BoundEvent | null {
-  const rates = items.flatMap(({ name, quantity, start, end }) => {
+  const rates = items.map(({ name, quantity, start, end }) => {
     const source = sourceNamed(line, name, own, head.minute);
     const litresPerDay = positive(line, quantity, "flow");
     return source !== null && litresPerDay !== null
-      ? [{ source, litresPerDay, place: placeOf(line, { start, end }) }]
-      : [];
+      ? { source, litresPerDay, place: placeOf(line, { start, end }) }
+      : null;
   });
-  return rates.length > 0 ? { ...head, kind: "set", rates } : null;
+  return isWhole(rates) ? { ...head, kind: "set", rates } : null;
 }
+
+/** A line of several parts counts whole or not at all. */
+const isWhole = <T>(parts: readonly (T | null)[]): parts is readonly T[] =>
+  parts.every((part) => part !== null);
 
 /** A pump by its name, or the one source that gives a solution at that moment, else at any. */
 function sourceNamed(line: Line, word: Word, own: OwnNames, minute: number): string | null {

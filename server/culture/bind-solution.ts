@@ -221,8 +221,14 @@ function strengthAt(
     return null;
   }
   const supplied = inForce(recipe.supplied, minute);
-  if (supplied.length > 0) return suppliedStrength(supplied, name, assumptions);
   const parts = inForce(recipe.dissolved, minute);
+  if (supplied.length > 0) {
+    if (parts.length > 0 || factAt(recipe.saturated, minute)) {
+      const basis = "a printed strength goes instead of a recipe";
+      assumptions.push({ what: `strength of ${name}`, value: "as `supplies` says", basis });
+    }
+    return suppliedStrength(supplied, name, assumptions);
+  }
   const makeUpL = factAt(recipe.makeUpL, minute)?.value;
   let strength: Strength | null = null;
   if (parts.length > 0) {

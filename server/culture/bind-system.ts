@@ -15,6 +15,7 @@ import {
   parameterNamed,
   positive,
   type ReferenceWater,
+  refuseNumber,
   shareQuantity,
   take,
 } from "./binder.ts";
@@ -75,6 +76,7 @@ const bind: BindFact = {
     if (!parameter) return;
     const read = amountOf(line, fact.value, parameter, readUptake(fact.value, parameter), water);
     if (read?.amount.sort !== "dissolved") return;
+    if (read.value < 0) return void refuseNumber(line, fact.value.number);
     const per = read.amount.per === "whole" ? "whole" : "litre";
     const stated: StatedUptake = {
       parameter: parameter.name,

@@ -84,13 +84,7 @@ export function plainWithDeviation(
 function finite(line: Line, quantity: QuantityText, exact: Decimal34, uncertainty: Decimal34 | null) {
   const value = toDouble(exact);
   if (value === null) {
-    reportSpan(line, {
-      code: "syntax/number-form",
-      span: quantity.number,
-      word: quantity.number.text,
-      readings: [],
-    });
-    return null;
+    return refuseNumber(line, quantity.number);
   }
   return { value, deviation: uncertainty && toDouble(uncertainty) };
 }
@@ -100,12 +94,12 @@ export function positive(line: Line, quantity: QuantityText, kind: PlainKind): n
   const value = plain(line, quantity, kind);
   if (value === null || value >= 0) return value;
   const text = quantity.number.text;
-  reportSpan(line, {
-    code: "syntax/number-form",
-    span: quantity.number,
-    word: text,
-    readings: [text.replace("-", "")],
-  });
+  return refuseNumber(line, quantity.number, [text.replace("-", "")]);
+}
+
+/** Reports a number that the place can't hold, whatever its unit. */
+export function refuseNumber(line: Line, number: NumberWord, readings: readonly string[] = []): null {
+  reportSpan(line, { code: "syntax/number-form", span: number, word: number.text, readings });
   return null;
 }
 
@@ -113,34 +107,21 @@ export function positive(line: Line, quantity: QuantityText, kind: PlainKind): n
 export function aboveZero(line: Line, quantity: QuantityText, kind: PlainKind): number | null {
   const value = positive(line, quantity, kind);
   if (value !== 0) return value;
-  reportSpan(line, {
-    code: "syntax/number-form",
-    span: quantity.number,
-    word: quantity.number.text,
-    readings: [],
-  });
-  return null;
+  return refuseNumber(line, quantity.number);
 }
 
 /** How many times something is there or done: 1, 2, 3 … */
 export function wholeNumber(line: Line, number: NumberWord): number | null {
   const value = Number(number.text);
   if (Number.isSafeInteger(value) && value > 0) return value;
-  reportSpan(line, { code: "syntax/number-form", span: number, word: number.text, readings: [] });
-  return null;
+  return refuseNumber(line, number);
 }
 
 /** A share from 0 to 1. */
 export function shareQuantity(line: Line, quantity: QuantityText): number | null {
   const share = positive(line, quantity, "share");
   if (share === null || share <= 1) return share;
-  reportSpan(line, {
-    code: "syntax/number-form",
-    span: quantity.number,
-    word: quantity.number.text,
-    readings: [],
-  });
-  return null;
+  return refuseNumber(line, quantity.number);
 }
 
 /** Density in kg/L; a water beyond any sea water counts as the default one, what is wrong with it is told elsewhere. */
@@ -185,13 +166,7 @@ export function amountOf(
   const density = () => densityOf(water);
   const value = inModelUnit(written.amount, parameter, density);
   if (value === null || !Number.isFinite(value)) {
-    reportSpan(line, {
-      code: "syntax/number-form",
-      span: quantity.number,
-      word: quantity.number.text,
-      readings: [],
-    });
-    return null;
+    return refuseNumber(line, quantity.number);
   }
   const deviation = written.uncertainty && inModelUnit(written.uncertainty, parameter, density);
   return { value, deviation, amount: written.amount };
@@ -203,6 +178,8 @@ export function displayUnit(
   parameter: Parameter,
   water: ReferenceWater,
 ): DisplayUnit {
+  if (parameter.measure === "pH" && quantity.unit?.text === "total")
+    return { spelling: "total", perModelUnit: 1 };
   const unitless =
     parameter.measure === "salinity" || parameter.measure === "pH" || parameter.measure === "temperature";
   if (unitless || !quantity.unit) return plainUnit(parameter.name);

@@ -11,7 +11,7 @@ import type {
   WaterFact,
 } from "../../grammar/syntax.ts";
 import { isReagent } from "../chemistry/reagents.ts";
-import { type BoundEvent, bindEvent, type PendingRead } from "./bind-events.ts";
+import { type BoundEvent, bindEvent } from "./bind-events.ts";
 import { bindKit, bindStore, bindWater } from "./bind-shelf.ts";
 import { bindSolution, type RecipeSection } from "./bind-solution.ts";
 import { bindSystemFacts } from "./bind-system.ts";
@@ -21,7 +21,7 @@ import type { CultureFinding, NamedKind } from "./finding.ts";
 import type { FarmModel, Kit, SaltWater, Solution, System, SystemEvent } from "./model.ts";
 import { bindNames, type Declaration, type Files, type Names } from "./names.ts";
 import { comparePlaces, type Place } from "./place.ts";
-import { convertReads } from "./readings.ts";
+import { convertReads, type PendingRead } from "./readings.ts";
 import { checkReagent } from "./reagent.ts";
 
 export interface BoundFarm {
@@ -206,16 +206,16 @@ function bindSystems(
       const draft = system && drafts.get(system.ref);
       if (!draft) continue;
       draft.logFiles.add(file);
-      let latest = Number.NEGATIVE_INFINITY;
+      let before = Number.NEGATIVE_INFINITY;
       for (const { line, event } of eventLines(house, file, index, section.name.text)) {
-        if (event.at.minute < latest) {
+        if (event.at.minute < before) {
           findings.push({
             code: "log/out-of-order",
             place: { file, line: line.line, span: event.at },
             system: line.system,
           });
         }
-        latest = Math.max(latest, event.at.minute);
+        before = event.at.minute;
         const bound = bindEvent(line, event, { facts: draft.facts });
         if (bound) draft.events.push(bound);
       }

@@ -37,7 +37,7 @@ type Own = { readonly place: Place; readonly system: string | null } & (
   | { readonly code: "use/missing-file" | "use/outside" | "use/cycle"; readonly path: string }
   | {
       readonly code: "system/no-volume";
-      readonly reason: "no-tank" | "nothing-left";
+      readonly reason: "no-tank" | "measured-nothing" | "empty-tanks" | "displaced";
       readonly volumeL: number;
     }
   | { readonly code: "system/volume-differs"; readonly measuredL: number; readonly geometricL: number }
@@ -62,6 +62,7 @@ type Own = { readonly place: Place; readonly system: string | null } & (
       readonly parameter: ParameterName;
       readonly value: number | null;
       readonly written: string;
+      readonly writtenUnit: string;
       readonly unit: DisplayUnit;
       readonly range: readonly [number, number];
       /** The same digits with the point one place left, where that is usual. */

@@ -128,6 +128,8 @@ export interface ReadValue {
   readonly place: Place;
   /** meq/L, mg/L, PSS-78, °C, pH. */
   readonly value: number;
+  /** Of what was written for a kilogram: meq or mg in it. */
+  readonly perKilogram: number | null;
   /** A test that showed less than this. */
   readonly below: boolean;
   /** Sea water can't have it: kept in the report, left out of every estimate. */

@@ -3,9 +3,8 @@
  * temperature and calcium belong to a moment.
  */
 import { type Parameter, type ParameterName, parameterOf } from "../../grammar/parameters.ts";
-import type { QuantityText, ReadItem, Span } from "../../grammar/syntax.ts";
-import { asValue, readConcentration } from "../quantity/concentration.ts";
-import type { PendingRead, PendingValue } from "./bind-events.ts";
+import type { QuantityText, ReadItem, Span, Word } from "../../grammar/syntax.ts";
+import { asValue, readConcentration, type Written } from "../quantity/concentration.ts";
 import {
   densityOf,
   displayUnit,
@@ -17,7 +16,23 @@ import {
 } from "./binder.ts";
 import { inModelUnit } from "./convert.ts";
 import { defaults } from "./defaults.ts";
-import type { ByParameter, ReadEvent, ReadValue } from "./model.ts";
+import type { ByParameter, EventHead, ReadEvent, ReadValue, SystemEvent } from "./model.ts";
+
+/** A read line with its amounts still as written; `readings.ts` turns them into the model's units. */
+export interface PendingRead extends EventHead {
+  readonly kind: "read";
+  readonly pending: ReadonlyMap<ParameterName, PendingValue>;
+  readonly line: Line;
+  readonly disregard: Word | null;
+  readonly kit: string | null;
+}
+
+export interface PendingValue {
+  readonly quantity: QuantityText;
+  readonly written: Written;
+  readonly word: Word;
+  readonly below: boolean;
+}
 
 /** A value with where it comes from: a reading, or a default that is then listed as an assumption. */
 export interface Known {
@@ -25,17 +40,23 @@ export interface Known {
   readonly from: "reading" | "default";
 }
 
-/** The values of one line as written. A parameter read twice in it is reported once and the first counts. */
+/**
+ * The values of one line as written; null where one of them can't be read: a line counts whole or not at all.
+ * Of a parameter read twice in it the first counts.
+ */
 export function takeReadItems(
   line: Line,
   items: readonly ReadItem[],
-): ReadonlyMap<ParameterName, PendingValue> {
+): ReadonlyMap<ParameterName, PendingValue> | null {
+  let whole = true;
   const pending = new Map<ParameterName, PendingValue>();
   for (const item of items) {
     const parameter = parameterNamed(line, item.parameter);
-    if (!parameter) continue;
-    const written = take(line, readConcentration(item.value, parameter, asValue));
-    if (!written) continue;
+    const written = parameter && take(line, readConcentration(item.value, parameter, asValue));
+    if (!parameter || !written) {
+      whole = false;
+      continue;
+    }
     const first = pending.get(parameter.name);
     if (first) {
       const place = placeOf(line, item);
@@ -51,7 +72,7 @@ export function takeReadItems(
     }
     pending.set(parameter.name, { quantity: item.value, written, word: item.parameter, below: item.below });
   }
-  return pending;
+  return whole ? pending : null;
 }
 
 /** Minutes within which a value of another line belongs to a reading. */
@@ -163,25 +184,35 @@ function convertValue(
   const row = parameterOf(parameter)!;
   const { amount } = pending.written;
   const value = inModelUnit(amount, row, () => densityOf(water));
+  const perKilogram =
+    amount.sort === "dissolved" && amount.per === "kilogram" ? inModelUnit(amount, row, () => 1) : null;
   const unit = displayUnit(pending.quantity, row, water);
   const place = placeOf(read.line, { start: pending.word.start, end: pending.quantity.end });
   const scale = amount.sort === "pH" ? amount.scale : null;
   const written = pending.quantity.number.text;
-  const shared = { place, system: read.line.system, parameter, written, unit };
+  const shared = {
+    place,
+    system: read.line.system,
+    parameter,
+    written,
+    writtenUnit: writtenUnit(pending.quantity),
+    unit,
+  };
   const possible = row.possible ?? [0, Number.MAX_VALUE];
   // Null: no sea water has this specific gravity or conductivity.
   const impossible = value === null || value < possible[0] || value > possible[1];
   if (impossible) {
-    read.line.report({
-      code: "reading/impossible",
-      ...shared,
-      value,
-      range: possible,
-      tenth: tenthOf(pending.quantity, row, water),
-    });
+    if (!read.disregard)
+      read.line.report({
+        code: "reading/impossible",
+        ...shared,
+        value,
+        range: possible,
+        tenth: tenthOf(pending.quantity, row, water),
+      });
     return value === null || !Number.isFinite(value)
       ? null
-      : { place, value, below: pending.below, impossible, scale, unit };
+      : { place, value, perKilogram, below: pending.below, impossible, scale, unit };
   }
   if (row.usual && !pending.below && !read.disregard && (value < row.usual[0] || value > row.usual[1])) {
     read.line.report({
@@ -192,8 +223,38 @@ function convertValue(
       tenth: tenthOf(pending.quantity, row, water),
     });
   }
-  return { place, value, below: pending.below, impossible, scale, unit };
+  return { place, value, perKilogram, below: pending.below, impossible, scale, unit };
 }
+
+/**
+ * The events as they are seen at a moment. What was written for a kilogram is turned with the salinity and
+ * temperature nearest to it; of those only what is known by then may count, so the last day's is turned again.
+ */
+export function eventsSeenAt(events: readonly SystemEvent[], at: number): readonly SystemEvent[] {
+  const reads = events.filter((event): event is ReadEvent => event.kind === "read");
+  if (!reads.some(({ minute }) => minute > at)) return events;
+  const known = reads.filter(({ minute }) => minute <= at);
+  const salinities = seenIn(known, "salinity");
+  const temperatures = seenIn(known, "temperature");
+  return events.map((event) => {
+    if (event.kind !== "read" || event.minute > at || event.minute <= at - sameDay) return event;
+    const own = (parameter: ParameterName) => inRange(parameter, event.values[parameter]?.value ?? null);
+    const water = {
+      salinity: own("salinity") ?? nearestKnown(salinities, event.minute, defaults.salinity.value).value,
+      temperatureDegC:
+        own("temperature") ?? nearestKnown(temperatures, event.minute, defaults.temperature.value).value,
+    };
+    const values = Object.entries(event.values as Record<string, ReadValue>).map(([name, value]) => [
+      name,
+      value.perKilogram === null ? value : { ...value, value: value.perKilogram * densityOf(water) },
+    ]);
+    return { ...event, values: Object.fromEntries(values) };
+  });
+}
+
+/** The unit as it stands on the line; empty for a bare number. */
+const writtenUnit = ({ unit, asCaCO3 }: QuantityText): string =>
+  `${unit?.text ?? ""}${asCaCO3 ? " as CaCO3" : ""}`;
 
 /** Says so where sea water can't have a value; false then. */
 export function isPossible(
@@ -213,6 +274,7 @@ export function isPossible(
     parameter: parameter.name,
     value,
     written: quantity.number.text,
+    writtenUnit: writtenUnit(quantity),
     unit: displayUnit(quantity, parameter, water),
     range: possible,
     tenth: tenthOf(quantity, parameter, water),

@@ -2,11 +2,12 @@
 import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Hold, System } from "../culture/model.ts";
+import { eventsSeenAt } from "../culture/readings.ts";
 import { assumeDensity, assuming } from "./assumptions.ts";
 import { type ReadingWithCarbonate, readingsUpTo } from "./carbonate-of-reading.ts";
 import { constantsOf, type SystemConstants } from "./constants.ts";
 import type { DosingFinding } from "./finding.ts";
-import { type Folded, foldEvents } from "./fold.ts";
+import { type Folded, foldEvents, uptakeOfLastDay } from "./fold.ts";
 import { checkDoses } from "./log-doses.ts";
 import { makePlan, type Plan, plannedPhases, type Situation } from "./make-plan.ts";
 import { planFindings } from "./plan-findings.ts";
@@ -37,7 +38,10 @@ export interface Assessment {
   readonly state: WaterState;
   /** Held parameters without a reading of the last seven days. */
   readonly staleParameters: readonly Tracked[];
+  /** What is taken now: plan and projection go on with it. */
   readonly uptake: Uptake | null;
+  /** The mean of the 24 hours before the moment. */
+  readonly uptakeOfLastDay: Uptake | null;
   readonly drifts: readonly Drift[];
   readonly plan: Plan | null;
   /** Day's means when the last correction ends. */
@@ -48,7 +52,8 @@ export interface Assessment {
 }
 
 /** Assesses a system at a minute. `clock`: the real time, for lines that lie past both. */
-export function assess(model: FarmModel, system: System, at: number, clock: number): Assessment {
+export function assess(model: FarmModel, declared: System, at: number, clock: number): Assessment {
+  const system: System = { ...declared, events: eventsSeenAt(declared.events, at) };
   const constants = constantsOf(model, system);
   return assessFolded(model, system, constants, foldEvents(constants, system.events, at), at, clock);
 }
@@ -57,7 +62,7 @@ function assessFolded(
   model: FarmModel,
   system: System,
   constants: SystemConstants,
-  { state, doses }: Folded,
+  { state, doses, lastDay }: Folded,
   at: number,
   clock: number,
 ): Assessment {
@@ -79,6 +84,7 @@ function assessFolded(
       ...shared,
       staleParameters,
       uptake: null,
+      uptakeOfLastDay: null,
       drifts: [],
       plan: null,
       afterPlan: null,
@@ -103,6 +109,7 @@ function assessFolded(
     ...shared,
     staleParameters,
     uptake,
+    uptakeOfLastDay: uptakeOfLastDay(constants, lastDay, uptake),
     drifts,
     plan,
     afterPlan,
@@ -133,6 +140,13 @@ function listAssumptions(
       what: "the day's course",
       value: "uptake and doses even through the day",
       basis: "no estimate from the log yet",
+    });
+  }
+  if (uptake.foodTakesMore) {
+    assumed.add({
+      what: "alkalinity that the food takes",
+      value: "no more than `uptake alkalinity` says for all",
+      basis: "what is stated goes before what is worked out",
     });
   }
   const evaporates = factAt(constants.facts.evaporatesLPerDay, state.minute);
@@ -217,23 +231,18 @@ function driftOf(
   return { parameter, hold, case: name, leavesAt, points };
 }
 
+function whyNoVolume({ measuredL, geometricL, largestDisplacement }: Volume) {
+  if (measuredL !== null) return "measured-nothing";
+  if (geometricL === null) return "no-tank";
+  return largestDisplacement ? "displaced" : "empty-tanks";
+}
+
 function volumeFindings(system: System, volume: Volume): DosingFinding[] {
   const shared = { system: system.name };
   if (volume.litres === null) {
-    const nothing = volume.geometricL === null && volume.measuredL === null;
-    const place = nothing
-      ? system.place
-      : (volume.measuredPlace ?? volume.largestDisplacement ?? system.place);
-    const reason = nothing ? "no-tank" : "nothing-left";
-    return [
-      {
-        ...shared,
-        code: "system/no-volume",
-        place,
-        reason,
-        volumeL: volume.measuredL ?? volume.geometricL ?? 0,
-      },
-    ];
+    const place = volume.measuredPlace ?? volume.largestDisplacement ?? system.place;
+    const volumeL = volume.measuredL ?? volume.geometricL ?? 0;
+    return [{ ...shared, code: "system/no-volume", place, reason: whyNoVolume(volume), volumeL }];
   }
   const { measuredL, geometricL, measuredPlace } = volume;
   if (measuredL === null || geometricL === null || !measuredPlace) return [];

@@ -61,7 +61,7 @@ function exchangeWater(model: FarmModel, ref: string, minute: number): ExchangeW
   const name = saltWater?.name ?? other?.name ?? ref;
   const stated = (parameter: ParameterName): number | null => {
     if (saltWater) return factAt(saltWater.values.get(parameter), minute)?.value ?? null;
-    return other ? lastReading(other, parameter, minute) : null;
+    return other ? (lastReading(other, parameter, minute) ?? heldAim(other, parameter, minute)) : null;
   };
   const salinity = stated("salinity") ?? defaults.salinity.value;
   const temperatureDegC = stated("temperature") ?? defaults.temperature.value;
@@ -82,10 +82,24 @@ function exchangeWater(model: FarmModel, ref: string, minute: number): ExchangeW
     value: parameter === "salinity" ? defaults.salinity.text : `as in sea water of salinity ${salinity}`,
     basis: parameter === "salinity" ? defaults.salinity.basis : "Millero et al. 2008",
   }));
+  const onlyHeld = tracked.filter(
+    (parameter) => other && stated(parameter) !== null && lastReading(other, parameter, minute) === null,
+  );
+  for (const parameter of onlyHeld) {
+    assumptions.push({
+      parameter,
+      what: `${parameter} of ${name}`,
+      value: "as it is to be held",
+      basis: "never read",
+    });
+  }
   return { values: byTracked((parameter) => stated(parameter) ?? reference[parameter]), assumptions };
 }
 
-/** The last reading of another system before a minute, else the middle of what it holds. */
+const heldAim = (system: System, parameter: ParameterName, minute: number): number | null =>
+  factAt(system.facts.holds.get(parameter), minute)?.value.aim ?? null;
+
+/** The last reading of another system before a minute; null where there is none. */
 function lastReading(system: System, parameter: ParameterName, minute: number): number | null {
   if (!isTracked(parameter) && parameter !== "temperature") return null;
   for (let index = system.events.length - 1; index >= 0; index--) {
@@ -94,5 +108,5 @@ function lastReading(system: System, parameter: ParameterName, minute: number): 
     const value = event.values[parameter];
     if (value && !value.impossible && !value.below) return value.value;
   }
-  return factAt(system.facts.holds.get(parameter), minute)?.value.aim ?? null;
+  return null;
 }

@@ -4,7 +4,7 @@ import type { ReadEvent, SystemEvent } from "../culture/model.ts";
 import type { SystemConstants } from "./constants.ts";
 import { after, type Flow, flowsSet, type Rates, ratesWith, topOffFlow } from "./rates.ts";
 import { type ByTracked, broughtPerLitre, byTracked, type Tracked, tracked } from "./tracked.ts";
-import { uptakeAt } from "./uptake.ts";
+import { meanUptake, type Uptake, uptakeAt } from "./uptake.ts";
 import { volumeAt } from "./volume.ts";
 import { type Carried, carriedMinutes, minutesPerDay, startState, type WaterState } from "./water-state.ts";
 
@@ -15,23 +15,57 @@ export interface DoseInLog {
   readonly after: WaterState;
 }
 
+/** A time between two events, with the state that it began with. */
+export interface Span {
+  readonly state: WaterState;
+  readonly from: number;
+  readonly to: number;
+}
+
 export interface Folded {
   readonly state: WaterState;
   readonly doses: readonly DoseInLog[];
+  /** The spans of the 24 hours before the moment asked. */
+  readonly lastDay: readonly Span[];
 }
 
 /** Folds all events up to a minute, and carries the water to it. Later events wait silently. */
 export function foldEvents(constants: SystemConstants, events: readonly SystemEvent[], at: number): Folded {
   let state = startState(Math.min(events[0]?.minute ?? at, at));
   const doses: DoseInLog[] = [];
+  const dayBefore = at - minutesPerDay;
+  const lastDay: Span[] = [];
+  const watch = (from: number, to: number) => {
+    const since = Math.max(from, dayBefore);
+    if (to > since) lastDay.push({ state, from: since, to });
+  };
+  // Before the log begins the stock is as declared.
+  watch(dayBefore, state.minute);
   for (const event of events) {
     if (event.minute > at) break;
+    watch(state.minute, event.minute);
     const before = carryTo(state, event.minute, constants);
     state = happen(before, event, constants);
     if (event.kind === "gave" || event.kind === "topped" || event.kind === "set" || event.kind === "started")
       doses.push({ event, before, after: state });
   }
-  return { state: carryTo(state, at, constants), doses };
+  watch(state.minute, at);
+  return { state: carryTo(state, at, constants), doses, lastDay };
+}
+
+/** Uptake over the 24 hours before a moment, piece by piece between events and changes of facts. */
+export function uptakeOfLastDay(constants: SystemConstants, lastDay: readonly Span[], now: Uptake): Uptake {
+  const { facts, changes, firstEvent } = constants;
+  const pieces = lastDay.flatMap(({ state, from, to }) => {
+    const edges = [from, ...changes.filter((change) => change > from && change < to), to];
+    return edges.slice(1).flatMap((end, index) => {
+      const middle = (edges[index]! + end) / 2;
+      const { litres } = volumeAt(facts, middle);
+      const days = (end - edges[index]!) / minutesPerDay;
+      return litres === null ? [] : [{ uptake: uptakeAt(facts, state, middle, litres, firstEvent), days }];
+    });
+  });
+  return meanUptake(pieces, now);
 }
 
 /** One step: the water carried to the event, and the event. */

@@ -229,13 +229,21 @@ function largestDelivery(
   return { litres: found.volumeL, by: words[found.bindingLimit] };
 }
 
-/** The state for chemistry: where alkalinity was never read, it stands at its aim. */
+/** The state for chemistry: where there is no recent reading of alkalinity, it stands at its aim. */
 function assumedState({ state, constants, assumed }: Situation): WaterState {
   const hold = factAt(constants.facts.holds.get("alkalinity"), state.minute)?.value;
-  if (state.carried.alkalinity || !hold) return state;
-  assumed.add({ what: "alkalinity, for pH and Ω", value: "at its aim", basis: "never read" });
+  if (!isStale(state.carried.alkalinity, state.minute) || !hold) return state;
+  assumed.add({ what: "alkalinity, for pH and Ω", value: "at its aim", basis: "no recent reading" });
   const place = { file: "", line: 0, span: null };
-  const reading = { place, value: hold.aim, below: false, impossible: false, scale: null, unit: hold.unit };
+  const reading = {
+    place,
+    value: hold.aim,
+    perKilogram: null,
+    below: false,
+    impossible: false,
+    scale: null,
+    unit: hold.unit,
+  };
   return {
     ...state,
     carried: { ...state.carried, alkalinity: { value: hold.aim, readAt: state.minute, reading } },

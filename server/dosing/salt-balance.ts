@@ -19,6 +19,8 @@ const daysPerWeek = 7;
 /** Salt gained by maintenance as planned, less what flow-through and the exchanges of the last 30 days carry off. */
 export function saltBalance(situation: Situation, system: System, plan: Plan): SaltBalance | null {
   const { constants, state, litres, assumed } = situation;
+  // Where what is kept up isn't known, what it leaves behind isn't either.
+  if (plan.answer.sources.some(({ totalLPerDay }) => totalLPerDay === null)) return null;
   const last = plannedPhases(situation, plan).at(-1);
   const rates = last && ratesAt(state, state.minute, constants, last.flows);
   if (!rates) return null;

@@ -14,6 +14,8 @@ export interface Uptake {
   readonly perDay: Readonly<Record<Dosed, number | null>>;
   /** meq a day of alkalinity lost otherwise than by calcification. */
   readonly otherLossMeqPerDay: number;
+  /** The food alone would take more alkalinity than is stated for all: the statements contradict each other. */
+  readonly foodTakesMore: boolean;
   readonly calcificationGPerDay: number | null;
   /** Mole fraction of magnesium in the mineral laid down. */
   readonly magnesiumFraction: number;
@@ -40,7 +42,7 @@ export function uptakeAt(
   litres: number,
   firstEvent: number | null,
 ): Uptake {
-  const otherLossMeqPerDay = nitrificationMeqPerDay(factAt(facts.proteinGPerDay, minute)?.value ?? 0);
+  const byFood = nitrificationMeqPerDay(factAt(facts.proteinGPerDay, minute)?.value ?? 0);
   const skeleton = factAt(facts.skeletonMagnesium, minute)?.value;
   const cohorts = cohortUptakes(facts, state, minute, firstEvent);
   const fromCohorts = cohorts.reduce((sum, { meqPerDay }) => sum + meqPerDay, 0);
@@ -56,6 +58,8 @@ export function uptakeAt(
     return entry.value.per === "litre" ? entry.value.value * litres : entry.value.value;
   };
   const statedAlkalinity = stated("alkalinity");
+  // What is stated is calcification and other loss together: the food can't take more than that.
+  const otherLossMeqPerDay = Math.min(byFood, statedAlkalinity ?? byFood);
   const calcificationMeqPerDay =
     statedAlkalinity !== null
       ? Math.max(0, statedAlkalinity - otherLossMeqPerDay)
@@ -80,6 +84,7 @@ export function uptakeAt(
       statedAlkalinity !== null ? "stated" : cohorts.length > 0 ? "cohorts" : anyStated ? "stated" : "none",
     perDay,
     otherLossMeqPerDay,
+    foodTakesMore: byFood > otherLossMeqPerDay,
     calcificationGPerDay:
       calcificationMeqPerDay === null ? null : calcificationMeqPerDay * calciumCarbonateGPerMeq,
     magnesiumFraction,
@@ -121,3 +126,25 @@ const daysPerWeek = 7;
 
 /** However long ago its count was made, a cohort takes no more than this many times what was stated. */
 const mostGrown = 1e6;
+
+/** The mean of uptakes, each weighted by its days; what is unknown at any time is unknown. */
+export function meanUptake(
+  uptakes: readonly { readonly uptake: Uptake; readonly days: number }[],
+  now: Uptake,
+): Uptake {
+  const days = uptakes.reduce((sum, each) => sum + each.days, 0);
+  if (!(days > 0)) return now;
+  const mean = (value: (uptake: Uptake) => number | null): number | null =>
+    uptakes.reduce<number | null>((sum, { uptake, days: own }) => {
+      const each = value(uptake);
+      return sum === null || each === null ? null : sum + (each * own) / days;
+    }, 0);
+  return {
+    ...now,
+    perDay: Object.fromEntries(
+      dosed.map((name) => [name, mean(({ perDay }) => perDay[name])]),
+    ) as Uptake["perDay"],
+    otherLossMeqPerDay: mean(({ otherLossMeqPerDay }) => otherLossMeqPerDay) ?? now.otherLossMeqPerDay,
+    calcificationGPerDay: mean(({ calcificationGPerDay }) => calcificationGPerDay),
+  };
+}

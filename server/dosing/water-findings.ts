@@ -10,7 +10,7 @@ import { factAt } from "../culture/history.ts";
 import type { Hold, ReadValue, System } from "../culture/model.ts";
 import type { ReadingWithCarbonate } from "./carbonate-of-reading.ts";
 import type { SystemConstants } from "./constants.ts";
-import { temperatureNow } from "./dose-chemistry.ts";
+import { salinityNow, temperatureNow } from "./dose-chemistry.ts";
 import type { DosingFinding } from "./finding.ts";
 import { limitAt } from "./limits.ts";
 import type { Plan } from "./make-plan.ts";
@@ -65,6 +65,9 @@ function valueNow(
   return lastRead(seen, name);
 }
 
+/** A value that stands on an edge is inside, whatever the last bits of its conversion say. */
+const slack = (edge: number): number => Math.abs(edge) * 1e-9;
+
 /** Where to point: at the reading that shows it, else at the hold that the carried value has left. */
 function outsideHold(seen: WaterSeen): DosingFinding[] {
   return [...seen.constants.facts.holds.keys()].flatMap((parameter): DosingFinding[] => {
@@ -74,8 +77,7 @@ function outsideHold(seen: WaterSeen): DosingFinding[] {
     const { low, high, scale, unit } = hold.value;
     const on = (value: number) => sameScale(seen, value, now.reading.scale, scale);
     const value = on(now.value);
-    const slack = Math.abs(low) * 1e-9;
-    if (value >= low - slack && value <= high + slack) return [];
+    if (value >= low - slack(low) && value <= high + slack(high)) return [];
     const read = on(now.reading.value);
     const place = read < low || read > high ? now.reading.place : hold.place;
     return [
@@ -113,7 +115,7 @@ function sameScale(
   to: ReadValue["scale"],
 ): number {
   if (!from || !to || from === to) return value;
-  const water = constantsAt(state.carried.salinity?.value ?? 35, temperatureNow(state, constants, null));
+  const water = constantsAt(salinityNow(state, constants, null), temperatureNow(state, constants, null));
   if (!water.ok) return value;
   return to === "NBS" ? value + water.nbsLessTotal : value - water.nbsLessTotal;
 }
@@ -125,9 +127,12 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
       const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);
       if (!now || !limit) return [];
       const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
-      const broken = which === "max" ? value > limit.value : value < limit.value;
+      const broken =
+        which === "max" ? value > limit.value + slack(limit.value) : value < limit.value - slack(limit.value);
       if (!broken) return [];
-      const unit = shownIn(seen.constants.facts, parameter, seen.at, now.reading);
+      const onScale = { spelling: limit.scale === "total" ? "total" : "", perModelUnit: 1 };
+      const unit =
+        parameter === "pH" ? onScale : shownIn(seen.constants.facts, parameter, seen.at, now.reading);
       const { place } = now.reading;
       return [
         {
@@ -246,7 +251,7 @@ function roomAir(seen: WaterSeen): DosingFinding[] {
   const latest = seen.readings.findLast(({ carbonate }) => carbonate !== null);
   if (!air || !hold || !latest?.carbonate || seen.at - latest.event.minute > carriedMinutes) return [];
   const { state } = latest.carbonate;
-  const salinity = seen.state.carried.salinity?.value ?? 35;
+  const salinity = salinityNow(seen.state, seen.constants, null);
   const temperature = temperatureNow(seen.state, seen.constants, null);
   const constants = constantsAt(salinity, temperature);
   if (!constants.ok) return [];

@@ -1,6 +1,7 @@
 /** What a report covers: the whole farm, a path of it, one system. Narrows what is told, never what is read. */
 import type { Problem } from "../checks/problem.ts";
 import type { System } from "../culture/model.ts";
+import { resolvePath } from "../culture/names.ts";
 import type { Farm } from "../farm.ts";
 
 export interface Scope {
@@ -49,15 +50,22 @@ function usedBy(system: System): string[] {
 export function problemsIn(scope: Scope, farm: Farm): Problem[] {
   const inPaths = farm.problems.filter(({ place }) => covers(scope, place.file));
   if (scope.system === null) return inPaths;
-  const used = solutionsIn(scope, farm);
   const files = new Set<string>();
   for (const system of farm.bound.model.systems.values()) {
     if (coversSystem(scope, system))
-      for (const file of [system.place.file, ...system.logFiles]) files.add(file);
+      for (const file of [system.place.file, ...system.logFiles]) addWithUsed(farm, file, files);
   }
-  for (const solution of farm.bound.model.solutions.values())
-    if (used.has(solution.ref)) files.add(solution.place.file);
   return inPaths.filter(
     ({ system, place }) => system === scope.system || (system === null && files.has(place.file)),
   );
+}
+
+/** A file and all that it uses: what is wrong there touches the systems that stand in it. */
+function addWithUsed(farm: Farm, file: string, files: Set<string>): void {
+  if (files.has(file)) return;
+  files.add(file);
+  for (const { path } of farm.documents.get(file)?.uses ?? []) {
+    const target = resolvePath(file, path.text);
+    if (target !== null) addWithUsed(farm, target, files);
+  }
 }

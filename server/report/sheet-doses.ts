@@ -64,8 +64,8 @@ function topOffLine(model: FarmModel, { constants, at }: Assessment): string[] {
   ];
 }
 
-function deliveryText({ dosesPerDay, litresPerDose, everyDays, totalLPerDay }: PlannedSource): string {
-  if (totalLPerDay === null || dosesPerDay === 0) return "";
+function deliveryText({ dosesPerDay, litresPerDose, everyDays }: PlannedSource): string {
+  if (dosesPerDay === 0) return "";
   const doses = dosesPerDay === 1 ? "1 dose" : `${dosesPerDay} doses`;
   return `${doses} of ${doseFigure(litresPerDose)}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
 }
@@ -77,12 +77,12 @@ function correctionText({ answer }: Plan, { correctionLPerDay, serves }: Planned
     : "";
 }
 
-function planLines(assessment: Assessment, { answer, problem }: Plan): string[] {
-  const { at } = assessment;
+function planLines(assessment: Assessment, { answer, problem, sources }: Plan): string[] {
+  const { at, state } = assessment;
   const corrections = answer.corrections.map(({ parameter, amount, days, limitedBy }) => {
     const unit = unitIn(assessment, parameter);
     const until = aboutWhen(at + days * minutesPerDay);
-    const slowed = limitedBy ? `, no faster because of the limit on ${limitedBy}` : "";
+    const slowed = limitedBy ? `, no faster because of ${reason(limitedBy)}` : "";
     return `${atStart(parameter)} comes up by ${changeFigure(parameter, amount, unit)} until ${until}${slowed}.`;
   });
   const cuts = answer.cuts.map(({ parameter, perDay, days }) => {
@@ -96,18 +96,33 @@ function planLines(assessment: Assessment, { answer, problem }: Plan): string[] 
           `What the corals take of ${oneOf(unknown).replace(" or ", " and ")} isn't known, so no maintenance is planned for it.`,
         ]
       : [];
-  return [...corrections, ...cuts, ...unknownLines];
+  const stopped = sources.flatMap(({ key, source }) =>
+    state.stopped.has(key)
+      ? [`${source.by} stands stopped in the log: start it, or what is planned for it stays out.`]
+      : [],
+  );
+  return [...stopped, ...corrections, ...cuts, ...unknownLines];
 }
+
+/** Longer, a line wouldn't fit the sheet. */
+const longestLine = 90;
+
+/** What keeps a correction from going faster, in words. */
+const reason = (by: string): string =>
+  /^(alkalinity|calcium|magnesium|potassium|strontium|pH) (rise|fall|max|min|dose)$/.test(by)
+    ? `the limit on ${by}`
+    : by;
 
 /** The `set` line that puts the pumps' part of the plan into the log. */
 function setLine({ at }: Assessment, { answer, sources }: Plan): string[] {
   const items = sources.flatMap(({ source }, index) => {
     const total = answer.sources[index]?.totalLPerDay;
     if (source.device !== "pump" || total === null || total === undefined) return [];
-    const millilitres = total * 1000;
-    return [`${source.by} ${rounded(millilitres, millilitres < 10 ? 1 : 0)} mL/day`];
+    return [`${source.by} ${figure(total * 1000, "mL")}/day`];
   });
-  return items.length > 0 ? [`${writeMoment(at).replace("T", " ")} set ${items.join(", ")}`] : [];
+  const line = (some: readonly string[]) => `${writeMoment(at).replace("T", " ")} set ${some.join(", ")}`;
+  if (items.length === 0) return [];
+  return line(items).length <= longestLine ? [line(items)] : items.map((item) => line([item]));
 }
 
 /** What the doses do to the water, and what they leave behind. */
@@ -126,7 +141,8 @@ export function effectsSection(model: FarmModel, assessment: Assessment): Sectio
       const value = name in afterPlan ? afterPlan[name as keyof typeof afterPlan] : undefined;
       return value === undefined ? [] : [`${name} ${valueFigure(name, value, unitIn(assessment, name))}`];
     });
-    lines.push(`In ${figure(answer.correctionDays, "days")}, when corrections end: ${held.join(", ")}.`);
+    if (held.length > 0)
+      lines.push(`In ${figure(answer.correctionDays, "days")}, when corrections end: ${held.join(", ")}.`);
   }
   if (salt) {
     const change = rounded(Math.abs(salt.salinityGainPerMonth), 2);

@@ -45,6 +45,6 @@ export function cautionLines(solutions: readonly Solution[], at: number): string
   });
   if (caustic.length === 0) return [];
   return [
-    `Care: ${allOf(caustic)} can hurt eyes and skin. Goggles and gloves; rinse a splash 15 minutes with water and get medical help; keep away from acid and from the calcium and magnesium parts. The supplier's safety data sheet and local rules come first.`,
+    `Care: ${allOf(caustic)} can hurt eyes and skin. Goggles and gloves; the dry reagent slowly into cold stirred water, never water onto it, no aluminium or zinc; rinse a splash 15 minutes with water and get medical help; keep away from acid and from the calcium and magnesium parts. The supplier's safety data sheet and local rules come first.`,
   ];
 }

@@ -1,6 +1,7 @@
 /** Farm → the dose sheet as plain data: headings, tables, lines. The faces (text, Markdown) only draw it. */
 
 import { writeClock } from "../../grammar/dates.ts";
+import { figure } from "../checks/figures.ts";
 import type { Problem } from "../checks/problem.ts";
 import { dayText } from "../checks/words.ts";
 import type { Assessment } from "../dosing/assess.ts";
@@ -53,7 +54,7 @@ function systemSheet(farm: Farm, assessment: Assessment, problems: readonly Prob
   const net =
     volume.litres === null
       ? "volume unknown"
-      : `${volume.litres.toFixed(volume.litres < 100 ? 1 : 0)} L of water`;
+      : `${volume.litres < 1 ? figure(volume.litres * 1000, "mL") : figure(volume.litres, "L")} of water`;
   const sections = [
     dosesSection(farm.bound.model, assessment),
     ...(problems.length > 0 ? [problemSection(farm, "To look at", problems)] : []),

@@ -84,7 +84,7 @@ function nowReport({ state, staleParameters }: Assessment) {
   };
 }
 
-function uptakeReport({ uptake, volume }: Assessment) {
+function uptakeReport({ uptakeOfLastDay: uptake, volume }: Assessment) {
   const perLitre = (amount: number | null | undefined) =>
     amount === null || amount === undefined || volume.litres === null ? null : amount / volume.litres;
   return {

@@ -46,14 +46,39 @@ function tableLines({ columns, rows }: Table, paint: Paint): string[] {
   const shown = columns
     .map((column, index) => ({ ...column, index }))
     .filter(({ index, title }) => title === "" || rows.some((row) => row[index]));
-  const widths = shown.map(({ title, index }) =>
-    Math.max(title.length, ...rows.map((row) => (row[index] ?? "").length)),
+  const widths = fitting(
+    shown.map(({ title, index, align }) => ({
+      align,
+      width: Math.max(title.length, ...rows.map((row) => (row[index] ?? "").length)),
+    })),
   );
   const line = (cells: readonly string[]) =>
-    `  ${cells.map((cell, place) => (shown[place]?.align === "right" ? cell.padStart(widths[place] ?? 0) : cell.padEnd(widths[place] ?? 0))).join("  ")}`.trimEnd();
+    `  ${cells
+      .map((cell, place) => {
+        const width = widths[place] ?? 0;
+        const text = cell.length <= width ? cell : `${cell.slice(0, width - 1)}…`;
+        return shown[place]?.align === "right" ? text.padStart(width) : text.padEnd(width);
+      })
+      .join("  ")}`.trimEnd();
   const head = paint("dim", cut(line(shown.map(({ title }) => title))));
   return [head, ...rows.map((row) => cut(line(shown.map(({ index }) => row[index] ?? ""))))];
 }
+
+/** Names give way so that figures keep their room: the widest words of the first columns are cut. */
+function fitting(columns: readonly { readonly align: "left" | "right"; readonly width: number }[]): number[] {
+  const widths = columns.map(({ width }) => width);
+  const over = () => 2 + widths.reduce((sum, width) => sum + width + 2, -2) - textWidth;
+  for (let excess = over(); excess > 0; excess = over()) {
+    const names = widths.slice(0, 2);
+    const widest = names.indexOf(Math.max(...names));
+    if ((widths[widest] ?? 0) <= leastName) break;
+    widths[widest] = Math.max(leastName, (widths[widest] ?? 0) - 1);
+  }
+  return widths;
+}
+
+/** A name cut shorter than this tells nothing. */
+const leastName = 10;
 
 const severityStyle = { error: "red", warning: "yellow", info: "cyan", hint: "dim" } as const;
 

@@ -197,22 +197,22 @@ system vat
   tank sump 80
             ^^ error unit/missing 80 stands without a unit, where a volume is wanted.
   evaporates 4 L
-               ^ error unit/dimension L doesn't measure a volume over time. What this line says of it is left out. Write it in mL/min or L/day.
+               ^ error unit/dimension L doesn't measure a volume over time. This line is left out. Write it in mL/min or L/day.
   hold temperature 24 to 26 mg/L
-                            ^^^^ error unit/dimension mg/L doesn't measure temperature. What this line says of it is left out. Write it in degC or degF.
+                            ^^^^ error unit/dimension mg/L doesn't measure temperature. This line is left out. Write it in degC or degF.
   limit alkalinity rise 0.5 dKH
-                            ^^^ error unit/dimension dKH doesn't measure alkalinity over time. What this line says of it is left out. Write it in dKH/day or meq/L/day.
+                            ^^^ error unit/dimension dKH doesn't measure alkalinity over time. This line is left out. Write it in dKH/day or meq/L/day.
   evaporates 4 L/dya
-               ^^^^^ error unit/unknown "dya" is no unit. What this line says of it is left out.
+               ^^^^^ error unit/unknown "dya" is no unit. This line is left out.
   limit pH max 8.6 dKH
-                   ^^^ error unit/dimension dKH doesn't measure pH. What this line says of it is left out. Write it without a unit, or in total.
+                   ^^^ error unit/dimension dKH doesn't measure pH. This line is left out. Write it without a unit, or in total.
 `));
 
   test("as CaCO3 missing, and where it can't be", () =>
     void problems(`
 saltwater mix
   alkalinity 140 mg/L
-                 ^^^^ error unit/as-caco3 Alkalinity in mg/L says nothing without what it is counted as. So many mg or mmol are more or less alkalinity, depending on the substance that they count. What this line says of it is left out. Write mg/L as CaCO3, or use meq or dKH.
+                 ^^^^ error unit/as-caco3 Alkalinity in mg/L says nothing without what it is counted as. So many mg or mmol are more or less alkalinity, depending on the substance that they count. This line is left out. Write mg/L as CaCO3, or use meq or dKH.
   strontium 8 mg/L as CaCO3
                    ^^^^^^^^ error unit/as-caco3 As CaCO3 can't follow mg/L here. Only alkalinity, and calcium and magnesium in mg/L, are told so.
   calcium 425 ppm

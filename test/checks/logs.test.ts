@@ -59,9 +59,9 @@ log vat
                         ^^^^^^^^^^^^^^^^^ error reading/impossible Sea water can't have 79 dKH of alkalinity. It stays in the report and is left out of every estimate. Is this 7.9?
                                            ^^^^^^^^^^^^^^^ warning reading/unusual 42 mg/L is unusual for calcium; usual is 300 to 600 mg/L.
   2026-11-29 09:00 read pH 2.9, salinity 71, temperature 77 degC
-                        ^^^^^^ error reading/impossible Sea water can't have a pH of 2.90. It stays in the report and is left out of every estimate. Check the number and its unit; possible is 4 to 11.
-                                ^^^^^^^^^^^ error reading/impossible Sea water can't have a salinity of 71.0.
-                                             ^^^^^^^^^^^^^^^^^^^ error reading/impossible Sea water can't have a temperature of 77.0 °C.
+                        ^^^^^^ error reading/impossible Sea water can't have a pH of 2.9. It stays in the report and is left out of every estimate. Check the number and its unit; possible is 4 to 11.
+                                ^^^^^^^^^^^ error reading/impossible Sea water can't have a salinity of 71.
+                                             ^^^^^^^^^^^^^^^^^^^ error reading/impossible Sea water can't have a temperature of 77 degC.
   2026-11-29 10:00 read alkalinity 9.9 dKH disregard "reagent out of date"
                                                      ^^^^^^^^^^^^^^^^^^^^^ info reading/disregarded The readings of this line are disregarded: "reagent out of date".
 `);

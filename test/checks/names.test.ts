@@ -6,11 +6,11 @@ test("names that nobody declares, declares elsewhere, or that are something else
 system vat
   tank main 500 L
   pump head-1 gives ash-prat at 40 mL/min
-                    ^^^^^^^^ error name/undeclared No solution "ash-prat" is declared here. What this line says of it is left out. Is ash-part meant?
+                    ^^^^^^^^ error name/undeclared No solution "ash-prat" is declared here. This line is left out. Is ash-part meant?
   pump head-2 gives bench at 40 mL/min
                     ^^^^^ error name/undeclared "bench" is a kit, and a solution is wanted here.
   pump head-3 gives chloride-part at 40 mL/min
-                    ^^^^^^^^^^^^^ error name/undeclared "chloride-part" is declared in shared/solutions.marl, which this file doesn't use. What this line says of it is left out. Put use "shared/solutions.marl" at the top.
+                    ^^^^^^^^^^^^^ error name/undeclared "chloride-part" is declared in shared/solutions.marl, which this file doesn't use. This line is left out. Put use "shared/solutions.marl" at the top.
   by-hand ash-part
 
 kit bench
@@ -20,11 +20,11 @@ solution ash-part
 
 log vat
   2026-11-30 08:00 stopped head-9
-                           ^^^^^^ error name/undeclared This system has no pump "head-9". What this line says of it is left out. Declare it in the system's section.
+                           ^^^^^^ error name/undeclared This system has no pump "head-9". This line is left out. Declare it in the system's section.
   2026-11-30 08:00 removed plugs 3 pieces
                            ^^^^^ error name/undeclared This system has no cohort "plugs".
   2026-11-30 08:00 read temperature 25 degC with bnech
-                                                 ^^^^^ error name/undeclared No kit "bnech" is declared here. What this line says of it is left out. Is bench meant?
+                                                 ^^^^^ error name/undeclared No kit "bnech" is declared here. The readings count all the same. Is bench meant?
   2026-11-30 09:00 read temperature 25 degC with bench
 // file: shared/solutions.marl
 solution chloride-part
@@ -45,7 +45,7 @@ solution ash-part
 
 log vat
   2026-11-30 08:00 set ash-part 20 mL/day
-                       ^^^^^^^^ error name/undeclared "ash-part" is given by more than one source: head-1 and by hand. What this line says of it is left out. Write the name of the pump that is meant.
+                       ^^^^^^^^ error name/undeclared "ash-part" is given by more than one source: head-1 and by hand. This line is left out. Write the name of the pump that is meant.
 `);
 });
 

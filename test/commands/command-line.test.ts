@@ -111,10 +111,10 @@ describe("what is printed", () => {
 
   test("colour only where it is wanted", () => {
     const root = folder({ "farm.marl": misspelt });
-    const escape = "\u001b[";
-    expect(marl(root, ["check", ...at]).out).not.toContain(escape);
-    expect(marl(root, ["check", "--color", ...at]).out).toContain(escape);
-    expect(marl(root, ["check", "--color", ...at], { NO_COLOR: "1" }).out).not.toContain(escape);
+    const escapeCode = "\u001b[";
+    expect(marl(root, ["check", ...at]).out).not.toContain(escapeCode);
+    expect(marl(root, ["check", "--color", ...at]).out).toContain(escapeCode);
+    expect(marl(root, ["check", "--color", ...at], { NO_COLOR: "1" }).out).not.toContain(escapeCode);
   });
 
   test("help lists every command, and each command its options", () => {

@@ -34,7 +34,18 @@ export function minute(text: string): number {
 function inWords(finding: CultureFinding): string {
   const about = Object.entries(finding).flatMap(([key, value]) => {
     if (
-      ["code", "place", "system", "unit", "range", "expected", "examples", "first", "written"].includes(key)
+      [
+        "code",
+        "place",
+        "system",
+        "unit",
+        "range",
+        "expected",
+        "examples",
+        "first",
+        "written",
+        "writtenUnit",
+      ].includes(key)
     )
       return [];
     if (value === null || value === "") return [];
