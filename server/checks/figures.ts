@@ -20,7 +20,7 @@ const withUnit = (number: string, unit: string): string => (unit === "" ? number
 /** Units of plain figures, and the decimals that each is told with. */
 const decimalsOfUnit = {
   L: (size) => (size < 9.95 ? 1 : 0),
-  mL: (size) => (size < 0.0995 ? 3 : size < 0.995 ? 2 : size < 9.95 ? 1 : 0),
+  mL: (size) => (size === 0 ? 0 : size < 0.0995 ? 3 : size < 0.995 ? 2 : size < 9.95 ? 1 : 0),
   days: () => 1,
   "°C": () => 1,
   salinity: () => 1,
