@@ -1,7 +1,8 @@
 /** The standing facts of a system: lines of its section, made into histories. */
 import type { ParameterName } from "../../grammar/parameters.ts";
 import type { Fact, SystemFact } from "../../grammar/syntax.ts";
-import { readCarbonDioxide, readUptake } from "../quantity/concentration.ts";
+import { readCarbonDioxide } from "../quantity/carbon-dioxide.ts";
+import { readUptake } from "../quantity/concentration.ts";
 import { toDouble } from "../quantity/decimal.ts";
 import { bindCohort } from "./bind-cohort.ts";
 import { bindHold, bindLimit } from "./bind-hold.ts";

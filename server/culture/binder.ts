@@ -5,7 +5,8 @@ import { type Parameter, parameterOf, parameterTable } from "../../grammar/param
 import type { NumberWord, QuantityText, Span, Word } from "../../grammar/syntax.ts";
 import { answeredRange } from "../chemistry/constants-at.ts";
 import { densityKgPerL } from "../chemistry/sea-water.ts";
-import { type Amount, asDifference, readConcentration, type Written } from "../quantity/concentration.ts";
+import type { Amount, Written } from "../quantity/amount.ts";
+import { asDifference, readConcentration } from "../quantity/concentration.ts";
 import { type Decimal34, toDouble } from "../quantity/decimal.ts";
 import type { QuantityFinding, Reading } from "../quantity/finding.ts";
 import { type PlainKind, readPlain } from "../quantity/plain.ts";

@@ -8,7 +8,7 @@ import {
   specificGravity,
   specificGravityScales,
 } from "../chemistry/salinity.ts";
-import type { Amount } from "../quantity/concentration.ts";
+import type { Amount } from "../quantity/amount.ts";
 import { Decimal34, toDouble } from "../quantity/decimal.ts";
 import { defaults } from "./defaults.ts";
 

@@ -4,7 +4,8 @@
  */
 import { type Parameter, type ParameterName, parameterOf } from "../../grammar/parameters.ts";
 import type { QuantityText, ReadItem, Span, Word } from "../../grammar/syntax.ts";
-import { asValue, readConcentration, type Written } from "../quantity/concentration.ts";
+import type { Written } from "../quantity/amount.ts";
+import { asValue, readConcentration } from "../quantity/concentration.ts";
 import {
   densityOf,
   displayUnit,

@@ -3,7 +3,7 @@ import { factAt } from "../culture/history.ts";
 import type { System } from "../culture/model.ts";
 import type { DosingFinding } from "./finding.ts";
 import { heldNow, noRecentReading, type Plan, type Situation, salinityFirst } from "./make-plan.ts";
-import type { PlanObstacle } from "./plan-problem.ts";
+import type { PlanObstacle } from "./plan/problem.ts";
 
 export function planFindings(situation: Situation, system: System, plan: Plan): DosingFinding[] {
   return [...obstacleFindings(situation, system, plan), ...rareDoses(situation, system, plan)];

@@ -8,7 +8,7 @@ import type { FarmModel } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import { balanceOf } from "../dosing/balance.ts";
 import type { Plan } from "../dosing/make-plan.ts";
-import type { PlannedSource } from "../dosing/plan-problem.ts";
+import type { PlannedSource } from "../dosing/plan/problem.ts";
 import { topOffFlow } from "../dosing/rates.ts";
 import { minutesPerDay } from "../dosing/water-state.ts";
 import { type Section, section } from "./sheet-model.ts";

@@ -3,12 +3,12 @@ import { expect } from "vitest";
 import { readLine } from "../../grammar/line.ts";
 import { type ParameterName, parameterOf } from "../../grammar/parameters.ts";
 import type { QuantityText } from "../../grammar/syntax.ts";
+import type { Amount } from "../../server/quantity/amount.ts";
+import { readCarbonDioxide } from "../../server/quantity/carbon-dioxide.ts";
 import {
-  type Amount,
   asDifference,
   asRate,
   asValue,
-  readCarbonDioxide,
   readCohortUptake,
   readConcentration,
   readStrength,

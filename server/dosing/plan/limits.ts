@@ -1,6 +1,6 @@
 /** The hard limits on one day's change, as bounds on what may still be planned. */
-import type { PlanNumbers } from "./plan-numbers.ts";
-import type { LinearRow } from "./plan-simplex.ts";
+import type { PlanNumbers } from "./numbers.ts";
+import type { LinearRow } from "./simplex.ts";
 
 /** A row of the linear problem with the limit that it stands for, in words of the report. */
 export interface LimitRow extends LinearRow {

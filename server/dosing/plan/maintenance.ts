@@ -1,11 +1,11 @@
 /** Litres a day that meet the needs, the weightier parameter first, around what always runs and within the limits. */
 import { deliverableL } from "./deliveries.ts";
-import { ceilingRows, fullRow, type LimitRow, limitRows, roomBeside, scaledEffects } from "./plan-limits.ts";
-import { atMax, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
-import { type LinearRow, lexicographicMinimum } from "./plan-simplex.ts";
+import { ceilingRows, fullRow, type LimitRow, limitRows, roomBeside, scaledEffects } from "./limits.ts";
+import { atMax, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import { type LinearRow, lexicographicMinimum } from "./simplex.ts";
 
 /** One parameter as maintenance sees it at some stage of the plan. */
-export interface WaterState {
+export interface ParameterState {
   readonly now: number | null;
   /** What happens a day without any source. */
   readonly passivePerDay: number;
@@ -32,14 +32,18 @@ export function servesUnknownOnly(numbers: PlanNumbers, j: number): boolean {
 }
 
 /** The greatest parameter limit that forbids a source altogether, in words of the report. */
-export function forbiddenBy(numbers: PlanNumbers, states: readonly WaterState[], j: number): string | null {
+export function forbiddenBy(
+  numbers: PlanNumbers,
+  states: readonly ParameterState[],
+  j: number,
+): string | null {
   const over = numbers.parameters.find(
     ({ max }, p) => numbers.effect[p]![j]! > 0 && atMax({ now: states[p]!.now, max }),
   );
   return over ? `${over.name} max` : null;
 }
 
-export function maintenance(numbers: PlanNumbers, states: readonly WaterState[]): Maintenance {
+export function maintenance(numbers: PlanNumbers, states: readonly ParameterState[]): Maintenance {
   const { sources, ceilingL, ceilingBy, raises } = numbers;
   const usable = sources.map(
     (source, j) =>
@@ -86,7 +90,7 @@ interface Solved {
 
 function solve(
   numbers: PlanNumbers,
-  states: readonly WaterState[],
+  states: readonly ParameterState[],
   usable: readonly boolean[],
   most: readonly number[],
   mostBy: readonly string[],
@@ -125,7 +129,7 @@ function solve(
  */
 function deviationRows(
   numbers: PlanNumbers,
-  states: readonly WaterState[],
+  states: readonly ParameterState[],
   planned: readonly number[],
   always: readonly number[],
 ): { row: LinearRow; objective: number[] }[] {
@@ -152,7 +156,12 @@ export const leastOfTheLater = (numbers: PlanNumbers, planned: readonly number[]
     .map((j) => planned.map((other) => (other === j ? 1 : 0)));
 
 /** Why a parameter doesn't get what it should: the first reason of the first source that could raise it. */
-function whatHolds(numbers: PlanNumbers, states: readonly WaterState[], p: number, solved: Solved): string {
+function whatHolds(
+  numbers: PlanNumbers,
+  states: readonly ParameterState[],
+  p: number,
+  solved: Solved,
+): string {
   const { parameters, raises, effect, ceilingBy } = numbers;
   const own = solved.planned
     .map((j, column) => (raises[p]![j] ? fullRow(solved.rows, solved.values, column)?.by : undefined))

@@ -1,7 +1,7 @@
 /** What the corrections planned so far leave free: litres, room under the limits, distances to the aims. */
-import { type CutPlan, subsetsOf, wishedRate } from "./plan-cuts.ts";
-import { type Room, roomBeside } from "./plan-limits.ts";
-import { negligible, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
+import { type CutPlan, subsetsOf, wishedRate } from "./cuts.ts";
+import { type Room, roomBeside } from "./limits.ts";
+import { negligible, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
 
 export interface Ledger {
   /** Litres a day free at every stage of the cuts. */

@@ -1,8 +1,8 @@
 /** What a correction does to the other parameters, as rows of its linear problem. */
-import { type Ledger, openAmount, wishedPerDay } from "./plan-ledger.ts";
-import { type LimitRow, scaledEffects } from "./plan-limits.ts";
-import type { PlanNumbers } from "./plan-numbers.ts";
-import type { LinearRow } from "./plan-simplex.ts";
+import { type Ledger, openAmount, wishedPerDay } from "./ledger.ts";
+import { type LimitRow, scaledEffects } from "./limits.ts";
+import type { PlanNumbers } from "./numbers.ts";
+import type { LinearRow } from "./simplex.ts";
 
 /** A correction to be planned. */
 export interface Task {

@@ -2,7 +2,7 @@
  * The plan as a problem of plain numbers: what must be supplied, what may be given, within which limits; and
  * its answer. Concentrations are in a parameter's own unit (meq/L, mg/L), volumes in litres, times in days.
  */
-import type { ParameterName } from "../../grammar/parameters.ts";
+import type { ParameterName } from "../../../grammar/parameters.ts";
 
 /** A parameter that is held and that some source can raise, in order of priority: alkalinity, calcium, magnesium, the rest. */
 export interface PlanParameter {

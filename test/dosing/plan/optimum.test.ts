@@ -2,8 +2,8 @@
 import fc from "fast-check";
 import { expect, test } from "vitest";
 import { solve as solveLinear } from "yalps";
-import type { PlanParameter, PlanProblem } from "../../server/dosing/plan-problem.ts";
-import { solvePlan } from "../../server/dosing/plan-solve.ts";
+import type { PlanParameter, PlanProblem } from "../../../server/dosing/plan/problem.ts";
+import { solvePlan } from "../../../server/dosing/plan/solve.ts";
 import {
   alkalinity,
   alwaysOf,
@@ -16,7 +16,7 @@ import {
   randomProblem,
   real,
   runs,
-} from "./plan-fixtures.ts";
+} from "./fixtures.ts";
 
 const infinite = Number.POSITIVE_INFINITY;
 

@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { expect, test } from "vitest";
-import { deliverableL, deliveriesOf } from "../../server/dosing/deliveries.ts";
-import { real } from "./plan-fixtures.ts";
+import { deliverableL, deliveriesOf } from "../../../server/dosing/plan/deliveries.ts";
+import { real } from "./fixtures.ts";
 
 const head = { largestDoseL: 0.01, leastDoseL: 0.001, deliveries: { kind: "at-most", count: 24 } } as const;
 const byHand = { largestDoseL: 0.01, leastDoseL: 0, deliveries: { kind: "fixed", count: 3 } } as const;

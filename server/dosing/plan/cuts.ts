@@ -1,5 +1,5 @@
 /** The way down from above the aim: how much lower maintenance runs, how long, and maintenance at each stage of it. */
-import { type Maintenance, maintenance, type WaterState } from "./plan-maintenance.ts";
+import { type Maintenance, maintenance, type ParameterState } from "./maintenance.ts";
 import {
   atMax,
   daysToClose,
@@ -8,7 +8,7 @@ import {
   type PlanNumbers,
   rounding,
   supplyOf,
-} from "./plan-numbers.ts";
+} from "./numbers.ts";
 
 /** Parameters (by index) whose cut still runs. */
 export type Running = ReadonlySet<number>;
@@ -19,7 +19,7 @@ export interface CutPlan {
   /** Maintenance while the given cuts run; solved once for each set. */
   readonly during: (running: Running) => Maintenance;
   /** The water while the given cuts run; the others of `wished` stand at their aim. */
-  readonly states: (running: Running) => readonly WaterState[];
+  readonly states: (running: Running) => readonly ParameterState[];
 }
 
 /** The rate towards the aim: 7 days for the distance to it, one day for what lies outside the band. */
@@ -27,7 +27,7 @@ export const wishedRate = (toAim: number, toBand: number): number => toAim / 7 +
 
 export function cutPlan(numbers: PlanNumbers): CutPlan {
   const wished = new Set(numbers.parameters.map((_, p) => p).filter((p) => isCut(numbers, p)));
-  const states = (running: Running): WaterState[] =>
+  const states = (running: Running): ParameterState[] =>
     numbers.parameters.map(({ now, aim, needPerDay, passivePerDay }, p) => {
       const need = needPerDay === null ? null : Math.max(0, needPerDay);
       if (running.has(p))

@@ -1,6 +1,11 @@
 /** Plan problems for tests: a plain source and parameter to vary, and random ones. */
 import fc from "fast-check";
-import type { PlanAnswer, PlanParameter, PlanProblem, PlanSource } from "../../server/dosing/plan-problem.ts";
+import type {
+  PlanAnswer,
+  PlanParameter,
+  PlanProblem,
+  PlanSource,
+} from "../../../server/dosing/plan/problem.ts";
 
 export const meqPerLPerDkh = 20 / 56.077;
 

@@ -1,11 +1,12 @@
 /** From the plan's problem to its answer: maintenance, cuts, corrections, then how each source gives its litres. */
+
+import { type Correction, corrections } from "./correction.ts";
+import { type CutPlan, type CutStage, cutPlan, cutStages } from "./cuts.ts";
 import { deliveriesOf } from "./deliveries.ts";
-import { type Correction, corrections } from "./plan-correction.ts";
-import { type CutPlan, type CutStage, cutPlan, cutStages } from "./plan-cuts.ts";
-import { servesUnknownOnly } from "./plan-maintenance.ts";
-import { type PlanNumbers, planNumbers, rounding, supplyOf } from "./plan-numbers.ts";
-import { limitedBy, obstacles } from "./plan-obstacles.ts";
-import type { PlanAnswer, PlannedSource, PlanPhase, PlanProblem } from "./plan-problem.ts";
+import { servesUnknownOnly } from "./maintenance.ts";
+import { type PlanNumbers, planNumbers, rounding, supplyOf } from "./numbers.ts";
+import { limitedBy, obstacles } from "./obstacles.ts";
+import type { PlanAnswer, PlannedSource, PlanPhase, PlanProblem } from "./problem.ts";
 
 /**
  * Total and deterministic: the same problem gives the same answer to the last bit, and no figure in it is

@@ -1,8 +1,8 @@
 /** The plan on cases worked by hand. */
 import { expect, test } from "vitest";
-import type { PlanProblem } from "../../server/dosing/plan-problem.ts";
-import { solvePlan } from "../../server/dosing/plan-solve.ts";
-import { alkalinity, calcium, magnesium, meqPerLPerDkh, pump, valueAt } from "./plan-fixtures.ts";
+import type { PlanProblem } from "../../../server/dosing/plan/problem.ts";
+import { solvePlan } from "../../../server/dosing/plan/solve.ts";
+import { alkalinity, calcium, magnesium, meqPerLPerDkh, pump, valueAt } from "./fixtures.ts";
 
 const plan = (parameters: PlanProblem["parameters"], sources: PlanProblem["sources"], volumeL = 1000) => {
   const problem = { volumeL, exchangePerDay: 0, parameters, sources };

@@ -1,8 +1,8 @@
 /** What stands in the way of what should be given, in words of the report. */
-import type { Correction } from "./plan-correction.ts";
-import { type CutPlan, wishedRate } from "./plan-cuts.ts";
-import { atMax, negligible, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
-import type { PlanObstacle } from "./plan-problem.ts";
+import type { Correction } from "./correction.ts";
+import { type CutPlan, wishedRate } from "./cuts.ts";
+import { atMax, negligible, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import type { PlanObstacle } from "./problem.ts";
 
 export function obstacles(
   numbers: PlanNumbers,

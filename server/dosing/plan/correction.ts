@@ -1,17 +1,17 @@
 /** The way up from below the aim, one parameter after the other, beside maintenance and within what it leaves free. */
-import { burdenRows, type Task, wholeLengthRows } from "./plan-correction-rows.ts";
-import type { CutPlan } from "./plan-cuts.ts";
-import { enter, type Ledger, openAmount, openLedger, wishedPerDay } from "./plan-ledger.ts";
-import { ceilingRows, fullRow, type LimitRow, limitRows, scaledEffects } from "./plan-limits.ts";
+import { burdenRows, type Task, wholeLengthRows } from "./correction-rows.ts";
+import type { CutPlan } from "./cuts.ts";
+import { enter, type Ledger, openAmount, openLedger, wishedPerDay } from "./ledger.ts";
+import { ceilingRows, fullRow, type LimitRow, limitRows, scaledEffects } from "./limits.ts";
 import {
   forbiddenBy,
   givable,
   leastOfTheLater,
   type Maintenance,
-  type WaterState,
-} from "./plan-maintenance.ts";
-import { daysToClose, type PlanNumbers, rounding, supplyOf } from "./plan-numbers.ts";
-import { lexicographicMinimum } from "./plan-simplex.ts";
+  type ParameterState,
+} from "./maintenance.ts";
+import { daysToClose, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import { lexicographicMinimum } from "./simplex.ts";
 
 export interface Correction {
   readonly parameter: number;
@@ -59,7 +59,7 @@ export function corrections(numbers: PlanNumbers, cuts: CutPlan): Correction[] {
 function correct(
   numbers: PlanNumbers,
   ledger: Ledger,
-  states: readonly WaterState[],
+  states: readonly ParameterState[],
   current: Maintenance,
   task: Task,
 ): Correction {
@@ -153,7 +153,7 @@ function solve(
 function whatHolds(
   numbers: PlanNumbers,
   ledger: Ledger,
-  states: readonly WaterState[],
+  states: readonly ParameterState[],
   { parameter: p, candidates }: Task,
   solved: Solved,
 ): string {

@@ -1,8 +1,13 @@
 /** What holds of every plan: checked on random problems with arithmetic of its own, straight from the problem. */
 import fc from "fast-check";
 import { expect, test } from "vitest";
-import type { PlanAnswer, PlanParameter, PlanProblem, PlanSource } from "../../server/dosing/plan-problem.ts";
-import { solvePlan } from "../../server/dosing/plan-solve.ts";
+import type {
+  PlanAnswer,
+  PlanParameter,
+  PlanProblem,
+  PlanSource,
+} from "../../../server/dosing/plan/problem.ts";
+import { solvePlan } from "../../../server/dosing/plan/solve.ts";
 import {
   alwaysOf,
   bandOf,
@@ -13,7 +18,7 @@ import {
   runs,
   valueAt,
   wellEquipped,
-} from "./plan-fixtures.ts";
+} from "./fixtures.ts";
 
 const infinite = Number.POSITIVE_INFINITY;
 

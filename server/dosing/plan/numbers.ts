@@ -1,5 +1,5 @@
 /** The plan's problem made ready for arithmetic: effects per litre, what each source may give, scales. */
-import type { PlanParameter, PlanProblem, PlanSource } from "./plan-problem.ts";
+import type { PlanParameter, PlanProblem, PlanSource } from "./problem.ts";
 
 export interface PlanNumbers {
   readonly exchangePerDay: number;

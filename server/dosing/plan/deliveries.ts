@@ -1,5 +1,5 @@
 /** A daily volume as deliveries: how many, how large, on which days. Doesn't choose the times of day. */
-import type { PlanSource } from "./plan-problem.ts";
+import type { PlanSource } from "./problem.ts";
 
 export interface Deliveries {
   readonly dosesPerDay: number;
