@@ -51,8 +51,9 @@ const exists = (path: string): Promise<boolean> =>
   );
 
 /**
- * All files of a farm with their texts. Dot-folders and `node_modules` are left out, links aren't followed, a
- * folder below with a `farm.marl` of its own is another farm.
+ * All files of a farm with their texts. Dot-folders and `node_modules` are left out, a folder below with a
+ * `farm.marl` of its own is another farm. A link to a place inside the farm is another name for it, one that
+ * leads out isn't followed.
  */
 export async function readFarm(root: string): Promise<ReadonlyMap<string, FileChange>> {
   const files = new Map<string, FileChange>();
@@ -65,6 +66,7 @@ async function readFolder(root: string, folder: string, files: Map<string, FileC
   try {
     names = (await readdir(join(root, folder))).sort();
   } catch {
+    files.set(folder, { unreadable: "this folder can't be opened" });
     return;
   }
   if (folder !== "" && names.includes(farmPage)) return;
@@ -74,7 +76,19 @@ async function readFolder(root: string, folder: string, files: Map<string, FileC
     if (kind?.isDirectory()) {
       if (!name.startsWith(".") && name !== "node_modules") await readFolder(root, path, files);
     } else if (kind?.isFile() && isMarl(name)) files.set(path, await readText(join(root, path)));
+    else if (kind?.isSymbolicLink()) {
+      const target = await insideOf(root, join(root, path));
+      if (target !== null) files.set(path, { linkTo: target });
+    }
   }
+}
+
+/** Where in the farm a link leads, with `/`; null where it leads out or nowhere. */
+async function insideOf(root: string, link: string): Promise<string | null> {
+  const target = await realpath(link).catch(() => null);
+  if (target === null) return null;
+  const path = relative(root, target).split(sep).join("/");
+  return path === "" || path === ".." || path.startsWith("../") ? null : path;
 }
 
 const utf8 = new TextDecoder("utf-8", { fatal: true, ignoreBOM: true });

@@ -13,8 +13,15 @@ export interface Moment {
   readonly clock: number;
 }
 
-/** What became of a file since the last time: its text, that it can't be read, or null where it is gone. */
-export type FileChange = { readonly text: string } | { readonly unreadable: string } | null;
+/**
+ * What became of a file since the last time: its text, that it can't be read, that it is another name for a
+ * file or folder of the farm, or null where it is gone.
+ */
+export type FileChange =
+  | { readonly text: string }
+  | { readonly unreadable: string }
+  | { readonly linkTo: string }
+  | null;
 
 export interface Farm {
   readonly moment: Moment;
@@ -22,6 +29,8 @@ export interface Farm {
   readonly documents: ReadonlyMap<string, MarlDocument>;
   readonly texts: ReadonlyMap<string, string>;
   readonly unreadable: ReadonlyMap<string, string>;
+  /** By the path of a link, the path that it leads to. */
+  readonly links: ReadonlyMap<string, string>;
   readonly bound: BoundFarm;
   /** By the system's reference, in order of declaration. */
   readonly assessments: ReadonlyMap<string, Assessment>;
@@ -56,7 +65,7 @@ export function* advanceBySystem(
 ): Generator<Progress, Farm> {
   const files = changedFiles(previous, changes);
   const sameFiles = previous !== null && changes.size === 0;
-  const bound = sameFiles ? previous.bound : bindFarm(files.documents);
+  const bound = sameFiles ? previous.bound : bindFarm(files.documents, files.links);
   const sameMoment =
     previous !== null && previous.moment.at === moment.at && previous.moment.clock === moment.clock;
   if (sameFiles && sameMoment) return previous;
@@ -84,16 +93,19 @@ function changedFiles(previous: Farm | null, changes: ReadonlyMap<string, FileCh
   const documents = new Map(previous?.documents);
   const texts = new Map(previous?.texts);
   const unreadable = new Map(previous?.unreadable);
+  const links = new Map(previous?.links);
   for (const [file, change] of changes) {
     documents.delete(file);
     texts.delete(file);
     unreadable.delete(file);
+    links.delete(file);
     if (change === null) continue;
     if ("unreadable" in change) unreadable.set(file, change.unreadable);
+    else if ("linkTo" in change) links.set(file, change.linkTo);
     else {
       texts.set(file, change.text);
       documents.set(file, readDocument(change.text, previous?.documents.get(file)));
     }
   }
-  return { documents, texts, unreadable };
+  return { documents, texts, unreadable, links };
 }

@@ -73,7 +73,7 @@ test("the walk can be watched, system by system", () => {
   expect(seen).toEqual(["1/3 lagoon", "2/3 quarantine", "3/3 raceways"]);
 });
 
-test("logs split over files and lines in another order give the same report to the last bit", () => {
+test("logs split over files, copied, and lines in another order give the same report to the last bit", () => {
   const report = (texts: ReadonlyMap<string, string>) => {
     const { systems } = reportOn(fresh(texts), wholeFarm);
     // Places of readings may differ, figures may not.
@@ -89,6 +89,10 @@ test("logs split over files and lines in another order give the same report to t
   const body = lines.slice(header + 1);
   const reversed = new Map(files).set("raceways/log.marl", [...head, ...[...body].reverse()].join("\n"));
   expect(report(reversed)).toEqual(report(files));
+  const copied = new Map(files).set("raceways/log-copy.marl", log);
+  expect(report(copied)).toEqual(report(files));
+  const doubled = fresh(copied).problems.filter(({ code }) => code === "log/twice");
+  expect(doubled.length).toBeGreaterThan(100);
   const half = Math.floor(body.length / 2);
   const split = new Map(files)
     .set("raceways/log.marl", [...head, ...body.slice(half)].join("\n"))

@@ -19,21 +19,23 @@ import { type Binder, type Line, lineOf, named } from "./binder.ts";
 import { compareEvents } from "./event-order.ts";
 import type { CultureFinding, NamedKind } from "./finding.ts";
 import type { FarmModel, Kit, SaltWater, Solution, System, SystemEvent } from "./model.ts";
-import { bindNames, type Declaration, type Files, type Names } from "./names.ts";
+import { bindNames, type Declaration, type Files, type Links, type Names } from "./names.ts";
 import { comparePlaces, type Place } from "./place.ts";
 import { convertReads, type PendingRead } from "./readings.ts";
 import { checkReagent } from "./reagent.ts";
 
 export interface BoundFarm {
   readonly model: FarmModel;
+  /** By file, the files that it uses. */
+  readonly uses: ReadonlyMap<string, readonly string[]>;
   readonly findings: readonly CultureFinding[];
 }
 
 /** Binds a farm. Files are taken in order of their paths, so that nothing depends on how they were found. */
-export function bindFarm(unordered: Files): BoundFarm {
+export function bindFarm(unordered: Files, links: Links): BoundFarm {
   const files: Files = new Map([...unordered].sort(([left], [right]) => (left < right ? -1 : 1)));
   const findings: CultureFinding[] = [];
-  const { names, findings: nameFindings } = bindNames(files, isReagent);
+  const { names, findings: nameFindings } = bindNames(files, links, isReagent);
   findings.push(...nameFindings, ...lineFindings(files));
   const used = new Set<Declaration>();
   const binder = (file: string, system: string | null): Binder => ({
@@ -78,7 +80,7 @@ export function bindFarm(unordered: Files): BoundFarm {
       kind: declaration.kind,
     });
   }
-  return { model: { systems, solutions, waters, kits }, findings };
+  return { model: { systems, solutions, waters, kits }, uses: names.uses, findings };
 }
 
 interface House {

@@ -16,6 +16,8 @@ export interface Declaration {
 }
 
 export interface Names {
+  /** By file, the files that it uses. */
+  readonly uses: ReadonlyMap<string, readonly string[]>;
   readonly declarations: readonly Declaration[];
   /** By file, what is visible there. */
   readonly visible: ReadonlyMap<string, ReadonlyMap<string, Declaration>>;
@@ -33,14 +35,18 @@ const namedKinds: ReadonlySet<string> = new Set<NamedKind>([
 
 export type Files = ReadonlyMap<string, MarlDocument>;
 
+/** Other names for files and folders of the farm: the path of a link → where it leads. */
+export type Links = ReadonlyMap<string, string>;
+
 /** Binds `use` lines and headers of all files. */
 export function bindNames(
   files: Files,
+  links: Links,
   builtIn: (name: string) => boolean,
 ): { names: Names; findings: CultureFinding[] } {
   const findings: CultureFinding[] = [];
   const used = new Map(
-    [...files].map(([file, document]) => [file, usedBy(file, document, files, findings)] as const),
+    [...files].map(([file, document]) => [file, usedBy(file, document, files, links, findings)] as const),
   );
   reportCycles(used, findings);
 
@@ -99,7 +105,8 @@ export function bindNames(
     visible.set(file, table);
   }
   const declarations = new Set([...visible.values()].flatMap((table) => [...table.values()]));
-  const names = { declarations: shortened([...declarations]), visible, declaring };
+  const uses = new Map([...used].map(([file, list]) => [file, list.map((each) => each.file)]));
+  const names = { uses, declarations: shortened([...declarations]), visible, declaring };
   return { names, findings };
 }
 
@@ -141,13 +148,20 @@ interface UsedFile {
   readonly path: string;
 }
 
-function usedBy(file: string, document: MarlDocument, files: Files, findings: CultureFinding[]): UsedFile[] {
+function usedBy(
+  file: string,
+  document: MarlDocument,
+  files: Files,
+  links: Links,
+  findings: CultureFinding[],
+): UsedFile[] {
   const used: UsedFile[] = [];
   for (const [line, { statement }] of document.lines.entries()) {
     if (statement?.kind !== "use") continue;
     const path = statement.path.text;
     const place = { file, line, span: statement.path };
-    const target = resolvePath(file, path);
+    const written = resolvePath(file, path);
+    const target = written === null ? null : throughLinks(written, links);
     if (target === null) findings.push({ code: "use/outside", place, system: null, path });
     else if (!files.has(target)) findings.push({ code: "use/missing-file", place, system: null, path });
     else used.push({ file: target, place, path });
@@ -155,8 +169,27 @@ function usedBy(file: string, document: MarlDocument, files: Files, findings: Cu
   return used;
 }
 
+/** A link may lead to another one; more than so many lead in a circle. */
+const longestWay = 8;
+
+/** Where a path leads when links on its way are followed: the longest that begins it, again and again. */
+function throughLinks(path: string, links: Links): string {
+  let here = path;
+  for (let way = 0; way < longestWay && links.size > 0; way += 1) {
+    const link = [...links.keys()]
+      .filter((name) => here === name || here.startsWith(`${name}/`))
+      .reduce<string | null>(
+        (longest, name) => (longest === null || name.length > longest.length ? name : longest),
+        null,
+      );
+    if (link === null) return here;
+    here = `${links.get(link)}${here.slice(link.length)}`;
+  }
+  return here;
+}
+
 /** A path as written in a file, from the farm's folder; null where it leaves it. */
-export function resolvePath(file: string, path: string): string | null {
+function resolvePath(file: string, path: string): string | null {
   if (/^([/\\]|[A-Za-z]:)/.test(path)) return null;
   const steps = file.split("/").slice(0, -1);
   for (const step of path.split(/[/\\]/)) {

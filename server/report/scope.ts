@@ -1,7 +1,6 @@
 /** What a report covers: the whole farm, a path of it, one system. Narrows what is told, never what is read. */
 import type { Problem } from "../checks/problem.ts";
 import type { System } from "../culture/model.ts";
-import { resolvePath } from "../culture/names.ts";
 import type { Farm } from "../farm.ts";
 
 export interface Scope {
@@ -64,8 +63,5 @@ export function problemsIn(scope: Scope, farm: Farm): Problem[] {
 function addWithUsed(farm: Farm, file: string, files: Set<string>): void {
   if (files.has(file)) return;
   files.add(file);
-  for (const { path } of farm.documents.get(file)?.uses ?? []) {
-    const target = resolvePath(file, path.text);
-    if (target !== null) addWithUsed(farm, target, files);
-  }
+  for (const used of farm.bound.uses.get(file) ?? []) addWithUsed(farm, used, files);
 }

@@ -192,6 +192,24 @@ describe("which farm, and which part of it is told", () => {
     expect(JSON.parse(marl(root, ["check", "--format", "json", ...at]).out).systems).toHaveLength(1);
   });
 
+  test("a link inside the farm is another name for where it leads, and counts once", () => {
+    const shared = vat.replace(/^log vat[\s\S]*/m, "");
+    const logs = 'use "../shared/vat.marl"\n\nlog vat\n  2026-12-01 08:00 read alkalinity 7.9 dKH\n';
+    const root = folder({ "farm.marl": "", "really/here/vat.marl": shared, "logs/december.marl": logs });
+    symlinkSync(join(root, "really/here"), join(root, "shared"));
+    symlinkSync(join(root, "shared"), join(root, "round-about"));
+    symlinkSync(join(root, "nowhere"), join(root, "broken.marl"));
+    symlinkSync(root, join(root, "itself"));
+    const report = JSON.parse(marl(root, ["check", "--format", "json", ...at]).out);
+    expect(report.problems.filter((problem: { severity: string }) => problem.severity === "error")).toEqual(
+      [],
+    );
+    expect(report.systems.map((system: { file: string }) => system.file)).toEqual(["really/here/vat.marl"]);
+    expect(report.systems[0].readings).toHaveLength(1);
+    const through = JSON.parse(marl(root, ["check", "shared/vat.marl", "--format", "json", ...at]).out);
+    expect(through.systems).toHaveLength(1);
+  });
+
   test("a file that isn't text is told and costs no other file", () => {
     const root = folder({ "farm.marl": vat });
     writeFileSync(join(root, "picture.marl"), Buffer.from([0xff, 0xd8, 0xff, 0xe0, 0, 1, 2, 3]));

@@ -104,7 +104,7 @@ log vat
     const facts = vat.split("\n\n")[0]!.split("\n");
     const modelOf = (log: readonly string[], own: readonly string[]) => {
       const text = [...own, "", ...vat.split("\n\n").slice(1), "log vat", ...log].join("\n");
-      const { systems } = bindFarm(documentsOf(`${text}\n`)).model;
+      const { systems } = bindFarm(documentsOf(`${text}\n`), new Map()).model;
       const withoutPlaces = (_: string, value: unknown) =>
         value instanceof Map ? [...value].sort(([left], [right]) => (left < right ? -1 : 1)) : value;
       return JSON.stringify([...systems], withoutPlaces).replace(/"(line|start|end)":\d+/g, "");

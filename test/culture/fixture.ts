@@ -87,7 +87,7 @@ export function farm(text: string): BoundFarm {
         .join("\n"),
     ]),
   );
-  const bound = bindFarm(new Map([...files].map(([file, own]) => [file, readDocument(own)])));
+  const bound = bindFarm(new Map([...files].map(([file, own]) => [file, readDocument(own)])), new Map());
   const told = bound.findings.filter(({ code }) => code !== "name/unused");
   expect(Object.fromEntries(drawn(files, told))).toEqual(Object.fromEntries(wished));
   return bound;

@@ -141,7 +141,7 @@ function notNumbers(value: unknown, path: string, seen: Set<unknown>, bad: strin
 
 function walk(files: Readonly<Record<string, string>>, moments: readonly string[]) {
   const documents = new Map(Object.entries(files).map(([file, text]) => [file, readDocument(text)]));
-  const bound = bindFarm(documents);
+  const bound = bindFarm(documents, new Map());
   const assessments: Assessment[] = [];
   for (const moment of moments) {
     for (const one of bound.model.systems.values())

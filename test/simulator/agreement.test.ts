@@ -102,6 +102,7 @@ function weekByWeek(truth: Truth) {
       [`${name}/system.marl`, example(`${name}/system.marl`)],
       [`${name}/log.marl`, readDocument(log)],
     ]),
+    new Map(),
   );
   const [system] = model.systems.values();
   if (!system) throw new Error(`No system ${name}.`);
