@@ -2,6 +2,9 @@
 import type { Moment } from "./syntax.ts";
 
 const minutesADay = 1440;
+/** Years that a log can be of. A date beyond the four digits of a year couldn't be written. */
+const firstYear = 1900;
+const lastYear = 9998;
 const noon = 720;
 
 /** What a date without its time stands for: an event's hour is unknown, a fact begins with the day. */
@@ -12,7 +15,7 @@ const two = (value: number): string => String(value).padStart(2, "0");
 /** Minutes since 1970-01-01 at 00:00 of a `YYYY-MM-DD`, or null where there is no such day. */
 export function dayMinute(text: string): number | null {
   const [, year, month, day] = /^(\d{4})-(\d{2})-(\d{2})$/.exec(text) ?? [];
-  if (!year || !month || !day || Number(year) < 1900) return null;
+  if (!year || !month || !day || Number(year) < firstYear || Number(year) > lastYear) return null;
   const date = new Date(Date.UTC(Number(year), Number(month) - 1, Number(day)));
   // A day past the month's end runs over into the next: then it comes back as another.
   return date.getUTCMonth() === Number(month) - 1 && date.getUTCDate() === Number(day)

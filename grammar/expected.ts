@@ -112,7 +112,7 @@ function unknownWord(
 const wordsByRule = new Map<string, ReadonlySet<string>>();
 
 /** The keywords that a rule of the parser has anywhere in it. */
-function keywordsIn(parser: MarlParser, rule: string): ReadonlySet<string> {
+export function keywordsIn(parser: MarlParser, rule: string): ReadonlySet<string> {
   const known = wordsByRule.get(rule);
   if (known) return known;
   const words = new Set<string>();

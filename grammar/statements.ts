@@ -95,8 +95,8 @@ export const statementTable: readonly StatementRow[] = [
     "cohort",
     "cohort",
     "Corals kept as one: how many or how much area, and what they take up.",
-    "cohort staghorn-tips 360 pieces uptake 0.8 meq/day each magnesium 4 % grows 1.5 %/week from 2026-09-20",
-    "cohort plating 0.6 m2 uptake 210 mmol/m2/day as CaCO3",
+    "cohort staghorn-tips 360 pieces uptake 0.8 meq/day each grows 1.5 %/week from 2026-09-20",
+    "cohort plating 0.6 m2 uptake 210 mmol/m2/day as CaCO3 magnesium 4 %",
   ),
   fact(
     ["system"],
@@ -114,7 +114,14 @@ export const statementTable: readonly StatementRow[] = [
   ),
   fact(["system"], "air", "air", "Carbon dioxide of the room's air.", "air CO2 560 ppm"),
   fact(["system"], "light", "light", "Hours of light.", "light between 08:30 and 18:30"),
-  fact(["system"], "evaporates", "evaporates", "Fresh water lost a day.", "evaporates 11 L/day"),
+  fact(
+    ["system"],
+    "evaporates",
+    "evaporates",
+    "Fresh water lost a day.",
+    "evaporates 11 L/day",
+    "evaporates 14 L/day from 2026-06-01 until 2026-09-01",
+  ),
   fact(["system"], "feeds", "feeds", "Food given a day, and its protein.", "feeds 16 g/day protein 48 %"),
   fact(
     ["system"],
@@ -136,7 +143,8 @@ export const statementTable: readonly StatementRow[] = [
     "pump",
     "pump",
     "A dosing head: its solution, flow, smallest dose that repeats well, hours allowed, fixed rate, own container.",
-    "pump line-1 gives soda at 31.5 mL/min least 0.8 mL between 20:00 and 08:00 always 40 mL/day holding 10 L",
+    "pump line-1 gives soda at 31.5 mL/min least 0.8 mL between 20:00 and 08:00 holding 10 L",
+    "pump line-2 gives soda at 12 mL/min always 40 mL/day",
   ),
   fact(
     ["system"],
@@ -170,6 +178,7 @@ export const statementTable: readonly StatementRow[] = [
     "Strength of a bought solution, instead of a recipe.",
     "supplies alkalinity 1.6 meq/mL as bicarbonate",
     "supplies alkalinity 80 g/L as CaCO3 as carbonate",
+    "supplies alkalinity 0.9 meq/mL as hydroxide",
     "supplies calcium 72 g/L",
   ),
   fact(
@@ -278,7 +287,7 @@ export const statementTable: readonly StatementRow[] = [
     "read",
     "read",
     "Tests of one sample.",
-    "2026-10-24 07:50 read alkalinity 8.1 dKH, calcium 418 mg/L ± 6 mg/L, salinity 35.1 with titrator by ina",
+    "2026-10-24 07:50 read alkalinity 8.1 dKH, calcium 418 mg/L ± 6 mg/L with titrator by ina",
     '2026-10-24 08:00 read nitrate below 2 mg/L, temperature 25.2 degC disregard "wrong vial"',
   ),
   event(

@@ -103,7 +103,7 @@ export abstract class SystemFacts extends Phrases {
   readonly measured = this.fact("measured", () => {
     this.CONSUME(keyword.measured);
     this.CONSUME(keyword.volume);
-    const volume = this.SUBRULE(this.quantity, { LABEL: "volume" });
+    const volume = this.SUBRULE(this.quantity);
     return { kind: "measured", volume };
   });
 

@@ -10,6 +10,10 @@ const space = "[\\s\\u180e\\u200b\\u2060\\ufeff]";
 /** Letters beyond ASCII, and what continues an astral one. They make a word, though never a name. */
 const letter = "\\u00aa\\u00ba\\u00c0-\\u00d6\\u00d8-\\u00f6\\u00f8-\\u1fff\\u3040-\\ud7ff\\uf900-\\ufaff";
 
+const onlyBlank = new RegExp(`^${space}*$`);
+/** True where there is nothing but space of any kind. */
+export const isBlank = (text: string): boolean => onlyBlank.test(text);
+
 /** Abstract: any word that may be a name. */
 export const nameWord = createToken({ name: "a name", pattern: Lexer.NA });
 /** Abstract: any word that may be a unit, or a part of one between strokes. */
@@ -196,7 +200,8 @@ const blank = createToken({
   group: Lexer.SKIPPED,
   line_breaks: false,
 });
-const comment = createToken({ name: "comment", pattern: /#[^\r\n]*/, group: "comments", line_breaks: false });
+/** To the line's very end: what stands after a stray carriage return in it is no statement. */
+const comment = createToken({ name: "comment", pattern: /#[^\n]*/, group: "comments", line_breaks: false });
 /** Anything else, an astral character whole, so that no span splits one. */
 const stray = createToken({
   name: "a stray character",

@@ -1,6 +1,18 @@
 /** Files and clock: the only door to the outside. Finds a farm, reads its files, writes where it is told to. */
 import { randomBytes } from "node:crypto";
-import { access, lstat, readdir, readFile, realpath, rename, rm, stat, writeFile } from "node:fs/promises";
+import {
+  access,
+  chmod,
+  constants,
+  lstat,
+  readdir,
+  readFile,
+  realpath,
+  rename,
+  rm,
+  stat,
+  writeFile,
+} from "node:fs/promises";
 import { basename, dirname, join, relative, resolve, sep } from "node:path";
 import type { FileChange } from "./farm.ts";
 
@@ -91,6 +103,23 @@ async function insideOf(root: string, link: string): Promise<string | null> {
   return path === "" || path === ".." || path.startsWith("../") ? null : path;
 }
 
+/**
+ * What a path names, by the path that opens it: the file itself, or all files of a folder as if it were a farm of
+ * its own, so that a farm inside it is left out unless it is named.
+ */
+export async function readPath(path: string): Promise<Found<ReadonlyMap<string, FileChange>>> {
+  const kind = await stat(path).catch(() => null);
+  if (!kind) return { ok: false, reason: `${path} can't be read` };
+  if (kind.isDirectory()) {
+    const files = [...(await readFarm(path))].map(([name, file]) => [join(path, name), file] as const);
+    return files.length > 0
+      ? { ok: true, value: new Map(files) }
+      : { ok: false, reason: `${path} holds no .marl file` };
+  }
+  if (!isMarl(path)) return { ok: false, reason: `${path} is no .marl file` };
+  return { ok: true, value: new Map([[path, await readText(path)]]) };
+}
+
 const utf8 = new TextDecoder("utf-8", { fatal: true, ignoreBOM: true });
 
 async function readText(path: string): Promise<FileChange> {
@@ -101,6 +130,11 @@ async function readText(path: string): Promise<FileChange> {
     const { code } = error as NodeJS.ErrnoException;
     return { unreadable: code === "EACCES" ? "no permission to read it" : "it can't be read" };
   }
+  return textOf(bytes);
+}
+
+/** The text that bytes hold, with its byte order mark. */
+export function textOf(bytes: Uint8Array): { readonly text: string } | { readonly unreadable: string } {
   try {
     const text = utf8.decode(bytes);
     return text.includes("\0") ? { unreadable: "it isn't text" } : { text };
@@ -109,20 +143,41 @@ async function readText(path: string): Promise<FileChange> {
   }
 }
 
-/** Writes a file whole or not at all, and never over another unless asked to. */
+/**
+ * Writes a file whole or not at all, and never over another unless asked to. One written over keeps its mode; a
+ * link stays one, and what it leads to is written.
+ */
 export async function writeWhole(path: string, text: string, replace: boolean): Promise<Found<null>> {
+  const before = await stat(path).catch(() => null);
+  if (before?.isDirectory()) return { ok: false, reason: `${path} is a folder` };
   if (!replace && (await exists(path)))
     return { ok: false, reason: `${path} exists; --replace writes over it` };
-  const beside = join(dirname(path), `.${basename(path)}.${randomBytes(6).toString("hex")}`);
+  const place = await realpath(path).catch(() => path);
+  const beside = join(dirname(place), `.${basename(place)}.${randomBytes(6).toString("hex")}`);
   try {
+    // Putting another in its place would go round a file's being for reading only.
+    if (before) await access(place, constants.W_OK);
     await writeFile(beside, text, { flag: "wx" });
-    await rename(beside, path);
+    if (before) await chmod(beside, before.mode & 0o7777);
+    await rename(beside, place);
     return { ok: true, value: null };
   } catch (error) {
     await rm(beside, { force: true });
-    return { ok: false, reason: `${path} can't be written: ${(error as Error).message}` };
+    return { ok: false, reason: `${path} can't be written: ${whyNot(error as NodeJS.ErrnoException)}` };
   }
 }
+
+const reasons: Readonly<Record<string, string>> = {
+  ENOENT: "there is no such folder",
+  ENOTDIR: "there is no such folder",
+  EACCES: "no permission to write there",
+  EPERM: "no permission to write there",
+  EROFS: "nothing can be written there",
+  ENOSPC: "no room is left",
+};
+
+const whyNot = ({ code }: NodeJS.ErrnoException): string =>
+  reasons[code ?? ""] ?? `the system says ${code ?? "no"}`;
 
 /** The wall clock now, in minutes since 1970-01-01 as written without a zone. */
 export function clockNow(now = new Date()): number {

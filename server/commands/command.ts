@@ -9,6 +9,8 @@ export interface Outlet {
   readonly error: (text: string) => void;
   /** Shows how far a long piece of work is; does nothing where nobody watches. */
   readonly progress: (text: string | null) => void;
+  /** What stands on standard input, whole. */
+  readonly input: () => Promise<{ readonly text: string } | { readonly unreadable: string }>;
   readonly color: boolean;
   /** The wall clock, minutes since 1970-01-01. */
   readonly clock: number;
@@ -22,6 +24,8 @@ export interface Command {
   readonly form: string;
   readonly about: string;
   readonly options: Readonly<Record<string, OptionRow>>;
+  /** For a command that looks at texts only: the options that all others share mean nothing to it. */
+  readonly looksAtNoFarm?: true;
   readonly run: (words: Words, outlet: Outlet) => Promise<Status>;
 }
 
@@ -49,9 +53,15 @@ export const sharedOptions = {
   help: { type: "boolean", about: "print this" },
 } as const satisfies Record<string, OptionRow>;
 
+/** All options of a command, its own first. */
+export function optionsOf(command: Command): Readonly<Record<string, OptionRow>> {
+  const { help } = sharedOptions;
+  return { ...command.options, ...(command.looksAtNoFarm ? { help } : sharedOptions) };
+}
+
 /** Reads the words after a command's name. */
 export function readWords(command: Command, words: readonly string[]): Words | { readonly reason: string } {
-  const rows = Object.entries({ ...sharedOptions, ...command.options } as Record<string, OptionRow>);
+  const rows = Object.entries(optionsOf(command));
   try {
     const options = Object.fromEntries(rows.map(([name, { type }]) => [name, { type }]));
     const { values, positionals } = parseArgs({

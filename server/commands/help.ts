@@ -1,5 +1,5 @@
 /** What the command line says of itself, made from the commands' own tables. */
-import { type Command, type OptionRow, sharedOptions } from "./command.ts";
+import { type Command, type OptionRow, optionsOf } from "./command.ts";
 
 const optionLine = ([name, { value, about }]: [string, OptionRow]): string =>
   `  ${`--${name}${value ? ` ${value}` : ""}`.padEnd(22)}${about}`;
@@ -10,7 +10,7 @@ export const helpFor = (command: Command): string =>
     "",
     `  ${command.about}`,
     "",
-    ...Object.entries({ ...command.options, ...sharedOptions } as Record<string, OptionRow>).map(optionLine),
+    ...Object.entries(optionsOf(command)).map(optionLine),
     "",
   ].join("\n");
 

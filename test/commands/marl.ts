@@ -24,16 +24,18 @@ export function folder(files: Readonly<Record<string, string>>): string {
   return root;
 }
 
-/** Runs `marl` with these words in a folder. */
+/** Runs `marl` with these words in a folder, and with this on its standard input. */
 export function marl(
   cwd: string,
   words: readonly string[],
   env: Readonly<Record<string, string>> = {},
+  input: string | Uint8Array = "",
 ): Ended {
   const { NO_COLOR: _, ...inherited } = process.env;
   const { status, stdout, stderr } = spawnSync(process.execPath, [cli, ...words], {
     cwd,
     encoding: "utf8",
+    input,
     env: { ...inherited, ...env },
     maxBuffer: 64 * 1024 * 1024,
   });

@@ -21,6 +21,8 @@ describe("a moment that stands alone", () => {
     expect(readings("2026-12-01 25:00")).toEqual([]);
     expect(readings("2026-02-30")).toEqual([]);
     expect(readings("0026-02-20")).toEqual([]);
+    expect(readings("9998-12-31T24:00")).toBe("9999-01-01T00:00");
+    expect(readings("9999-12-31T24:00")).toEqual([]);
     expect(readings("yesterday")).toEqual([]);
     expect(readings("")).toEqual([]);
   });
