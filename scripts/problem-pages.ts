@@ -1,64 +1,44 @@
 // Writes docs/problems/, one page a code, from the rules (npm run generate); a test checks that nothing differs.
 import { mkdir, readdir, rm, writeFile } from "node:fs/promises";
 import { join } from "node:path";
-import type { Rule } from "../server/checks/rule.ts";
-import { type Code, codes, type Problem, problemsOf, rules } from "../server/checks/rules.ts";
-import { filesOf, walk } from "../test/checks/walk.ts";
+import { type Code, codes } from "../server/checks/rules.ts";
+import { type ExampleFile, type ProblemTopic, problemTopic } from "../server/report/explain/problems.ts";
 
 export const pageFolder = "docs/problems";
 
 /** `overdose-ph.md`. */
 export const pageName = (code: string): string => `${code.replace("/", "-")}.md`;
 
-const ruleOf = (code: Code): Rule => rules[code] as unknown as Rule;
-
-/** The first problem of this code that the rule's own example brings about. */
-function problemOf(code: Code): Problem {
-  const { example, sample } = ruleOf(code);
-  const problems = example ? walk(filesOf(example.fires)).problems : sample ? problemsOf([sample]) : [];
-  const problem = problems.find((other) => other.code === code);
-  if (!problem) throw new Error(`The example of ${code} doesn't bring it about`);
-  return problem;
-}
-
-function farmText(text: string): string {
-  const files = [...filesOf(text)];
+function farmText(files: readonly ExampleFile[]): string {
   return files
-    .map(([file, lines]) => {
-      const block = ["```marl", lines.trimEnd(), "```"].join("\n");
+    .map(({ file, text }) => {
+      const block = ["```marl", text.trimEnd(), "```"].join("\n");
       return files.length > 1 ? `\`${file}\`:\n\n${block}` : block;
     })
     .join("\n\n");
 }
 
-function exampleText({ example }: Rule): string[] {
-  if (!example) return [];
-  const also = example.also ? ` (with it comes [${example.also}](${pageName(example.also)}))` : "";
-  return [
-    "## An example",
-    `This is told of${also}:`,
-    farmText(example.fires),
-    "This isn't:",
-    farmText(example.silent),
-  ];
+function exampleText({ fires, silent, also }: ProblemTopic): string[] {
+  if (fires.length === 0) return [];
+  const company = also ? ` (with it comes [${also}](${pageName(also)}))` : "";
+  return ["## An example", `This is told of${company}:`, farmText(fires), "This isn't:", farmText(silent)];
 }
 
 export function page(code: Code): string {
-  const rule = ruleOf(code);
-  const { message } = problemOf(code);
-  const severity = rule.severityInWords ?? rule.severity;
+  const topic = problemTopic(code);
+  if (topic.says === "") throw new Error(`The example of ${code} doesn't bring it about`);
   return [
     `# ${code}`,
-    `${rule.title}.`,
-    `Severity: ${severity}.`,
+    `${topic.title}.`,
+    `Severity: ${topic.severity}.`,
     "## What it says",
-    `> ${message}`,
+    `> ${topic.says}`,
     "## Why it matters",
-    rule.why,
+    topic.why,
     "## What to do",
-    rule.todo,
-    ...(rule.background ? ["## Background", rule.background] : []),
-    ...exampleText(rule),
+    topic.todo,
+    ...(topic.background ? ["## Background", topic.background] : []),
+    ...exampleText(topic),
     "",
   ]
     .join("\n\n")

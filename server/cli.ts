@@ -4,14 +4,16 @@ import { nearestWords } from "../grammar/nearest.ts";
 import manifest from "../package.json" with { type: "json" };
 import { check } from "./commands/check.ts";
 import { type Command, type Outlet, readWords, type Status } from "./commands/command.ts";
+import { explain } from "./commands/explain.ts";
 import { help, helpFor } from "./commands/help.ts";
 import { refuse } from "./commands/refuse.ts";
 import { sheet } from "./commands/sheet.ts";
-import { clockNow } from "./environment.ts";
+import { tidy } from "./commands/tidy.ts";
+import { clockNow, textOf } from "./environment.ts";
 
-const commands: readonly Command[] = [check, sheet];
+const commands: readonly Command[] = [check, sheet, tidy, explain];
 
-const { stdout, stderr, env } = process;
+const { stdin, stdout, stderr, env } = process;
 
 /** https://no-color.org: any value that isn't empty switches colour off. */
 const noColor = env.NO_COLOR !== undefined && env.NO_COLOR !== "";
@@ -23,6 +25,11 @@ function outletFor(words: readonly string[]): Outlet {
     error: (text) => void stderr.write(text),
     progress: (text) => {
       if (watched) stderr.write(`\r\u001b[K${text ?? ""}`);
+    },
+    input: async () => {
+      const pieces: Buffer[] = [];
+      for await (const piece of stdin) pieces.push(piece as Buffer);
+      return textOf(Buffer.concat(pieces));
     },
     color: !noColor && (stdout.isTTY === true || words.includes("--color")),
     clock: clockNow(),
@@ -61,7 +68,8 @@ async function run(words: readonly string[]): Promise<Status> {
 // A reader that went away (`marl sheet … | head`) is no failure.
 stdout.on("error", (error: NodeJS.ErrnoException) => {
   if (error.code === "EPIPE") process.exit(0);
-  throw error;
+  stderr.write(`marl: what was to be printed can't be written (${error.code ?? "no reason given"})\n`);
+  process.exit(2);
 });
 
 process.exitCode = await run(process.argv.slice(2));

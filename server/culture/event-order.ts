@@ -1,7 +1,8 @@
 /** The canonical order of events: by minute, then by kind, then by tidy text. Order in a file doesn't count. */
 import type { SystemEvent } from "./model.ts";
 
-const kinds = [
+/** Kinds of event in the order in which those of one minute count. */
+export const eventKinds = [
   "read",
   "checked",
   "mixed",
@@ -22,7 +23,7 @@ const kinds = [
   "note",
 ] as const;
 
-const rank = new Map<string, number>(kinds.map((kind, index) => [kind, index]));
+const rank = new Map<string, number>(eventKinds.map((kind, index) => [kind, index]));
 
 /** Negative where the left event comes first. Events of equal rank and text are in no order that matters. */
 export function compareEvents(left: SystemEvent, right: SystemEvent): number {

@@ -28,6 +28,9 @@ const asked = {
 } as const satisfies Record<string, Asked>;
 
 export type PlainKind = keyof typeof asked;
+export const plainKinds = Object.keys(asked) as readonly PlainKind[];
+/** What a kind is called: `a volume`. */
+export const calledOf = (kind: PlainKind): string => asked[kind].called;
 
 /** A value in base units, with what stands after `±` in the same units. */
 export interface PlainValue {
