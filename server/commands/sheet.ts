@@ -32,6 +32,8 @@ export const sheet: Command = {
     const to = words.text("to");
     const face = to === null ? (format === "json" ? "json" : "txt") : faceOf(to);
     if (!face) return refuse(outlet, `--to ${to}: end the name with .txt, .md or .json`);
+    if (words.text("format") === "json" && face !== "json")
+      return refuse(outlet, `--format json writes JSON: end ${to} with .json`);
     const opened = await openFarm(words.paths, moment, outlet);
     if ("reason" in opened) return refuse(outlet, opened.reason);
     const { farm } = opened.open;

@@ -1,6 +1,6 @@
 /** What the model's making can find wrong: code, place and data; the sentences are made in `checks/`. */
 import type { ParameterName } from "../../grammar/parameters.ts";
-import type { LineFinding } from "../../grammar/syntax.ts";
+import type { LineFinding, Span } from "../../grammar/syntax.ts";
 import type { QuantityFinding } from "../quantity/finding.ts";
 import type { DisplayUnit } from "./model.ts";
 import type { Place } from "./place.ts";
@@ -65,6 +65,8 @@ type Own = { readonly place: Place; readonly system: string | null } & (
       readonly writtenUnit: string;
       readonly unit: DisplayUnit;
       readonly range: readonly [number, number];
+      /** Where its digits stand in the line. */
+      readonly digits: Span;
       /** The same digits with the point one place left, where that is usual. */
       readonly tenth: string | null;
     }
@@ -72,6 +74,8 @@ type Own = { readonly place: Place; readonly system: string | null } & (
   | { readonly code: "log/twice"; readonly first: Place }
   | { readonly code: "log/out-of-order" }
   | { readonly code: "log/no-effect"; readonly why: string }
+  /** A pump asked for more than it can give. */
+  | { readonly code: "log/no-effect"; readonly source: string; readonly mostLPerDay: number }
   | { readonly code: "syntax/unfinished"; readonly expected: readonly string[] }
   | {
       readonly code: "syntax/unknown-word";

@@ -15,6 +15,8 @@ export interface SystemConstants {
   readonly strengthAt: (solution: string, minute: number) => Strength | null;
   readonly waterAt: (water: string, minute: number) => ExchangeWater;
   readonly firstEvent: number | null;
+  /** Whether any cohort is said to grow. */
+  readonly grows: boolean;
 }
 
 /** A water to exchange with; what it doesn't state is sea water's at its salinity. */
@@ -50,6 +52,9 @@ export function constantsOf(model: FarmModel, system: System): SystemConstants {
     changes: changesOf(histories),
     strengthAt: (solution, minute) => factAt(model.solutions.get(solution)?.strengths, minute)?.value ?? null,
     waterAt: (water, minute) => exchangeWater(model, water, minute),
+    grows: [...facts.cohorts.values()].some((history) =>
+      history.some(({ value }) => value.growthPerDay !== 0),
+    ),
     firstEvent: system.events[0]?.minute ?? null,
   };
 }

@@ -36,6 +36,8 @@ type Own = { readonly place: Place; readonly system: string } & (
       readonly code: "water/beyond-limit";
       readonly which: "max" | "min";
       readonly value: number;
+      /** What was read; `value` is what has become of it since. */
+      readonly read: number;
       readonly limit: number;
     })
   | (OfParameter & {

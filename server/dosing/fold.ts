@@ -85,13 +85,20 @@ export function carryTo(state: WaterState, minute: number, constants: SystemCons
   return { ...state, minute, carried };
 }
 
-/** The minutes at which a fact changes or a value ceases to be carried: growth is taken at the middle of a piece. */
-function changesBetween(state: WaterState, minute: number, { changes }: SystemConstants): number[] {
+/**
+ * The minutes at which a fact changes or a value ceases to be carried. Growth is taken at the middle of a piece,
+ * so where corals grow no piece is longer than a day: then that is good to a hundred-thousandth
+ * of what they take.
+ */
+function changesBetween(state: WaterState, minute: number, { changes, grows }: SystemConstants): number[] {
   const ends = tracked.flatMap((name) => {
     const carried = state.carried[name];
     return carried ? [carried.readAt + carriedMinutes] : [];
   });
-  const within = [...changes, ...ends].filter((change) => change > state.minute && change < minute);
+  const days: number[] = [];
+  const last = Math.min(minute, Math.max(...ends));
+  if (grows) for (let day = state.minute + minutesPerDay; day < last; day += minutesPerDay) days.push(day);
+  const within = [...changes, ...ends, ...days].filter((change) => change > state.minute && change < minute);
   return [...new Set(within)].sort((left, right) => left - right);
 }
 

@@ -10,6 +10,7 @@ import type { DosingFinding } from "./finding.ts";
 import type { DoseInLog } from "./fold.ts";
 import { ratesAsSet } from "./fold.ts";
 import { limitAt } from "./limits.ts";
+import { beyondCapacity } from "./set-capacity.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
 import { volumeAt } from "./volume.ts";
 import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
@@ -35,6 +36,7 @@ export function checkDoses(
   const lastDay: Given[] = [];
   for (const { event, before, after } of doses) {
     if (event.kind !== "gave" && event.kind !== "topped") {
+      if (event.kind === "set") findings.push(...beyondCapacity(system, constants, event));
       findings.push(...checkSet(system, constants, event, after));
       continue;
     }

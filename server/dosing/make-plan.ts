@@ -12,11 +12,11 @@ import { ratesAt } from "./fold.ts";
 import { limitAt } from "./limits.ts";
 import type { PlanAnswer, PlanParameter, PlanProblem, PlanSource } from "./plan/problem.ts";
 import { solvePlan } from "./plan/solve.ts";
-import { type Flow, sourcesAt, topOffFlow } from "./rates.ts";
+import { capacityLPerDay, type Flow, hoursOpen, sourcesAt, topOffFlow } from "./rates.ts";
 import { judgeSalinity } from "./salinity-cause.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
-import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+import { isStale, type WaterState } from "./water-state.ts";
 
 export interface SourceInPlan {
   readonly key: string;
@@ -96,7 +96,7 @@ function planParameter(situation: Situation, hold: Hold): PlanParameter {
   }
   return {
     name,
-    now: fresh?.value ?? null,
+    now: fresh?.value ?? (isOver(carried, limit("max")) ? carried!.value : null),
     low: hold.low,
     high: hold.high,
     aim: hold.aim,
@@ -109,6 +109,10 @@ function planParameter(situation: Situation, hold: Hold): PlanParameter {
     heldBack: litres > 0 ? whyHeldBack(situation, hold, fresh?.value ?? null) : null,
   };
 }
+
+/** An old reading beyond `max` still forbids what raises it: safer than to take it for gone. */
+const isOver = (carried: { readonly value: number } | null, max: number | null): boolean =>
+  carried !== null && max !== null && carried.value > max;
 
 export const noRecentReading = "no recent reading";
 export const salinityFirst = "salinity";
@@ -147,6 +151,7 @@ function planSource(situation: Situation, { key, source, strength }: SourceInPla
   const { assumed } = situation;
   const isPump = source.device === "pump";
   const hours = hoursOpen(source);
+  const capacity = capacityLPerDay(source);
   const largest = largestDelivery(situation, source, strength);
   if (isPump && source.leastL === null) assumed.use(defaults.pumpLeast);
   if (!source.hours) assumed.use(isPump ? defaults.pumpHours : defaults.handHours);
@@ -156,21 +161,12 @@ function planSource(situation: Situation, { key, source, strength }: SourceInPla
     largestDoseL: largest.litres,
     largestDoseBy: largest.by,
     leastDoseL: isPump ? (source.leastL ?? defaults.pumpLeast.value) : 0,
-    capacityLPerDay: source.flowLPerDay === null ? null : (source.flowLPerDay * hours) / minutesPerDay,
+    capacityLPerDay: capacity,
     deliveries: isPump
       ? { kind: "at-most", count: Math.max(1, Math.floor(hours / minutesBetweenDoses)) }
       : { kind: "fixed", count: source.times },
-    alwaysLPerDay: source.alwaysLPerDay,
+    alwaysLPerDay: Math.min(source.alwaysLPerDay, capacity ?? source.alwaysLPerDay),
   };
-}
-
-/** Minutes a day in which a source may run; hours may run over midnight. */
-export function hoursOpen(source: Source): number {
-  if (source.device === "hand") return defaults.handHours.value;
-  if (!source.hours) return minutesPerDay;
-  const { from, to } = source.hours;
-  const length = to > from ? to - from : to + minutesPerDay - from;
-  return Math.min(length, minutesPerDay);
 }
 
 /** A delivery never makes up more than this share of the water, whatever it holds. */
@@ -229,25 +225,38 @@ function largestDelivery(
   return { litres: found.volumeL, by: words[found.bindingLimit] };
 }
 
-/** The state for chemistry: where there is no recent reading of alkalinity, it stands at its aim. */
+/**
+ * The state for chemistry. Without a recent reading alkalinity stands at its aim; reckoned down below its least
+ * value, it stands there: what was reckoned so far is no water to judge a dose by.
+ */
 function assumedState({ state, constants, assumed }: Situation): WaterState {
   const hold = factAt(constants.facts.holds.get("alkalinity"), state.minute)?.value;
-  if (!isStale(state.carried.alkalinity, state.minute) || !hold) return state;
-  assumed.add({ what: "alkalinity, for pH and Ω", value: "at its aim", basis: "no recent reading" });
+  const { alkalinity } = state.carried;
+  const least = limitAt(constants.facts, "alkalinity", "min", "hand", state.minute, null)?.value ?? 0;
+  const isOld = isStale(alkalinity, state.minute);
+  const instead = isOld
+    ? hold?.aim
+    : alkalinity && alkalinity.value < least && alkalinity.reading.value >= least
+      ? least
+      : undefined;
+  if (instead === undefined) return state;
+  const [value, basis] = isOld
+    ? ["at its aim", "no recent reading"]
+    : ["at its least value", "reckoned to be below it"];
+  assumed.add({ what: "alkalinity, for pH and Ω", value, basis });
   const place = { file: "", line: 0, span: null };
+  const unit = hold?.unit ?? alkalinity!.reading.unit;
   const reading = {
     place,
-    value: hold.aim,
+    value: instead,
     perKilogram: null,
     below: false,
     impossible: false,
     scale: null,
-    unit: hold.unit,
+    unit,
   };
-  return {
-    ...state,
-    carried: { ...state.carried, alkalinity: { value: hold.aim, readAt: state.minute, reading } },
-  };
+  const carried = { ...state.carried, alkalinity: { value: instead, readAt: state.minute, reading } };
+  return { ...state, carried };
 }
 
 function peakOf(situation: Situation, sources: readonly SourceInPlan[], answer: PlanAnswer): Plan["peak"] {

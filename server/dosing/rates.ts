@@ -1,4 +1,5 @@
 /** What changes a system's water from one moment to the next: supply, uptake, exchange. */
+import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Source } from "../culture/model.ts";
 import type { SystemConstants } from "./constants.ts";
@@ -10,7 +11,7 @@ import {
   type Tracked,
 } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
-import type { WaterState } from "./water-state.ts";
+import { minutesPerDay, type WaterState } from "./water-state.ts";
 
 /** Litres a day of a solution. */
 export interface Flow {
@@ -36,9 +37,25 @@ export function sourcesAt(
   });
 }
 
-/** What a source gives a day as things are set: what always runs at least, nothing while it is stopped. */
-export const litresSet = (state: WaterState, key: string, source: Source): number =>
-  state.stopped.has(key) ? 0 : Math.max(state.set.get(key) ?? 0, source.alwaysLPerDay);
+/** Minutes a day in which a source may run; hours may run over midnight. */
+export function hoursOpen(source: Source): number {
+  if (source.device === "hand") return defaults.handHours.value;
+  if (!source.hours) return minutesPerDay;
+  const { from, to } = source.hours;
+  const length = to > from ? to - from : to + minutesPerDay - from;
+  return Math.min(length, minutesPerDay);
+}
+
+/** What a pump can give a day within its hours, L; null by hand. */
+export const capacityLPerDay = (source: Source): number | null =>
+  source.flowLPerDay === null ? null : (source.flowLPerDay * hoursOpen(source)) / minutesPerDay;
+
+/** What a source gives a day as things are set: what always runs at least, what it can at most, nothing while it is stopped. */
+export function litresSet(state: WaterState, key: string, source: Source): number {
+  if (state.stopped.has(key)) return 0;
+  const asked = Math.max(state.set.get(key) ?? 0, source.alwaysLPerDay);
+  return Math.min(asked, capacityLPerDay(source) ?? asked);
+}
 
 /** All flows as set. */
 export const flowsSet = (constants: SystemConstants, state: WaterState, minute: number): Flow[] =>

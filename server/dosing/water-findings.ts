@@ -123,7 +123,9 @@ function sameScale(
 function beyondLimit(seen: WaterSeen): DosingFinding[] {
   return parameterTable.flatMap(({ name: parameter }) =>
     (["max", "min"] as const).flatMap((which): DosingFinding[] => {
-      const now = valueNow(seen, parameter);
+      // An old reading above `max` still counts until another says that it has come down.
+      const old = which === "max" && isTracked(parameter) ? seen.state.carried[parameter] : null;
+      const now = valueNow(seen, parameter) ?? old;
       const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);
       if (!now || !limit) return [];
       const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
@@ -143,6 +145,7 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
           unit,
           which,
           value,
+          read: sameScale(seen, now.reading.value, now.reading.scale, limit.scale),
           limit: limit.value,
         },
       ];

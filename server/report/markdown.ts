@@ -20,7 +20,12 @@ function sectionBlocks({ title, table, lines, marl, problems }: Section, level: 
     `${level} ${escaped(title)}`,
     ...(table ? [tableBlock(table)] : []),
     ...lines.map(escaped),
-    ...(marl.length > 0 ? ["To put it into the log:", `\`\`\`marl\n${marl.join("\n")}\n\`\`\``] : []),
+    ...(marl.length > 0
+      ? [
+          "To put it into the log, each line when its time has come:",
+          `\`\`\`marl\n${marl.join("\n")}\n\`\`\``,
+        ]
+      : []),
     ...(problems.length > 0
       ? [
           problems

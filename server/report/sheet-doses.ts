@@ -40,8 +40,8 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
     ];
   });
   const columns = [
-    { title: "solution", align: "left" },
-    { title: "by", align: "left" },
+    { title: "solution", align: "left", whenNarrow: "cut" },
+    { title: "by", align: "left", whenNarrow: "cut" },
     { title: "a day", align: "right" },
     { title: "given as", align: "left" },
     { title: "to hold", align: "right" },
@@ -50,7 +50,7 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
   return section(title, {
     table: { columns, rows },
     lines: [...topOffLine(model, assessment), ...planLines(assessment, plan)],
-    marl: setLine(assessment, plan),
+    marl: setLines(assessment, plan),
   });
 }
 
@@ -79,11 +79,11 @@ function correctionText({ answer }: Plan, { correctionLPerDay, serves }: Planned
 
 function planLines(assessment: Assessment, { answer, problem, sources }: Plan): string[] {
   const { at, state } = assessment;
-  const corrections = answer.corrections.map(({ parameter, amount, days, limitedBy }) => {
+  const corrections = answer.corrections.map(({ parameter, distance, days, limitedBy }) => {
     const unit = unitIn(assessment, parameter);
     const until = aboutWhen(at + days * minutesPerDay);
     const slowed = limitedBy ? `, no faster because of ${reason(limitedBy)}` : "";
-    return `${atStart(parameter)} comes up by ${changeFigure(parameter, amount, unit)} until ${until}${slowed}.`;
+    return `${atStart(parameter)} comes up by ${changeFigure(parameter, distance, unit)} until ${until}${slowed}.`;
   });
   const cuts = answer.cuts.map(({ parameter, perDay, days }) => {
     const unit = unitIn(assessment, parameter);
@@ -113,14 +113,28 @@ const reason = (by: string): string =>
     ? `the limit on ${by}`
     : by;
 
-/** The `set` line that puts the pumps' part of the plan into the log. */
-function setLine({ at }: Assessment, { answer, sources }: Plan): string[] {
-  const items = sources.flatMap(({ source }, index) => {
-    const total = answer.sources[index]?.totalLPerDay;
-    if (source.device !== "pump" || total === null || total === undefined) return [];
-    return [`${source.by} ${figure(total * 1000, "mL")}/day`];
+/** The `set` lines that put the pumps' part of the plan into the log: now, and when a correction or cut ends. */
+function setLines({ at }: Assessment, { answer, sources }: Plan): string[] {
+  const known = (index: number) => answer.sources[index]?.totalLPerDay !== null;
+  const rates = (litres: readonly number[]) =>
+    sources.map((_, index) => `${figure((litres[index] ?? 0) * 1000, "mL")}/day`);
+  let before: readonly string[] = [];
+  return answer.phases.flatMap(({ litresPerDay }, phase) => {
+    const days = phase === 0 ? 0 : (answer.phases[phase - 1]?.untilDays ?? 0);
+    const now = rates(litresPerDay);
+    const items = sources.flatMap(({ source }, index) =>
+      source.device === "pump" && known(index) && now[index] !== before[index]
+        ? [`${source.by} ${now[index]}`]
+        : [],
+    );
+    before = now;
+    return setLine(Math.round(at + days * minutesPerDay), items);
   });
-  const line = (some: readonly string[]) => `${writeMoment(at).replace("T", " ")} set ${some.join(", ")}`;
+}
+
+/** One line, or one a pump where it would be too long. */
+function setLine(minute: number, items: readonly string[]): string[] {
+  const line = (some: readonly string[]) => `${writeMoment(minute).replace("T", " ")} set ${some.join(", ")}`;
   if (items.length === 0) return [];
   return line(items).length <= longestLine ? [line(items)] : items.map((item) => line([item]));
 }

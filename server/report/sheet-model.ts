@@ -1,8 +1,15 @@
 /** The shapes of a dose sheet: what its parts give and its faces draw. */
 import type { Severity } from "../checks/problem.ts";
 
+export interface Column {
+  readonly title: string;
+  readonly align: "left" | "right";
+  /** Where room is short: a name may be cut, a column that others make up for left out. Figures and units never. */
+  readonly whenNarrow?: "cut" | "leave out";
+}
+
 export interface Table {
-  readonly columns: readonly { readonly title: string; readonly align: "left" | "right" }[];
+  readonly columns: readonly Column[];
   readonly rows: readonly (readonly string[])[];
 }
 

@@ -6,7 +6,7 @@ import type { Solution, Strength } from "../culture/model.ts";
 import { type Section, section } from "./sheet-model.ts";
 
 const columns = [
-  { title: "in 1 mL of", align: "left" },
+  { title: "in 1 mL of", align: "left", whenNarrow: "cut" },
   { title: "alkalinity meq", align: "right" },
   { title: "calcium mg", align: "right" },
   { title: "magnesium mg", align: "right" },

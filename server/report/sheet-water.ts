@@ -58,13 +58,13 @@ export function waterSection(assessment: Assessment): Section {
     { title: "", align: "left" },
     { title: "now", align: "right" },
     { title: "hold", align: "left" },
-    { title: "aim", align: "left" },
+    { title: "aim", align: "left", whenNarrow: "leave out" },
     { title: "read", align: "left" },
-    { title: "undosed", align: "left" },
+    { title: "undosed", align: "left", whenNarrow: "leave out" },
     { title: "as set", align: "left" },
     { title: "as planned", align: "left" },
   ] as const;
-  const lines = ["The last three columns: when the day's mean leaves its hold, looking 14 days ahead."];
+  const lines = ["The last columns: when the day's mean leaves its hold, looking 14 days ahead."];
   return section("The water, and when it leaves its hold", { table: { columns, rows }, lines });
 }
 

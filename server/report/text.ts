@@ -1,6 +1,6 @@
 /** The sheet's face for a terminal: at most 100 columns, what to do first. */
 import { styleText } from "node:util";
-import type { Section, Sheet, SheetProblem, Table } from "./sheet-model.ts";
+import type { Column, Section, Sheet, SheetProblem, Table } from "./sheet-model.ts";
 
 export const textWidth = 100;
 
@@ -36,45 +36,69 @@ function sectionLines({ title, table, lines, marl, problems }: Section, paint: P
     paint("bold", title),
     ...(table ? tableLines(table, paint) : []),
     ...lines.flatMap((line) => wrapped(line, 2)),
-    ...(marl.length > 0 ? ["  To put it into the log:", ...marl.map((line) => `    ${line}`)] : []),
+    ...(marl.length > 0
+      ? [
+          marl.length > 1
+            ? "  To put it into the log, each line when its time has come:"
+            : "  To put it into the log:",
+          ...marl.map((line) => `    ${line}`),
+        ]
+      : []),
     ...problems.flatMap((problem) => problemText(problem, paint, 2)),
   ];
 }
 
-function tableLines({ columns, rows }: Table, paint: Paint): string[] {
-  // A column without any content takes no room.
-  const shown = columns
-    .map((column, index) => ({ ...column, index }))
-    .filter(({ index, title }) => title === "" || rows.some((row) => row[index]));
-  const widths = fitting(
-    shown.map(({ title, index, align }) => ({
-      align,
-      width: Math.max(title.length, ...rows.map((row) => (row[index] ?? "").length)),
-    })),
-  );
-  const line = (cells: readonly string[]) =>
-    `  ${cells
-      .map((cell, place) => {
-        const width = widths[place] ?? 0;
-        const text = cell.length <= width ? cell : `${cell.slice(0, width - 1)}…`;
-        return shown[place]?.align === "right" ? text.padStart(width) : text.padEnd(width);
-      })
-      .join("  ")}`.trimEnd();
-  const head = paint("dim", cut(line(shown.map(({ title }) => title))));
-  return [head, ...rows.map((row) => cut(line(shown.map(({ index }) => row[index] ?? ""))))];
+interface Fitted extends Column {
+  readonly index: number;
+  readonly width: number;
 }
 
-/** Names give way so that figures keep their room: the widest words of the first columns are cut. */
-function fitting(columns: readonly { readonly align: "left" | "right"; readonly width: number }[]): number[] {
-  const widths = columns.map(({ width }) => width);
-  const over = () => 2 + widths.reduce((sum, width) => sum + width + 2, -2) - textWidth;
-  for (let excess = over(); excess > 0; excess = over()) {
-    const names = widths.slice(0, 2);
-    const widest = names.indexOf(Math.max(...names));
-    if ((widths[widest] ?? 0) <= leastName) break;
-    widths[widest] = Math.max(leastName, (widths[widest] ?? 0) - 1);
+function tableLines({ columns, rows }: Table, paint: Paint): string[] {
+  const shown = fitted(
+    columns.flatMap((column, index): Fitted[] => {
+      const width = Math.max(column.title.length, ...rows.map((row) => (row[index] ?? "").length));
+      // A column without any content takes no room.
+      const isEmpty = column.title !== "" && !rows.some((row) => row[index]);
+      return isEmpty ? [] : [{ ...column, index, width }];
+    }),
+  );
+  const line = (cellOf: (column: Fitted) => string) =>
+    `  ${shown
+      .map((column) => {
+        const cell = cellOf(column);
+        const text = cell.length <= column.width ? cell : `${cell.slice(0, column.width - 1)}…`;
+        return column.align === "right" ? text.padStart(column.width) : text.padEnd(column.width);
+      })
+      .join("  ")}`.trimEnd();
+  return [
+    paint(
+      "dim",
+      line(({ title }) => title),
+    ),
+    ...rows.map((row) => line(({ index }) => row[index] ?? "")),
+  ];
+}
+
+/** By how many columns of text a table is too wide. */
+const excess = (columns: readonly Fitted[]): number =>
+  columns.reduce((sum, { width }) => sum + width + 2, 0) - textWidth;
+
+/** The table made to fit: names cut first, the widest before the others, then whole columns left out, the last first. */
+function fitted(columns: readonly Fitted[]): readonly Fitted[] {
+  let kept = columns;
+  while (excess(kept) > 0) {
+    const names = kept.filter(({ whenNarrow, width }) => whenNarrow === "cut" && width > leastName);
+    const widest = names.reduce<Fitted | null>(
+      (most, next) => (most === null || next.width > most.width ? next : most),
+      null,
+    );
+    const spare = kept.findLast(({ whenNarrow }) => whenNarrow === "leave out");
+    if (widest)
+      kept = kept.map((column) => (column === widest ? { ...column, width: column.width - 1 } : column));
+    else if (spare) kept = kept.filter((column) => column !== spare);
+    else break;
   }
-  return widths;
+  return kept;
 }
 
 /** A name cut shorter than this tells nothing. */

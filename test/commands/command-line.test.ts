@@ -241,10 +241,25 @@ describe("writing a sheet to a file", () => {
     expect(readdirSync(root).sort()).toEqual(["farm.marl", name].sort());
   });
 
+  test("JSON asked for goes into no other kind of file", () => {
+    const root = folder({ "farm.marl": vat });
+    const ended = marl(root, ["sheet", ".", "--to", "sheet.md", "--format", "json", ...at]);
+    expect(ended).toMatchObject({ status: 2, out: "" });
+    expect(existsSync(join(root, "sheet.md"))).toBe(false);
+  });
+
+  test("a folder of that name is no file to write over", () => {
+    const root = folder({ "farm.marl": vat, "sheet.md/x.txt": "" });
+    const ended = marl(root, ["sheet", ".", "--to", "sheet.md", ...at]);
+    expect(ended.status).toBe(2);
+    expect(ended.error).toContain("sheet.md is a folder");
+  });
+
   test("a place that can't be written is a 2", () => {
     const root = folder({ "farm.marl": vat });
     const ended = marl(root, ["sheet", ".", "--to", "no/such/folder/sheet.txt", ...at]);
     expect(ended.status).toBe(2);
+    expect(ended.error).toContain("there is no such folder");
     expect(existsSync(join(root, "no"))).toBe(false);
   });
 

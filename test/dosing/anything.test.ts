@@ -185,7 +185,7 @@ ${log}
 ${sections}
 `,
   },
-  moments: ["2026-11-02 08:00", "2026-11-12", "1900-01-01", "9999-12-31"],
+  moments: ["2026-11-02 08:00", "2026-11-12", "1900-01-01", "9998-12-31"],
 });
 
 const strangeFarms: Readonly<Record<string, Example>> = {

@@ -6,6 +6,7 @@ import { farmOf, reportOf } from "./walk.ts";
 const codes = (text: string, at?: string): string[] => reportOf(text, at).problems.map(({ code }) => code);
 
 const ash = "\nsolution ash\n  dissolve sodium-carbonate 84.79 g\n  make up to 1 L\n";
+const dKH = 20 / 56.077;
 const vat = (facts: string, log: string) => `system vat\n  tank main 1000 L\n${facts}${ash}\nlog vat\n${log}`;
 
 describe("limits", () => {
@@ -93,6 +94,55 @@ describe("what isn't known", () => {
       value: "as it is to be held",
       basis: "never read",
     });
+  });
+});
+
+describe("what is reckoned, not read", () => {
+  const lye = "\nsolution lye\n  dissolve sodium-hydroxide 64 g\n  make up to 1 L\n";
+  const system = (facts: string, log: string) =>
+    `system vat\n  tank main 1000 L\n  hold alkalinity 7.6 to 8.4 dKH\n  uptake alkalinity 0.7 meq/L/day\n${facts}${lye}\nlog vat\n${log}`;
+
+  test("an old reading above max still forbids what raises it", () => {
+    for (const minute of ["08:00", "07:59"]) {
+      const report = reportOf(
+        system("  by-hand lye times 12\n", `  2026-11-24 ${minute} read alkalinity 17 meq/L\n`),
+      );
+      expect(report.systems[0]!.plan!.doses[0]!.total_mL_per_day).toBe(0);
+      expect(report.problems.map(({ code }) => code)).toContain("water/beyond-limit");
+    }
+  });
+
+  test("alkalinity reckoned down to nothing doesn't switch the limits on pH off", () => {
+    const { plan } = reportOf(system("  by-hand lye times 2\n", "  2026-11-26 08:00 read alkalinity 8 dKH\n"))
+      .systems[0]!;
+    expect(plan!.pH_total_after_largest_dose).not.toBeNull();
+    expect(plan!.limited_by).not.toBeNull();
+    expect(plan!.doses[0]!.mL_per_dose).toBeLessThan(60);
+  });
+
+  test("a note in the log changes nothing of what growing corals take", () => {
+    const facts = "  cohort plugs 300 pieces uptake 0.6 meq/day each grows 8 %/week\n";
+    const text = (notes: string) => vat(facts, `  2026-11-24 09:00 read alkalinity 11 dKH\n${notes}`);
+    const notes = [25, 26, 28, 30].map((day) => `  2026-11-${day} 11:00 note "looked at"\n`).join("");
+    const now = (some: string) => reportOf(text(some)).systems[0]!.now.alkalinity_meq_per_L.mean!;
+    expect(Math.abs(now("") - now(notes))).toBeLessThan(1e-5);
+    // ∫ 0.18 × 1.08^(t/7) dt over 6 d 23 h.
+    const days = 6 + 23 / 24;
+    const taken = (0.18 * 7 * (1.08 ** (days / 7) - 1)) / Math.log(1.08);
+    expect(now("")).toBeCloseTo(11 * dKH - taken, 4);
+  });
+
+  test("a pump set to more than it can give counts as giving what it can, and that is told", () => {
+    const facts = "  pump p gives ash at 0.2 mL/min between 22:00 and 00:00\n  uptake alkalinity 0 dKH/day\n";
+    const report = reportOf(
+      vat(facts, "  2026-11-30 08:00 read alkalinity 8 dKH\n  2026-11-30 08:00 set p 480 mL/day\n"),
+    );
+    // 0.2 mL/min × 120 min = 24 mL of 1.6 meq/mL in 1000 L.
+    expect(report.systems[0]!.now.alkalinity_meq_per_L.mean).toBeCloseTo(
+      8 * dKH + (24 * (2 * 84.79)) / 105.988 / 1000,
+      9,
+    );
+    expect(report.problems.find(({ code }) => code === "log/no-effect")?.message).toContain("24 mL a day");
   });
 });
 

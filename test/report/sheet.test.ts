@@ -31,6 +31,26 @@ describe("names of any length", () => {
   });
 });
 
+test("when a correction ends, the line that sets the pump back stands ready", () => {
+  const text = sheet(
+    `system vat\n  tank main 1000 L\n  hold alkalinity 7.6 to 8.4 dKH\n  limit alkalinity rise 0.5 dKH/day\n  uptake alkalinity 0.5 dKH/day\n  pump head-1 gives ash at 40 mL/min\n${solution("ash")}\nlog vat\n  2026-12-01 08:00 read alkalinity 7.0 dKH\n`,
+  );
+  // 1 dKH at 0.5 a day: two days.
+  expect(text).toContain(
+    "2026-12-01 08:00 set head-1 223 mL/day\n    2026-12-03 08:00 set head-1 111 mL/day",
+  );
+});
+
+test("a long unit is never cut: a column that others make up for goes instead", () => {
+  const reading = "2026-12-01 07:00 read calcium 1060 mg/L as CaCO3, alkalinity 7.9 dKH, temperature 25 degC";
+  const text = sheet(
+    `system vat\n  tank main 1000 L\n  hold alkalinity 7.6 to 8.4 dKH\n  hold calcium 1000 to 1100 mg/L as CaCO3 aim 1061\n  uptake alkalinity 1.5 dKH/day\n  by-hand ash\n${solution("ash")}\nlog vat\n  ${reading}\n`,
+  );
+  expect(text).toMatch(/calcium\s+10\d\d mg\/L as CaCO3\s/);
+  expect(text).not.toMatch(/…/);
+  expect(tooLong(text)).toEqual([]);
+});
+
 test("a pump that stands stopped is told beside the plan", () => {
   const pump = "  pump head-1 gives ash at 40 mL/min\n";
   const log = `${read}  2026-12-01 07:30 stopped head-1\n`;

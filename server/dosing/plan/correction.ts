@@ -10,11 +10,16 @@ import {
   type Maintenance,
   type ParameterState,
 } from "./maintenance.ts";
-import { daysToClose, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import { daysToClose, negligible, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
 import { lexicographicMinimum } from "./simplex.ts";
+
+/** A limit that leaves so little room that it would take longer than this leaves none. */
+const longestDays = 180;
 
 export interface Correction {
   readonly parameter: number;
+  /** How far it stands below; doses bring `amount` of it. */
+  readonly distance: number;
   readonly amount: number;
   readonly wishedPerDay: number;
   /** 0 where none can be given. */
@@ -78,18 +83,27 @@ function correct(
     solved = solve(numbers, ledger, task, free, freeBy);
   }
   const reached = supplyOf(numbers, parameter, solved.litres);
-  const none = reached <= 1e-6 * task.wishedPerDay;
+  const closing = reached + surplus;
+  const allDays = closing > 0 ? daysToClose(numbers, open, closing) : Number.POSITIVE_INFINITY;
+  const none = reached <= 1e-6 * task.wishedPerDay || !(allDays <= longestDays);
   const slowed = reached < task.wishedPerDay * (1 - rounding);
-  const days = none ? 0 : daysToClose(numbers, open, reached + surplus);
+  const days = none ? 0 : allDays;
   return {
     parameter,
+    distance: open,
     amount: none ? open : reached * days,
     wishedPerDay: task.wishedPerDay,
     perDay: none ? 0 : reached,
     days,
-    limitedBy: slowed ? whatHolds(numbers, ledger, states, task, solved) : null,
+    limitedBy: slowed ? whatHolds(numbers, ledger, states, task, solved) : outOfReach(numbers, parameter),
     litres: none ? solved.litres.map(() => 0) : solved.litres,
   };
+}
+
+/** The greatest value, where it lies below the aim. */
+function outOfReach(numbers: PlanNumbers, p: number): string | null {
+  const { name, aim, max } = numbers.parameters[p]!;
+  return max !== null && aim - max > negligible(numbers, p) ? `${name} max` : null;
 }
 
 /** Litres a day that a source can add to what it gives now, in doses that it can give. */

@@ -1,7 +1,7 @@
 /** The way down from above the aim: how much lower maintenance runs, how long, and maintenance at each stage of it. */
 import { type Maintenance, maintenance, type ParameterState } from "./maintenance.ts";
 import {
-  atMax,
+  aboveMax,
   daysToClose,
   leftAfter,
   negligible,
@@ -106,7 +106,7 @@ function isCut(numbers: PlanNumbers, p: number): boolean {
   const { now, aim, needPerDay, heldBack } = parameter;
   if (now === null || needPerDay === null || now - aim <= negligible(numbers, p)) return false;
   // Beyond `max` a reading acts at once, whatever holds a correction back.
-  return heldBack === null || atMax(parameter);
+  return heldBack === null || aboveMax(parameter);
 }
 
 /** At most `fall`, and not so much that the water, which falls by itself too, would fall faster or under `min`. */

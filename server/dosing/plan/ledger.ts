@@ -9,7 +9,10 @@ export interface Ledger {
   readonly rooms: Room[];
   /** What each parameter rises a day at most without corrections, ≥ 0. */
   readonly rising: readonly number[];
-  /** What comes in a day beyond the need though it isn't dosed for, ≥ 0: it does a part of the correction by itself. */
+  /**
+   * What comes in a day beyond the need though it isn't dosed for: it does a part of the correction by itself.
+   * Negative where maintenance falls short: the correction makes that good while it runs.
+   */
   readonly surplus: readonly number[];
   /** In all, by parameter; what raises and what lowers kept apart, as they may end on different days. */
   readonly broughtUp: number[];
@@ -50,12 +53,12 @@ export function openLedger(numbers: PlanNumbers, cuts: CutPlan): Ledger {
   };
 }
 
-/** What maintenance can't help bringing, once all cuts are over. */
+/** By how much maintenance misses the need, once all cuts are over. */
 function surplusOf(numbers: PlanNumbers, cuts: CutPlan): number[] {
   const { litres } = cuts.during(new Set());
   return numbers.parameters.map(({ needPerDay }, p) => {
     const beyond = needPerDay === null ? 0 : supplyOf(numbers, p, litres) - needPerDay;
-    return beyond > rounding * numbers.dayScale[p]! ? beyond : 0;
+    return Math.abs(beyond) > rounding * numbers.dayScale[p]! ? beyond : 0;
   });
 }
 

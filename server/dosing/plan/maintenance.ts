@@ -1,7 +1,7 @@
 /** Litres a day that meet the needs, the weightier parameter first, around what always runs and within the limits. */
 import { deliverableL } from "./deliveries.ts";
 import { ceilingRows, fullRow, type LimitRow, limitRows, roomBeside, scaledEffects } from "./limits.ts";
-import { atMax, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import { aboveMax, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
 import { type LinearRow, lexicographicMinimum } from "./simplex.ts";
 
 /** One parameter as maintenance sees it at some stage of the plan. */
@@ -38,7 +38,7 @@ export function forbiddenBy(
   j: number,
 ): string | null {
   const over = numbers.parameters.find(
-    ({ max }, p) => numbers.effect[p]![j]! > 0 && atMax({ now: states[p]!.now, max }),
+    ({ max }, p) => numbers.effect[p]![j]! > 0 && aboveMax({ now: states[p]!.now, max }),
   );
   return over ? `${over.name} max` : null;
 }

@@ -94,14 +94,14 @@ export const supplyOf = (numbers: PlanNumbers, p: number, litresPerDay: readonly
 export const negligible = (numbers: PlanNumbers, p: number): number =>
   Math.max(0.005 * 7 * numbers.dayScale[p]!, rounding * Math.abs(numbers.parameters[p]!.aim));
 
-/** Whether a parameter stands at its greatest value or above, so that nothing may raise it. */
-export const atMax = ({ now, max }: Pick<PlanParameter, "now" | "max">): boolean =>
-  now !== null && max !== null && now >= max;
+/** Whether a parameter stands above its greatest value, so that nothing may raise it. */
+export const aboveMax = ({ now, max }: Pick<PlanParameter, "now" | "max">): boolean =>
+  now !== null && max !== null && now > max + rounding * Math.abs(max);
 
 function ceiling(source: PlanSource): { litres: number; by: string } {
   const doseBy = source.largestDoseBy ?? `${source.key} dose`;
   const tooSmallToRepeat = source.deliveries.kind === "at-most" && source.largestDoseL < source.leastDoseL;
-  if (tooSmallToRepeat) return { litres: 0, by: doseBy };
+  if (tooSmallToRepeat) return { litres: 0, by: `${source.key} least` };
   const byDoses = source.deliveries.count > 0 ? source.deliveries.count * source.largestDoseL : 0;
   const byHours = source.capacityLPerDay ?? Number.POSITIVE_INFINITY;
   return byHours <= byDoses

@@ -1,7 +1,7 @@
 /** What stands in the way of what should be given, in words of the report. */
 import type { Correction } from "./correction.ts";
 import { type CutPlan, wishedRate } from "./cuts.ts";
-import { atMax, negligible, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
+import { aboveMax, negligible, type PlanNumbers, rounding, supplyOf } from "./numbers.ts";
 import type { PlanObstacle } from "./problem.ts";
 
 export function obstacles(
@@ -15,7 +15,11 @@ export function obstacles(
     const others = numbers.raises[p]!.includes(true)
       ? heldBack(numbers, cuts, planned, p)
       : noSource(numbers, p);
-    return merged([...breaches, ...heldBackCorrection(numbers, p), ...others]);
+    // A fall that the plan would make good, if something else didn't hold it back, isn't the uptake's doing.
+    const { name } = numbers.parameters[p]!;
+    const held = others.some(({ kind, by }) => kind === "held-back" && by !== `${name} max`);
+    const own = held ? breaches.filter(({ by }) => !/ (fall|min)$/.test(by)) : breaches;
+    return merged([...own, ...heldBackCorrection(numbers, p), ...others]);
   });
 }
 
@@ -63,8 +67,15 @@ function heldBackCorrection(numbers: PlanNumbers, p: number): PlanObstacle[] {
   const below = belowAim(numbers, p);
   if (below > 0)
     return [{ parameter: name, kind: "held-back", by: why, perDay: wishedRate(aim - now, low - now) }];
-  if (below === 0 || atMax(parameter)) return [];
+  if (below === 0 || aboveMax(parameter)) return [];
   return [{ parameter: name, kind: "held-back", by: why, perDay: wishedRate(now - aim, now - high) }];
+}
+
+/** An aim that the greatest value keeps the water from. */
+function aimAboveMax(numbers: PlanNumbers, p: number): PlanObstacle[] {
+  const { name, now, aim, max } = numbers.parameters[p]!;
+  const outOfReach = now !== null && max !== null && now < aim && aim - max > negligible(numbers, p);
+  return outOfReach ? [{ parameter: name, kind: "held-back", by: `${name} max`, perDay: null }] : [];
 }
 
 function heldBack(
@@ -76,10 +87,12 @@ function heldBack(
   const { name } = numbers.parameters[p]!;
   const maintained = cuts.during(cuts.wished).shortfalls.filter(({ parameter }) => parameter === p);
   // A correction that is only slowed still arrives: it says itself what slows it.
+  const beyond = aimAboveMax(numbers, p);
   const corrected = planned.filter(
     ({ parameter, limitedBy: by, perDay }) => parameter === p && by !== null && perDay === 0,
   );
   return [
+    ...beyond,
     ...maintained.map(({ by, perDay }) => ({ parameter: name, kind: "held-back" as const, by, perDay })),
     ...corrected.map(({ limitedBy: by, wishedPerDay, perDay }) => ({
       parameter: name,

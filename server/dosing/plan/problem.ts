@@ -57,6 +57,8 @@ export interface PlanProblem {
 /** A rise to the aim, given over some days. */
 export interface PlannedCorrection {
   readonly parameter: ParameterName;
+  /** How far it comes up; `amount` of that is dosed, exchange or a top-off may close the rest. */
+  readonly distance: number;
   readonly amount: number;
   readonly perDay: number;
   readonly days: number;

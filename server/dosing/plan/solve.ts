@@ -23,8 +23,9 @@ export function solvePlan(problem: PlanProblem): PlanAnswer {
   const { stages, endDays } = cutStages(numbers, cuts, broughtInAll);
   return {
     sources: numbers.sources.map((_, j) => plannedSource(numbers, cuts, given, j)),
-    corrections: given.map(({ parameter, amount, perDay, days, limitedBy: by }) => ({
+    corrections: given.map(({ parameter, distance, amount, perDay, days, limitedBy: by }) => ({
       parameter: numbers.parameters[parameter]!.name,
+      distance,
       amount,
       perDay,
       days,

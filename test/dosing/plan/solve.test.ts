@@ -106,9 +106,9 @@ test("a cut never goes below zero: then uptake alone brings it down", () => {
   expect(answer.sources[0]).toMatchObject({ dosesPerDay: 0, litresPerDose: 0, everyDays: 1 });
 });
 
-test("at max nothing that raises it is given, whatever fall says and whoever needs the other part", () => {
+test("above max nothing that raises it is given, whatever fall says and whoever needs the other part", () => {
   const answer = plan(
-    [alkalinity({ now: 4, max: 4, fallPerDay: 0.05 }), calcium()],
+    [alkalinity({ now: 4.001, max: 4, fallPerDay: 0.05 }), calcium()],
     [pump("ash", { alkalinity: 1000 }), pump("lime", { alkalinity: 40, calcium: 800 })],
   );
   expect(answer.sources.map(({ totalLPerDay }) => totalLPerDay)).toEqual([0, 0]);
@@ -245,7 +245,7 @@ test("hours, doses and missing sources are named", () => {
   );
   expect(unusable.sources[0]?.totalLPerDay).toBe(0);
   expect(unusable.obstacles).toEqual([
-    { parameter: "alkalinity", kind: "held-back", by: "alkalinity dose", perDay: 0.2 },
+    { parameter: "alkalinity", kind: "held-back", by: "head-1 least", perDay: 0.2 },
   ]);
   const none = plan([alkalinity(), calcium({ now: 413 })], [pump("ash", { alkalinity: 1000 })]);
   expect(none.obstacles).toEqual([{ parameter: "calcium", kind: "no-source", by: "no source", perDay: 5 }]);
@@ -412,4 +412,38 @@ test("with flow-through a correction is over sooner, since exchange closes a par
   for (let step = 0; step < steps; step += 1)
     left -= ((2 + exchangePerDay * left) * phases[0]!.untilDays!) / steps;
   expect(Math.abs(left)).toBeLessThan(0.001);
+});
+
+test("where a smallest dose leaves maintenance short, a correction makes that good while it runs", () => {
+  // Doses of 40 to 42 mL: ten give at most 420, eleven at least 440; 437.5 mL are needed.
+  const source = pump(
+    "p",
+    { alkalinity: 1600 },
+    { largestDoseL: 0.042, leastDoseL: 0.04, deliveries: { kind: "at-most", count: 288 } },
+  );
+  const low = alkalinity({ now: 2.5, low: 2.7, high: 3, aim: 2.85, needPerDay: 0.7, passivePerDay: -0.7 });
+  const answer = plan([low], [source]);
+  expect(answer.sources[0]!.maintenanceLPerDay).toBeLessThanOrEqual(0.42 + 1e-12);
+  const { days } = answer.corrections[0]!;
+  closeTo(valueAt(answer.problem, answer, low, days), 2.85);
+  closeTo(answer.corrections[0]!.distance, 0.35);
+});
+
+test("an aim above max is told: the water is brought up to max, and max is named", () => {
+  const low = calcium({ now: 415, low: 400, high: 440, aim: 430, max: 425 });
+  const { corrections, limitedBy, obstacles } = plan([low], [pump("head-2", { calcium: 32_000 })]);
+  closeTo(corrections[0]?.distance, 10);
+  expect(limitedBy).toBe("calcium max");
+  expect(obstacles).toContainEqual({
+    parameter: "calcium",
+    kind: "held-back",
+    by: "calcium max",
+    perDay: null,
+  });
+});
+
+test("a value at max is kept there", () => {
+  const full = calcium({ now: 425, low: 400, high: 440, aim: 425, max: 425 });
+  const { sources } = plan([full], [pump("head-2", { calcium: 32_000 })]);
+  closeTo(sources[0]?.maintenanceLPerDay, 0.125);
 });
