@@ -22,7 +22,7 @@ export function nearestWords(word: string, known: Iterable<string>): readonly st
     if (candidate === word) continue;
     const allowed = Math.min(word.length, candidate.length) < shortWord ? 1 : 2;
     if (Math.abs(candidate.length - word.length) > allowed) continue;
-    const away = distance(lower, candidate.toLowerCase());
+    const away = slips(lower, candidate.toLowerCase());
     // A word that shares no letter in place is no slip: `mk` isn't near `kg`.
     if (away <= allowed && away < Math.max(word.length, candidate.length))
       near.push({ word: candidate, away });
@@ -31,6 +31,19 @@ export function nearestWords(word: string, known: Iterable<string>): readonly st
     .sort((a, b) => a.away - b.away)
     .slice(0, 3)
     .map((entry) => entry.word);
+}
+
+/** How many slips lie between two words; two letters that changed places are one. */
+function slips(word: string, other: string): number {
+  const away = distance(word, other);
+  return away === 2 && isSwapped(word, other) ? 1 : away;
+}
+
+function isSwapped(word: string, other: string): boolean {
+  if (word.length !== other.length) return false;
+  const first = [...word].findIndex((letter, at) => letter !== other[at]);
+  const isPair = word[first] === other[first + 1] && word[first + 1] === other[first];
+  return isPair && word.slice(first + 2) === other.slice(first + 2);
 }
 
 /** The finding for a word that stands where a parameter should and is none. */

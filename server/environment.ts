@@ -162,7 +162,7 @@ export async function writeWhole(path: string, text: string, replace: boolean): 
     await rename(beside, place);
     return { ok: true, value: null };
   } catch (error) {
-    await rm(beside, { force: true });
+    await rm(beside, { force: true }).catch(() => undefined);
     return { ok: false, reason: `${path} can't be written: ${whyNot(error as NodeJS.ErrnoException)}` };
   }
 }

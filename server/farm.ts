@@ -3,6 +3,7 @@
  * reuse. Knows no files, no clock, no protocol: texts and a moment come in, a value goes out.
  */
 import { type MarlDocument, readDocument } from "../grammar/document.ts";
+import { quieten } from "./checks/quieten.ts";
 import { type Problem, problemsOf } from "./checks/rules.ts";
 import { type BoundFarm, bindFarm } from "./culture/farm-model.ts";
 import { type Assessment, assess } from "./dosing/assess.ts";
@@ -86,7 +87,8 @@ export function* advanceBySystem(
     system: null,
     reason,
   }));
-  return { moment, ...files, bound, assessments, problems: problemsOf([...findings, ...unreadable]) };
+  const problems = problemsOf([...findings, ...unreadable], files.documents);
+  return { moment, ...files, bound, assessments, problems: quieten(problems, files.documents) };
 }
 
 function changedFiles(previous: Farm | null, changes: ReadonlyMap<string, FileChange>) {

@@ -1,6 +1,9 @@
 /** Lines of a log that are doubled, dated ahead, out of order, or change nothing. */
 import { writeDate } from "../../grammar/dates.ts";
+import { doseFigure } from "./figures.ts";
+import { removingDoubled } from "./fixing.ts";
 import type { Rules } from "./rule.ts";
+import { sourceName } from "./words.ts";
 
 const vat = "system vat\n  tank main 500 L\n  cohort plugs 40 pieces uptake 0.8 meq/day each\n\nlog vat\n";
 
@@ -12,6 +15,7 @@ export const logRules: Rules<"log/twice" | "log/future" | "log/out-of-order" | "
     why: "A merge may have doubled it, so both count as one.",
     todo: "Remove one of them; if it did happen twice, give the second its own minute.",
     related: ({ first }) => [{ place: first, message: "The line that counts" }],
+    fixes: ({ place, first }, files) => removingDoubled(place, first, files),
     example: {
       fires: `${vat}  2026-11-28 08:00 removed plugs 3 pieces\n  2026-11-28 08:00 removed plugs 3 pieces\n`,
       silent: `${vat}  2026-11-28 08:00 removed plugs 3 pieces\n  2026-11-28 08:05 removed plugs 3 pieces\n`,
@@ -42,9 +46,12 @@ export const logRules: Rules<"log/twice" | "log/future" | "log/out-of-order" | "
   "log/no-effect": {
     severity: "info",
     title: "A line of a log that can't be counted in full",
-    says: ({ why }) => `This line can't be counted in full: ${why}.`,
-    why: "What corals take is worked out from these counts.",
-    todo: "Write the count as the cohort's own line does, or declare the cohort where the corals go.",
+    says: (finding) =>
+      "why" in finding
+        ? `This line can't be counted in full: ${finding.why}.`
+        : `${sourceName(finding.source)} can give at most ${doseFigure(finding.mostLPerDay)} a day in its hours, and counts as giving that.`,
+    why: "It counts as far as it can, and what is worked out rests on that.",
+    todo: "Correct the line, or the fact in the system's section that it runs against.",
     example: {
       fires: `${vat}  2026-11-28 08:00 removed plugs 0.2 m2\n`,
       silent: `${vat}  2026-11-28 08:00 removed plugs 3 pieces\n`,

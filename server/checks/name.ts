@@ -1,7 +1,9 @@
 /** Names that are used and not declared, declared twice, or never used; and `use` lines. */
+import { summaryOf } from "../../grammar/write.ts";
 import type { NamedKind, OwnKind } from "../culture/finding.ts";
-import { replacingWith } from "./fixing.ts";
-import type { LineFix } from "./problem.ts";
+import type { Files } from "../culture/names.ts";
+import { lineAt, removingDoubled, replacingWith } from "./fixing.ts";
+import type { LineFix, Problem } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
 import { allOf, inQuotes, nameOf, oneOf, sourceName } from "./words.ts";
 
@@ -66,8 +68,27 @@ function undeclaredFixes(finding: Undeclared): readonly LineFix[] {
   ];
 }
 
+/** Where the name is declared in the file that isn't used. */
+function undeclaredRelated(finding: Undeclared, files: Files): Problem["related"] {
+  if ("severalSources" in finding || !finding.elsewhere) return [];
+  const file = finding.elsewhere;
+  const section = files.get(file)?.sections.find(({ name }) => name?.text === finding.word);
+  if (!section?.name) return [];
+  const { start, end } = section.name;
+  const place = { file, line: section.headerLine, span: { start, end } };
+  return [{ place, message: `Here ${inQuotes(finding.word)} is declared` }];
+}
+
+/** A fact that says again what the first one says may go. */
+function twiceFixes({ place, what, first }: Of<"name/twice">, files: Files): readonly LineFix[] {
+  const here = lineAt(files, place)?.statement;
+  const there = first && lineAt(files, first)?.statement;
+  if (what !== "fact" || !first || !here || !there || summaryOf(here) !== summaryOf(there)) return [];
+  return removingDoubled(place, first, files);
+}
+
 /** The way from a file to another, both counted from the farm's folder. */
-function pathTo(from: string, to: string): string {
+export function pathTo(from: string, to: string): string {
   const here = from.split("/").slice(0, -1);
   const there = to.split("/");
   let shared = 0;
@@ -95,6 +116,7 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
         : "This line is left out.",
     todo: "Correct the name, declare it, or use the file that declares it.",
     todoHere: undeclaredTodo,
+    related: undeclaredRelated,
     fixes: undeclaredFixes,
     background:
       "A file sees its own names and those of the files that it uses, and that these use. Pumps, hand doses and cohorts are names of one system.",
@@ -120,6 +142,7 @@ export const nameRules: Rules<"name/undeclared" | "name/twice" | "name/ambiguous
             ? "Give one of them another name."
             : "Give it a name of your own.",
     related: ({ first, word }) => (first ? [{ place: first, message: `The first ${inQuotes(word)}` }] : []),
+    fixes: twiceFixes,
     background:
       "A solution may be declared again with `from DATE` behind its name: that is its next recipe, and no mistake.",
     example: {

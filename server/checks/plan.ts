@@ -29,6 +29,7 @@ function reason(by: string): string {
   const limit = limitIn(by);
   if (limit) return `the limit on ${limit} stands in the way`;
   if (by.endsWith(" hours")) return `${sourceOf(by)} can't give more in its hours`;
+  if (by.endsWith(" least")) return `the smallest dose of ${sourceOf(by)} is more than one dose may be`;
   return by.endsWith(" dose") ? `${sourceOf(by)} can't give more in its doses` : by;
 }
 
@@ -41,6 +42,8 @@ const limitIn = (by: string): string | null => {
 function heldBackTodo({ by }: Obstacle): string {
   const first = /^(magnesium under|calcium over) /.exec(by);
   if (first) return by.startsWith("magnesium") ? "Raise magnesium first." : "Let calcium come down first.";
+  if (by.endsWith(" least")) return "Dilute the solution, or give it by hand or with a finer pump.";
+  if (by.endsWith(" max")) return "Move the aim below the limit, or the limit above the aim.";
   if (by.endsWith(" hours")) return "Give the pump more hours or a faster head, or make a stronger solution.";
   return /^(Ω|sea water)| dose$|^pH /.test(by)
     ? "Spread it over more and smaller doses, or add a pump."

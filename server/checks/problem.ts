@@ -5,14 +5,18 @@ import type { Place } from "../culture/place.ts";
 export const severities = ["error", "warning", "info", "hint"] as const;
 export type Severity = (typeof severities)[number];
 
-/** An edit inside one line: UTF-16 offsets, end exclusive. A `\n` in the text starts a new line. */
+/**
+ * An edit inside one line: UTF-16 offsets from the line's first character (a byte order mark not counted), end
+ * exclusive.
+ */
 export interface LineEdit {
   readonly file: string;
   /** From 0. */
   readonly line: number;
   readonly start: number;
   readonly end: number;
-  readonly text: string;
+  /** A `\n` starts a new line, with the line ending of the file. Null: the whole line goes, its ending too. */
+  readonly text: string | null;
 }
 
 export interface LineFix {

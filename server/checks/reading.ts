@@ -1,6 +1,9 @@
 /** Readings that sea water can't have, rarely has, or that a technician set aside. */
 import { parameterOf } from "../../grammar/parameters.ts";
+import type { Files } from "../culture/names.ts";
 import { bandFigure } from "./figures.ts";
+import { lineAt, replacing } from "./fixing.ts";
+import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
 import { inQuotes } from "./words.ts";
 
@@ -20,6 +23,18 @@ const range = ({ parameter, range: [low, high], unit }: OffRange): string =>
   // Nitrate and phosphate have no upper end.
   high === Number.MAX_VALUE ? "0 and above" : bandFigure(parameter, low, high, unit);
 
+/** The point may have been forgotten: offered, never done unasked. */
+function pointSet({ place, written, tenth }: OffRange, files: Files): readonly LineFix[] {
+  const { span } = place;
+  const text = lineAt(files, place)?.text;
+  if (tenth === null || !span || text === undefined) return [];
+  // No parameter's name has a digit in it: the first number is the one meant.
+  const digits = /\d+(?:\.\d+)?/.exec(text.slice(span.start, span.end));
+  if (digits?.[0] !== written) return [];
+  const start = span.start + digits.index;
+  return replacing({ ...place, span: { start, end: start + written.length } }, tenth, false);
+}
+
 export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "reading/disregarded"> = {
   "reading/impossible": {
     severity: "error",
@@ -34,6 +49,7 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
       finding.tenth
         ? `Is this ${finding.tenth}?`
         : `Check the number and its unit; possible is ${range(finding)}.`,
+    fixes: pointSet,
     background:
       "Possible, as common practice without a source: alkalinity 0 to 20 meq/L, calcium 0 to 1000 mg/L, magnesium 0 to 3000, potassium 0 to 1500, strontium 0 to 100, salinity 0 to 60, temperature −2 to 45 °C, pH 4 to 11.",
     example: {
@@ -52,6 +68,7 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
       tenth
         ? `Is this ${tenth}?`
         : "Test again; if the reading was wrong, end its line with disregard and the reason.",
+    fixes: pointSet,
     background: "What is usual is common practice without a source.",
     example: {
       fires: `${vat}  2026-11-30 08:00 read salinity 22\n`,

@@ -1,4 +1,5 @@
 /** What a rule is: everything that is said about one code. The pages in `docs/problems/` start from it too. */
+import type { Files } from "../culture/names.ts";
 import type { DosingFinding } from "../dosing/finding.ts";
 import type { LineFix, Problem, Severity } from "./problem.ts";
 
@@ -11,8 +12,22 @@ export type FileFinding = {
   | { readonly code: "file/more"; readonly hidden: number }
 );
 
+/** A code in a `# quiet:` comment that quietens nothing, and why. */
+export interface QuietFinding {
+  readonly code: "quiet/unused";
+  readonly place: DosingFinding["place"];
+  readonly system: null;
+  /** The code as written; empty where none is. */
+  readonly word: string;
+  readonly why: "nothing-here" | "error" | "unknown" | "no-code" | "no-line";
+  readonly wholeFile: boolean;
+  readonly nearest: readonly string[];
+  /** What the comment is without this code: an edit's place and text. */
+  readonly without: { readonly start: number; readonly end: number };
+}
+
 /** Everything that can be found. */
-export type Finding = DosingFinding | FileFinding;
+export type Finding = DosingFinding | FileFinding | QuietFinding;
 
 /** A line that nobody can have written isn't read; it is told as a file that can't be read. */
 export type Code = Exclude<Finding["code"], "syntax/too-long">;
@@ -45,9 +60,10 @@ export interface Rule<C extends Code = Code> {
   readonly whyHere?: (finding: Of<C>) => string;
   /** What to do, likewise. */
   readonly todo: string;
-  readonly todoHere?: (finding: Of<C>) => string;
-  readonly related?: (finding: Of<C>) => Problem["related"];
-  readonly fixes?: (finding: Of<C>) => readonly LineFix[];
+  readonly todoHere?: (finding: Of<C>, files: Files) => string;
+  readonly related?: (finding: Of<C>, files: Files) => Problem["related"];
+  /** What would mend it; the files are those that it was found in. */
+  readonly fixes?: (finding: Of<C>, files: Files) => readonly LineFix[];
   /** For the page: what stands behind a threshold, and anything else worth knowing. */
   readonly background?: string;
   /** For the page, where the severity depends on the finding. */

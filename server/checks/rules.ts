@@ -1,4 +1,5 @@
 /** The one table of all rules, and what makes problems of findings with it. */
+import type { Files } from "../culture/names.ts";
 import { comparePlaces } from "../culture/place.ts";
 import type { DosingFinding } from "../dosing/finding.ts";
 import { fileRules } from "./file.ts";
@@ -7,6 +8,7 @@ import { nameRules } from "./name.ts";
 import { overdoseRules } from "./overdose.ts";
 import { planRules } from "./plan.ts";
 import type { Problem } from "./problem.ts";
+import { quietRules } from "./quiet.ts";
 import { readingRules } from "./reading.ts";
 import type { Code, FileFinding, Finding, Rule, Rules } from "./rule.ts";
 import { syntaxRules } from "./syntax.ts";
@@ -30,28 +32,39 @@ export const rules: Rules<Code> = {
   ...waterRules,
   ...overdoseRules,
   ...planRules,
+  ...quietRules,
   ...fileRules,
 };
 
 export const codes = Object.keys(rules) as readonly Code[];
 
-/** What is told of findings: in order of place and code, the same once. */
-export function problemsOf(findings: readonly Finding[]): Problem[] {
-  const problems = findings.map((finding) => problemOf(finding)).sort(compareProblems);
+const noFiles: Files = new Map();
+
+/**
+ * What is told of findings: in order of place and code, the same once. Fixes that need more than the finding look
+ * into the files that it was found in.
+ */
+export function problemsOf(findings: readonly Finding[], files: Files = noFiles): Problem[] {
+  return inOrder(findings.map((finding) => problemOf(finding, files)));
+}
+
+/** Problems in order of place and code, the same once. */
+export function inOrder(given: readonly Problem[]): Problem[] {
+  const problems = [...given].sort(compareProblems);
   return problems.filter((problem, index) => {
     const before = problems[index - 1];
     return before === undefined || !isSame(before, problem);
   });
 }
 
-function problemOf(finding: Finding): Problem {
+function problemOf(finding: Finding, files: Files): Problem {
   const known = finding.code === "syntax/too-long" ? unread(finding) : finding;
   const { place, system } = known;
   // The table's own type holds each rule to the findings of its code.
   const rule = rules[known.code] as unknown as Rule;
   const of = known as Parameters<Rule["says"]>[0];
   const why = rule.whyHere?.(of) ?? rule.why;
-  const todo = rule.todoHere?.(of) ?? rule.todo;
+  const todo = rule.todoHere?.(of, files) ?? rule.todo;
   return {
     code: known.code,
     severity: typeof rule.severity === "string" ? rule.severity : rule.severity(of),
@@ -64,8 +77,8 @@ function problemOf(finding: Finding): Problem {
       span: place.span && { start: place.span.start, end: place.span.end },
     },
     system,
-    related: rule.related?.(of) ?? [],
-    fixes: rule.fixes?.(of) ?? [],
+    related: rule.related?.(of, files) ?? [],
+    fixes: rule.fixes?.(of, files) ?? [],
   };
 }
 

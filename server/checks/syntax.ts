@@ -1,12 +1,14 @@
 /** Lines that can't be read. Each is left out and every other line still counts. */
 
 import { numberReadings } from "../../grammar/numbers.ts";
-import { statementTable } from "../../grammar/statements.ts";
-import type { SectionKind } from "../../grammar/syntax.ts";
 import { isReserved } from "../../grammar/tokens.ts";
-import { replacingWith } from "./fixing.ts";
+import type { Files } from "../culture/names.ts";
+import type { Place } from "../culture/place.ts";
+import { adding, lineAt, replacingWith, standsApart } from "./fixing.ts";
+import { misplaced, misplacedFixes } from "./misplaced.ts";
+import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
-import { inQuotes, isParameter, oneOf } from "./words.ts";
+import { inQuotes, isParameter, oneOf, said } from "./words.ts";
 
 const why = "What the line says counts for nothing until it can be read; every other line counts.";
 const leftOut = (): string => "This line is left out.";
@@ -17,11 +19,28 @@ const isRecipe = ({ place }: Of<"syntax/unfinished">): boolean => place.span ===
 const isFormula = (expected: readonly string[]): boolean =>
   expected[0]?.startsWith("a chemical formula") === true;
 
-/** What could stand there: kinds of words (`a unit`) and parameters as they are, words to be written so in quotes. */
-const said = (expected: readonly string[]): string =>
-  oneOf(expected.map((word) => (/^an? /.test(word) || isParameter(word) ? word : inQuotes(word))));
+/** `x30x40`, as people write sizes without spaces. */
+const isCrossed = ({ word, expected }: Of<"syntax/unknown-word">): boolean =>
+  /^x\d+(?:x\d+)*$/.test(word) && expected.includes("x");
 
-function unknownWord({ word, expected }: Of<"syntax/unknown-word">): string {
+/** The sizes that the place is among with a space on either side of each x; none where no such sizes are there. */
+function crossesApart(place: Place, files: Files): readonly LineFix[] {
+  const { span } = place;
+  const text = lineAt(files, place)?.text ?? "";
+  const sizes = [...text.matchAll(/(?<![\w.,-])\d+(?:\.\d+)?(?:x\d+(?:\.\d+)?)+(?![\w.,])/g)].find(
+    ({ index, 0: found }) => span && index <= span.start && span.start < index + found.length,
+  );
+  if (!sizes) return [];
+  const { index: start, 0: found } = sizes;
+  const edits = [{ ...place, start, end: start + found.length, text: found.replaceAll("x", " x ") }].map(
+    ({ span: _, ...edit }) => edit,
+  );
+  return [{ title: "Put spaces round x", safe: true, edits }];
+}
+
+function unknownWord(finding: Of<"syntax/unknown-word">): string {
+  const { word, expected } = finding;
+  if (isCrossed(finding)) return `In ${inQuotes(word)} the x stands without spaces.`;
   if (expected.includes("a name") && isReserved(word))
     return `${inQuotes(word)} is a word of the language and can't be a name.`;
   if (isFormula(expected)) return `${inQuotes(word)} can't be read as part of a chemical formula.`;
@@ -33,60 +52,6 @@ function unknownWord({ word, expected }: Of<"syntax/unknown-word">): string {
   return `${inQuotes(word)} has no meaning here.`;
 }
 
-const sections = (belongs: readonly SectionKind[]): string => {
-  const words = oneOf(belongs);
-  return `${/^[aeiou]/.test(words) ? "an" : "a"} ${words}`;
-};
-
-const isHeader = (word: string): boolean =>
-  statementTable.some((row) => row.form === "header" && row.word === word);
-
-type Misplaced = Of<"syntax/misplaced">;
-
-/** What is said and to be done for each way in which a word can stand wrongly. */
-const misplaced: Readonly<
-  Record<Misplaced["why"], { says: (finding: Misplaced) => string; todo: (finding: Misplaced) => string }>
-> = {
-  section: {
-    says: ({ word, belongs }) =>
-      `A line that starts with ${inQuotes(word)} belongs in ${sections(belongs)} section.`,
-    todo: ({ belongs }) => `Move it under the header of ${sections(belongs)}.`,
-  },
-  margin: {
-    says: ({ word }) => `${inQuotes(word)} stands at the margin, where sections begin.`,
-    todo: () => "Indent the line by two spaces.",
-  },
-  repeated: {
-    says: ({ word }) => `${inQuotes(word)} stands on this line twice.`,
-    todo: () => "Keep one of the two.",
-  },
-  "keyword-as-name": {
-    says: ({ word }) => `${inQuotes(word)} is a word of the language and can't be a name.`,
-    todo: ({ word }) => `Choose another name, for example ${word}-1.`,
-  },
-  dated: {
-    says: ({ word }) => `A line with ${inQuotes(word)} states a fact, and doesn't start with a date.`,
-    todo: ({ word }) =>
-      isHeader(word) ? "Leave out the date." : "Write the date at the end instead: from 2026-12-01.",
-  },
-  undated: {
-    says: ({ word }) => `A line with ${inQuotes(word)} says what happened, and starts with its date.`,
-    todo: () => "Put the date in front, for example 2026-12-01 08:00.",
-  },
-  "no-section": {
-    says: () => "This line stands before any section.",
-    todo: ({ belongs }) =>
-      belongs.length > 0
-        ? `Put it under the header of ${sections(belongs)}.`
-        : "Put it under its section's header.",
-  },
-  order: {
-    says: ({ word }) => `${inQuotes(word)} stands at the wrong place of its line.`,
-    todo: ({ expected }) =>
-      expected && expected.length > 0 ? `Here comes ${said(expected)}.` : "Move it to its place.",
-  },
-};
-
 /** Digits that are plain and still can't be what is asked for here. */
 const isPlain = (word: string): boolean => /^-?\d+(\.\d+)?$/.test(word);
 const mostDigits = 15;
@@ -97,7 +62,8 @@ function numberForm({ word }: Of<"syntax/number-form">): string {
   return word.startsWith("-") ? `${inQuotes(word)} is below zero.` : `${inQuotes(word)} can't be used here.`;
 }
 
-function numberTodo({ word, readings }: Of<"syntax/number-form">): string {
+function numberTodo({ place, word, readings }: Of<"syntax/number-form">, files: Files): string {
+  if (!standsApart(files, place)) return "Put a space before the number, and on either side of an x.";
   if (readings.length > 0) return `Write ${oneOf(readings)}.`;
   if (!isPlain(word))
     return "Write the digits with a point before the decimals and nothing else between them.";
@@ -109,6 +75,13 @@ function numberTodo({ word, readings }: Of<"syntax/number-form">): string {
 /** `8.10`, which may be a time and may be a number. */
 const isHalfTime = (word: string): boolean => /^\d{1,2}\.\d\d$/.test(word);
 const isTime = (word: string): boolean => word.includes(":") || isHalfTime(word);
+
+/**
+ * True where its one reading is all that a word can have meant: not `8.10`, which may be a number, nor `8:5`, which
+ * may lack a digit, nor `2026-13-05`, whose month may be a slip.
+ */
+const isCertain = (word: string): boolean =>
+  !isHalfTime(word) && !/^[Tt]?\d{1,2}:\d(?!\d)/.test(word) && !/^\d{4}-\d\d-\d\d$/.test(word);
 
 export const syntaxRules: Rules<
   | "syntax/unknown-word"
@@ -125,15 +98,20 @@ export const syntaxRules: Rules<
     why,
     whyHere: leftOut,
     todo: "Write the word as the language spells it; the message offers the nearest ones, or names what can stand there.",
-    todoHere: ({ expected, nearest }) =>
+    todoHere: ({ expected, nearest, ...finding }) =>
       nearest.length > 0
         ? `Is ${oneOf(nearest)} meant?`
-        : isFormula(expected)
-          ? "Write it like SrCl2·6H2O."
-          : expected.length > 0
-            ? `Here can stand ${said(expected)}.`
-            : "Remove it, or start a comment with # before it.",
-    fixes: ({ place, nearest }) => replacingWith(place, nearest, false),
+        : isCrossed({ ...finding, expected, nearest })
+          ? "Put a space on either side of it, as in 40 cm x 30 cm."
+          : isFormula(expected)
+            ? "Write it like SrCl2·6H2O."
+            : expected.length > 0
+              ? `Here can stand ${said(expected)}.`
+              : "Remove it, or start a comment with # before it.",
+    fixes: (finding, files) =>
+      isCrossed(finding)
+        ? crossesApart(finding.place, files)
+        : replacingWith(finding.place, finding.nearest, false),
     background:
       "A misspelt header is one problem: the lines below it are read as the nearest header's section. Where no header is near, they are left out with it.",
     example: {
@@ -165,6 +143,7 @@ export const syntaxRules: Rules<
       if (expected[0] === '"') return 'Put a " at its end.';
       return expected.length > 0 ? `Next comes ${said(expected)}.` : "Finish it, or remove it.";
     },
+    fixes: ({ place, expected }) => (place.span && expected[0] === '"' ? adding(place, '"', false) : []),
     background: "Of a solution whose recipe lacks a part the problem stands at the solution's header.",
     example: {
       fires: "system vat\n  tank main 500 L\n  evaporates\n",
@@ -179,7 +158,10 @@ export const syntaxRules: Rules<
     whyHere: leftOut,
     todo: "Write the digits with a point before decimals and nothing between thousands.",
     todoHere: numberTodo,
-    fixes: ({ place, word, readings }) => replacingWith(place, readings, sameNumber(word, readings)),
+    fixes: ({ place, word, readings }, files) =>
+      standsApart(files, place)
+        ? replacingWith(place, readings, sameNumber(word, readings))
+        : crossesApart(place, files),
     background:
       "A point stands before decimals, and nothing between thousands: 1,250 is 1.25 to some and 1250 to others, and a dose a thousand times too large is not to be guessed at.",
     example: {
@@ -203,7 +185,8 @@ export const syntaxRules: Rules<
         : isTime(word)
           ? "Write hours and minutes, 00:00 to 24:00."
           : "Write year, month and day of a day that exists.",
-    fixes: ({ place, word, readings }) => replacingWith(place, readings, !isHalfTime(word)),
+    fixes: ({ place, word, readings }, files) =>
+      standsApart(files, place) ? replacingWith(place, readings, isCertain(word)) : [],
     background: "03/04 is March to some and April to others, so the year comes first and the day last.",
     example: {
       fires: 'system vat\n  tank main 500 L\n\nlog vat\n  03.04.2026 08:00 note "Moved to the new hall."\n',
@@ -217,11 +200,8 @@ export const syntaxRules: Rules<
     why,
     whyHere: leftOut,
     todo: "Move the line or the word to where the message says that it belongs.",
-    todoHere: (finding) => misplaced[finding.why].todo(finding),
-    fixes: ({ place: { file, line }, why }) =>
-      why === "margin"
-        ? [{ title: "Indent the line", safe: false, edits: [{ file, line, start: 0, end: 0, text: "  " }] }]
-        : [],
+    todoHere: (finding, files) => misplaced[finding.why].todo(finding, files),
+    fixes: misplacedFixes,
     background:
       "Standing facts belong to what they describe (`system`, `solution`, `kit` …) and may end with `from` and `until`; what happened belongs in a `log` or `store` and starts with its date.",
     example: {

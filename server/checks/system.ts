@@ -1,5 +1,10 @@
 /** Systems that can't be as they are declared. */
+import type { SystemFact } from "../../grammar/syntax.ts";
+import type { Files } from "../culture/names.ts";
+import type { Place } from "../culture/place.ts";
 import { bandFigure, edgeFigure, figure } from "./figures.ts";
+import { lineAt, swapping } from "./fixing.ts";
+import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
 import { atStart } from "./words.ts";
 
@@ -10,6 +15,41 @@ function noWater({ reason, volumeL }: Of<"system/no-volume">): string {
   if (reason === "empty-tanks") return "The tanks of this system hold nothing.";
   const over = volumeL < 0 ? `${figure(-volumeL, "L")} more than` : "all that";
   return `What is displaced takes up ${over} the tanks hold.`;
+}
+
+function holdAt(files: Files, place: Place): Extract<SystemFact, { kind: "hold" }> | null {
+  const statement = lineAt(files, place)?.statement;
+  return statement?.kind === "hold" ? statement : null;
+}
+
+/** The lower edge and the higher one in each other's place; a unit written once stays where it is. */
+function edgesSwapped({ place, low, high }: Of<"system/empty-hold">, files: Files): readonly LineFix[] {
+  const hold = holdAt(files, place);
+  const text = lineAt(files, place)?.text;
+  if (!hold || text === undefined || low <= high) return [];
+  const shared = hold.low.borrowedUnit || hold.high.borrowedUnit;
+  const [left, right] = shared ? [hold.low.number, hold.high.number] : [hold.low, hold.high];
+  return swapping(place, text, "Swap the two values", left, right);
+}
+
+function aimLeftOut({ place }: Of<"system/aim-outside">, files: Files): readonly LineFix[] {
+  const aim = holdAt(files, place)?.aim;
+  const text = lineAt(files, place)?.text;
+  if (!aim || text === undefined) return [];
+  const [word] = /\s+aim\s+$/.exec(text.slice(0, aim.start)) ?? [];
+  if (!word) return [];
+  const { file, line } = place;
+  const edits = [{ file, line, start: aim.start - word.length, end: aim.end, text: "" }];
+  return [{ title: "Leave out the aim", safe: false, edits }];
+}
+
+function datesSwapped({ place }: Of<"system/until-before-from">, files: Files): readonly LineFix[] {
+  const line = lineAt(files, place);
+  const statement = line?.statement;
+  if (!line || !statement || !("until" in statement)) return [];
+  const { from, until } = statement;
+  if (!from || !until || from.minute === until.minute) return [];
+  return swapping(place, line.text, "Swap the two dates", from, until);
 }
 
 export const systemRules: Rules<
@@ -54,6 +94,7 @@ export const systemRules: Rules<
       `The band of ${parameter} is empty: ${bandFigure(parameter, low, high, unit)}.`,
     why: "This line is left out, so this parameter isn't held.",
     todo: "Write the lower value first, and a higher one after it.",
+    fixes: edgesSwapped,
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 26.5 to 24.5 degC\n",
       silent: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC\n",
@@ -66,6 +107,7 @@ export const systemRules: Rules<
       `${atStart(parameter)} is to aim at ${edgeFigure(parameter, aim, unit)}, outside its band of ${bandFigure(parameter, low, high, unit)}.`,
     why: "The middle of the band is aimed at instead.",
     todo: "Move the aim into the band, or leave it out.",
+    fixes: aimLeftOut,
     example: {
       fires: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 27\n",
       silent: "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC aim 25\n",
@@ -77,6 +119,7 @@ export const systemRules: Rules<
     says: () => "This ends before it begins, or at the same moment.",
     why: "It never holds, so this line is left out.",
     todo: "Check the two dates; on the day of until it holds no more.",
+    fixes: datesSwapped,
     example: {
       fires: "system vat\n  tank main 500 L\n  evaporates 4 L/day from 2026-11-01 until 2026-10-01\n",
       silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day from 2026-10-01 until 2026-11-01\n",

@@ -1,5 +1,7 @@
 /** Numbers whose unit is missing, unknown, or measures something else. */
-import { adding, replacing, replacingWith } from "./fixing.ts";
+import type { Files } from "../culture/names.ts";
+import type { Place } from "../culture/place.ts";
+import { adding, lineAt, replacing, replacingWith } from "./fixing.ts";
 import type { Rules } from "./rule.ts";
 import { inQuotes, oneOf } from "./words.ts";
 
@@ -14,6 +16,18 @@ function written(examples: readonly string[]): string {
 
 const hasUnit = (example: string): boolean => example !== "no unit";
 
+/** Of a unit like `mgg/L` only a part is misspelt: where that stands. */
+function partOf(place: Place, word: string, files: Files): Place {
+  const { span } = place;
+  if (!span || span.end - span.start === word.length) return place;
+  const text = lineAt(files, place)?.text.slice(span.start, span.end) ?? "";
+  const parts = [...text.matchAll(/[^\s/]+/g)].filter(([part]) => part === word);
+  const [only, ...others] = parts;
+  if (!only || others.length > 0) return { ...place, span: null };
+  const start = span.start + only.index;
+  return { ...place, span: { start, end: start + word.length } };
+}
+
 export const unitRules: Rules<
   "unit/unknown" | "unit/dimension" | "unit/missing" | "unit/as-caco3" | "unit/ppm"
 > = {
@@ -25,11 +39,7 @@ export const unitRules: Rules<
     todo: "Write the unit as the language spells it.",
     todoHere: ({ nearest }) =>
       nearest.length > 0 ? `Is ${oneOf(nearest)} meant?` : "Write a unit such as mL, mg/L, meq/L or dKH.",
-    fixes: ({ place, word, nearest }) =>
-      // Of a unit like `mgg/L` only a part is misspelt, and where that part stands isn't known here.
-      place.span && place.span.end - place.span.start === word.length
-        ? replacingWith(place, nearest, false)
-        : [],
+    fixes: ({ place, word, nearest }, files) => replacingWith(partOf(place, word, files), nearest, false),
     example: {
       fires: "system vat\n  tank main 500 L\n  evaporates 4 L/dya\n",
       silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day\n",
@@ -43,6 +53,13 @@ export const unitRules: Rules<
     why: leftOut,
     todo: "Write the number in one of the units that the message gives as examples.",
     todoHere: ({ examples }) => `Write it ${written(examples)}.`,
+    fixes: ({ place, unit, examples }) =>
+      // A time that was forgotten; any other unit would need another number.
+      replacingWith(
+        place,
+        examples.filter((example) => example.startsWith(`${unit}/`)),
+        false,
+      ),
     background:
       "Every number is checked against what it stands for, so that a volume can't pass for a flow, or a mass for a volume.",
     example: {

@@ -1,6 +1,17 @@
 /** `use` lines that lead to no file, out of the farm, or back. */
-import type { Rules } from "./rule.ts";
-import { inQuotes } from "./words.ts";
+import { nearestWords } from "../../grammar/nearest.ts";
+import type { Files } from "../culture/names.ts";
+import { replacing } from "./fixing.ts";
+import { pathTo } from "./name.ts";
+import type { Of, Rules } from "./rule.ts";
+import { inQuotes, oneOf } from "./words.ts";
+
+/** Paths of the farm's files, from this one, that are a slip away from the one written. */
+const nearPaths = ({ place, path }: Of<"use/missing-file">, files: Files): readonly string[] =>
+  nearestWords(
+    path,
+    [...files.keys()].filter((file) => file !== place.file).map((file) => pathTo(place.file, file)),
+  );
 
 export const useRules: Rules<"use/missing-file" | "use/outside" | "use/cycle"> = {
   "use/missing-file": {
@@ -9,6 +20,14 @@ export const useRules: Rules<"use/missing-file" | "use/outside" | "use/cycle"> =
     says: ({ path }) => `There is no file ${inQuotes(path)} here.`,
     why: "The names that it declares are unknown in this file.",
     todo: "Check the path, which counts from the folder of this file.",
+    todoHere: (finding, files) => {
+      const near = nearPaths(finding, files);
+      return near.length > 0
+        ? `Is ${oneOf(near)} meant?`
+        : "Check the path, which counts from the folder of this file.";
+    },
+    fixes: (finding, files) =>
+      nearPaths(finding, files).flatMap((path) => replacing(finding.place, `"${path}"`, false)),
     example: {
       fires: 'use "solution.marl"\n\nsystem vat\n  tank main 500 L\n',
       silent:

@@ -1,6 +1,7 @@
 /** What is wrong with the water now, and what soon will be. */
 import { writeDate } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
+import type { DisplayUnit } from "../culture/model.ts";
 import {
   bandFigure,
   changeFigure,
@@ -40,6 +41,10 @@ function outsideTodo({ parameter, value, low }: Of<"water/outside-hold">): strin
     ? "Dose as planned, and no faster; test again if the value surprises you."
     : "Dose less, as planned, until it has come down; test again if the value surprises you.";
 }
+
+/** Whether a value isn't the reading itself any more, as people see it. */
+const isCarried = (parameter: ParameterName, value: number, read: number, unit: DisplayUnit): boolean =>
+  valueFigure(parameter, value, unit) !== valueFigure(parameter, read, unit);
 
 type Leaves = Of<"water/leaves-hold-soon" | "water/leaves-hold">;
 
@@ -105,8 +110,7 @@ export const waterRules: Rules<
     title: "A parameter outside its band",
     says: ({ parameter, value, read, low, high, unit }) => {
       const now = valueBeside(parameter, value, [low, high], unit);
-      const carried = valueFigure(parameter, value, unit) !== valueFigure(parameter, read, unit);
-      return `${atStart(parameter)} is ${now}${carried ? " by now" : ""}; its band is ${bandFigure(parameter, low, high, unit)}.`;
+      return `${atStart(parameter)} is ${now}${isCarried(parameter, value, read, unit) ? " by now" : ""}; its band is ${bandFigure(parameter, low, high, unit)}.`;
     },
     why: "The band is what these corals are kept in.",
     todo: "Follow the plan, no faster than it says, and test again if the value surprises you. Salinity is mended with fresh or saltier water; a low pH with the room's air.",
@@ -129,8 +133,8 @@ export const waterRules: Rules<
   "water/beyond-limit": {
     severity: "error",
     title: "A parameter beyond its limit",
-    says: ({ parameter, which, value, limit, unit }) =>
-      `${atStart(parameter)} is ${valueBeside(parameter, value, [limit], unit)}, ${which === "max" ? "above" : "below"} its limit of ${edgeFigure(parameter, limit, unit)}.`,
+    says: ({ parameter, which, value, read, limit, unit }) =>
+      `${atStart(parameter)} is ${valueBeside(parameter, value, [limit], unit)}${isCarried(parameter, value, read, unit) ? " by now, reckoned from this reading" : ""}, ${which === "max" ? "above" : "below"} its limit of ${edgeFigure(parameter, limit, unit)}.`,
     why: "Beyond a limit not growth but lives are at risk.",
     todo: "Test again with another kit. If it is confirmed, stop what drives it, and renew water where it is too high.",
     todoHere: ({ which }) =>

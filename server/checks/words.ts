@@ -33,6 +33,10 @@ export const atStart = (parameter: ParameterName): string =>
 
 export const isParameter = (word: string): boolean => parameterOf(word) !== undefined;
 
+/** What could stand there: kinds of words (`a unit`) and parameters as they are, words to be written so in quotes. */
+export const said = (expected: readonly string[]): string =>
+  oneOf(expected.map((word) => (/^an? /.test(word) || isParameter(word) ? word : inQuotes(word))));
+
 const weekdays = ["Sunday", "Monday", "Tuesday", "Wednesday", "Thursday", "Friday", "Saturday"];
 const months = [
   ...["January", "February", "March", "April", "May", "June", "July"],

@@ -1,6 +1,6 @@
 /** What the model's making can find wrong: code, place and data; the sentences are made in `checks/`. */
 import type { ParameterName } from "../../grammar/parameters.ts";
-import type { LineFinding, Span } from "../../grammar/syntax.ts";
+import type { LineFinding } from "../../grammar/syntax.ts";
 import type { QuantityFinding } from "../quantity/finding.ts";
 import type { DisplayUnit } from "./model.ts";
 import type { Place } from "./place.ts";
@@ -65,8 +65,6 @@ type Own = { readonly place: Place; readonly system: string | null } & (
       readonly writtenUnit: string;
       readonly unit: DisplayUnit;
       readonly range: readonly [number, number];
-      /** Where its digits stand in the line. */
-      readonly digits: Span;
       /** The same digits with the point one place left, where that is usual. */
       readonly tenth: string | null;
     }

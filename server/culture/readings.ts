@@ -197,7 +197,6 @@ function convertValue(
     parameter,
     written,
     writtenUnit: writtenUnit(pending.quantity),
-    digits: spanOf(pending.quantity.number),
     unit,
   };
   const possible = row.possible ?? [0, Number.MAX_VALUE];
@@ -254,8 +253,6 @@ export function eventsSeenAt(events: readonly SystemEvent[], at: number): readon
   });
 }
 
-const spanOf = ({ start, end }: Span): Span => ({ start, end });
-
 /** The unit as it stands on the line; empty for a bare number. */
 const writtenUnit = ({ unit, asCaCO3 }: QuantityText): string =>
   `${unit?.text ?? ""}${asCaCO3 ? " as CaCO3" : ""}`;
@@ -279,7 +276,6 @@ export function isPossible(
     value,
     written: quantity.number.text,
     writtenUnit: writtenUnit(quantity),
-    digits: spanOf(quantity.number),
     unit: displayUnit(quantity, parameter, water),
     range: possible,
     tenth: tenthOf(quantity, parameter, water),

@@ -1,6 +1,9 @@
 /** Whatever stands in a farm's files, what is told of it is whole: a message, a place inside its line, no odd figures. */
 import fc from "fast-check";
 import { expect, test } from "vitest";
+import { readDocument } from "../../grammar/document.ts";
+import { summaryOf } from "../../grammar/write.ts";
+import { applySafeFixes, editedText } from "../../server/checks/apply-fixes.ts";
 import type { Rule } from "../../server/checks/rule.ts";
 import { codes, rules, severityRank } from "../../server/checks/rules.ts";
 import { filesOf, walk } from "./walk.ts";
@@ -14,6 +17,10 @@ const lines = [
   ),
 ];
 
+/** Words that only those know who build readers of languages. */
+const ofReaders =
+  /\b(?:tokens?|pars(?:e|er|ing)|lexer|grammar|syntax|nonterminal|EOF|invalid|illegal|stray character|other letters|unclosed)\b/i;
+
 const odd = /\b(?:NaN|Infinity|undefined|null|unknown L)\b|\[object|-0(?![.\d])/;
 
 function wholeProblems(text: string): void {
@@ -23,6 +30,7 @@ function wholeProblems(text: string): void {
     // What a technician wrote may hold any word; our own sentences may not.
     const own = message.replace(/"[^"]*"/g, "");
     expect(own, `${code}: ${message}\n${text}`).not.toMatch(odd);
+    expect(own, `${code}: ${message}\n${text}`).not.toMatch(ofReaders);
     for (const part of [message, why, todo]) expect(part.length).toBeGreaterThan(4);
     expect(severityRank(severity)).toBeGreaterThanOrEqual(0);
     const line = files.get(place.file)?.split("\n")[place.line];
@@ -75,5 +83,74 @@ test("a working farm with one line changed", () => {
       wholeProblems(changed.join("\n"));
     }),
     { numRuns: 300 },
+  );
+});
+
+const working = codes.flatMap((code) => {
+  const { example } = rules[code] as unknown as Rule;
+  return example && !example.silent.includes("// file:") ? [example.silent] : [];
+});
+
+/** Slips of a line that can be mended unasked, and some that can't. */
+const slips: readonly ((line: string) => string)[] = [
+  (line) => line.replace(/(?<![\w.:-])(\d+)\.(\d+)/, "$1,$2"),
+  (line) => line.replace(/(?<![\w.:-])(\d+)(?= \w)/, "$1,5"),
+  (line) => line.replace(/(?<![\w.:-])0\.(\d+)/, ".$1"),
+  (line) => line.replace(/(\d{4})-(\d\d)-(\d\d)/, "$1/$2/$3"),
+  (line) => line.replace(/(\d{4})-(\d\d)-(\d\d)/, "$3.$2.$1"),
+  (line) => line.trimStart(),
+  (line) => `${line}\n${line}`,
+  (line) => `${line}\n${line} # again`,
+  (line) => line.replace(/ x /g, "x"),
+  (line) => line.replace(/[aeiou]/, ""),
+];
+const slipped = fc
+  .tuple(
+    fc.constantFrom(...working),
+    fc.array(fc.tuple(fc.nat(), fc.constantFrom(...slips)), { minLength: 1, maxLength: 6 }),
+  )
+  .map(([text, chosen]) =>
+    chosen.reduce((before, [at, slip]) => {
+      const all = before.split("\n");
+      return all.with(at % all.length, slip(all[at % all.length]!)).join("\n");
+    }, text),
+  );
+
+test("a safe fix takes its problem away and leaves every other line as it was read", () => {
+  let fixes = 0;
+  const said = (text: string) =>
+    readDocument(text).lines.map(({ statement }) => statement && summaryOf(statement));
+  fc.assert(
+    fc.property(slipped, (text) => {
+      const { problems } = walk(new Map([["farm.marl", text]]));
+      const count = (found: typeof problems, told: string) =>
+        found.filter(({ message }) => message === told).length;
+      for (const { message, place, fixes: offered } of problems) {
+        for (const { edits } of offered.filter(({ safe }) => safe)) {
+          fixes += 1;
+          const after = editedText(text, edits);
+          const now = walk(new Map([["farm.marl", after]])).problems;
+          expect(count(now, message), `${text}\n→\n${after}`).toBeLessThan(count(problems, message));
+          const isGone = edits.some((edit) => edit.text === null);
+          const others = said(text).toSpliced(place.line, 1);
+          expect(said(after).toSpliced(place.line, isGone ? 0 : 1)).toEqual(others);
+        }
+      }
+    }),
+    { numRuns: 200 },
+  );
+  expect(fixes).toBeGreaterThan(20);
+});
+
+test("safe fixes come to an end", () => {
+  fc.assert(
+    fc.property(slipped, (text) => {
+      let texts: ReadonlyMap<string, string> = new Map([["farm.marl", text]]);
+      for (let round = 0; texts.size > 0; round += 1) {
+        expect(round).toBeLessThan(10);
+        texts = applySafeFixes(texts, walk(texts).problems).texts;
+      }
+    }),
+    { numRuns: 200 },
   );
 });

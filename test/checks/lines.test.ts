@@ -139,7 +139,7 @@ system vat
   dissolve sodium-carbonate 400 g
   ^^^^^^^^ error syntax/misplaced A line that starts with "dissolve" belongs in a solution section. This line is left out. Move it under the header of a solution.
   2026-11-30 tank sump 80 L
-             ^^^^ error syntax/misplaced states a fact, and doesn't start with a date. This line is left out. Write the date at the end instead: from 2026-12-01.
+             ^^^^ error syntax/misplaced states a fact, and doesn't start with a date. This line is left out. Write the date at the end instead: from 2026-11-30.
 evaporates 4 L/day
 ^^^^^^^^^^ error syntax/misplaced "evaporates" stands at the margin, where sections begin. This line is left out. Indent the line by two spaces.
 

@@ -3,11 +3,12 @@
  * A problem that isn't drawn fails the test, and so does a drawn one that isn't there.
  */
 import { expect } from "vitest";
+import { editedText } from "../../server/checks/apply-fixes.ts";
 import type { Problem } from "../../server/checks/rules.ts";
 import type { Farm } from "../../server/farm.ts";
 import { filesOf, walk } from "./walk.ts";
 
-const isMark = (line: string): boolean => /^\s*\^+ (?:error|warning|info|hint) /.test(line);
+export const isMark = (line: string): boolean => /^\s*\^+ (?:error|warning|info|hint) /.test(line);
 
 export interface Settings {
   readonly at?: string;
@@ -81,11 +82,11 @@ export function mended(text: string, code: string, title: string, file = "farm.m
   const problem = walk(files).problems.find((other) => other.code === code);
   const fix = problem?.fixes.find((other) => other.title === title);
   expect(fix, `${code}: ${problem?.fixes.map((other) => other.title).join(", ")}`).toBeDefined();
-  const lines = files.get(file)!.split("\n");
-  for (const edit of [...fix!.edits].sort((left, right) => right.start - left.start)) {
-    const line = lines[edit.line]!;
-    expect(edit.end).toBeLessThanOrEqual(line.length);
-    lines[edit.line] = line.slice(0, edit.start) + edit.text + line.slice(edit.end);
+  const given = files.get(file)!;
+  const lines = given.split("\n");
+  for (const edit of fix!.edits) {
+    expect(edit.file).toBe(file);
+    expect(edit.end).toBeLessThanOrEqual(lines[edit.line]!.length);
   }
-  return lines.join("\n");
+  return editedText(given, fix!.edits);
 }

@@ -1,21 +1,12 @@
 /** A farm out of one text, walked once. */
 import { readMoment } from "../../grammar/dates.ts";
 import { advance, type Farm } from "../../server/farm.ts";
+import { exampleMoment, filesOf } from "../../server/report/explain/problems.ts";
 
-/** The moment that fixtures are seen as at, and the real clock of theirs. */
-export const fixtureMoment = "2026-12-01T08:00";
+/** The moment that fixtures are seen as at, and the real clock of theirs: that of the rules' examples. */
+export const fixtureMoment = exampleMoment;
 
-/** Files by name: the text up to the first `// file: NAME` is the file named by `file`. */
-export function filesOf(text: string, file = "farm.marl"): Map<string, string> {
-  const [first = "", ...others] = text.split(/^\/\/ file: /m);
-  const files = new Map<string, string>();
-  if (first.trim() !== "" || others.length === 0) files.set(file, first);
-  for (const other of others) {
-    const end = other.indexOf("\n");
-    files.set(other.slice(0, end).trim(), other.slice(end + 1));
-  }
-  return files;
-}
+export { filesOf };
 
 export function walk(files: ReadonlyMap<string, string>, at = fixtureMoment): Farm {
   const moment = readMoment(at, "midnight");
