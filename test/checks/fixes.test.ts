@@ -58,9 +58,9 @@ describe("a fix mends its line", () => {
   });
 
   test("a file that declares the name is used", () => {
-    const others = "// file: shared/parts.marl\nsolution part\n  supplies alkalinity 1.6 meq/mL\n";
+    const others = "// file: common/parts.marl\nsolution part\n  supplies alkalinity 1.6 meq/mL\n";
     const text = `// file: north/system.marl\n${vat("by-hand part")}${others}`;
-    const title = 'Add use "../shared/parts.marl"';
+    const title = 'Add use "../common/parts.marl"';
     const after = mended(text, "name/undeclared", title, "north/system.marl");
     const files = new Map([...filesOf(text), ["north/system.marl", after]]);
     expect(walk(files).problems).toEqual([]);

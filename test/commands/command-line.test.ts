@@ -194,10 +194,10 @@ describe("which farm, and which part of it is told", () => {
 
   test("a link inside the farm is another name for where it leads, and counts once", () => {
     const shared = vat.replace(/^log vat[\s\S]*/m, "");
-    const logs = 'use "../shared/vat.marl"\n\nlog vat\n  2026-12-01 08:00 read alkalinity 7.9 dKH\n';
+    const logs = 'use "../common/vat.marl"\n\nlog vat\n  2026-12-01 08:00 read alkalinity 7.9 dKH\n';
     const root = folder({ "farm.marl": "", "really/here/vat.marl": shared, "logs/december.marl": logs });
-    symlinkSync(join(root, "really/here"), join(root, "shared"));
-    symlinkSync(join(root, "shared"), join(root, "round-about"));
+    symlinkSync(join(root, "really/here"), join(root, "common"));
+    symlinkSync(join(root, "common"), join(root, "round-about"));
     symlinkSync(join(root, "nowhere"), join(root, "broken.marl"));
     symlinkSync(root, join(root, "itself"));
     const report = JSON.parse(marl(root, ["check", "--format", "json", ...at]).out);
@@ -206,7 +206,7 @@ describe("which farm, and which part of it is told", () => {
     );
     expect(report.systems.map((system: { file: string }) => system.file)).toEqual(["really/here/vat.marl"]);
     expect(report.systems[0].readings).toHaveLength(1);
-    const through = JSON.parse(marl(root, ["check", "shared/vat.marl", "--format", "json", ...at]).out);
+    const through = JSON.parse(marl(root, ["check", "common/vat.marl", "--format", "json", ...at]).out);
     expect(through.systems).toHaveLength(1);
   });
 
