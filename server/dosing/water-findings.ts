@@ -129,8 +129,12 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
       const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);
       if (!now || !limit) return [];
       const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
+      const read = sameScale(seen, now.reading.value, now.reading.scale, limit.scale);
+      // Reckoned below `min` from a reading that wasn't is no test: that it has left its hold is told anyway.
       const broken =
-        which === "max" ? value > limit.value + slack(limit.value) : value < limit.value - slack(limit.value);
+        which === "max"
+          ? value > limit.value + slack(limit.value)
+          : Math.max(value, read) < limit.value - slack(limit.value);
       if (!broken) return [];
       const onScale = { spelling: limit.scale === "total" ? "total" : "", perModelUnit: 1 };
       const unit =
@@ -145,7 +149,7 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
           unit,
           which,
           value,
-          read: sameScale(seen, now.reading.value, now.reading.scale, limit.scale),
+          read,
           limit: limit.value,
         },
       ];

@@ -21,6 +21,14 @@ describe("limits", () => {
   });
 });
 
+test("reckoned below min is told as outside its hold, read below it as beyond the limit", () => {
+  const facts = "  hold alkalinity 7.6 to 8.4 dKH\n  uptake alkalinity 0.5 dKH/day\n";
+  const reckoned = codes(vat(facts, "  2026-11-25 08:00 read alkalinity 7.8 dKH\n"));
+  expect(reckoned).toContain("water/outside-hold");
+  expect(reckoned).not.toContain("water/beyond-limit");
+  expect(codes(vat(facts, "  2026-12-01 08:00 read alkalinity 5.5 dKH\n"))).toContain("water/beyond-limit");
+});
+
 describe("the moment asked", () => {
   const log = "  2026-12-01 07:00 read alkalinity 2350 umol/kg\n  2026-12-01 09:00 read salinity 30\n";
 
