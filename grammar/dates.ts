@@ -1,7 +1,7 @@
 /** Wall-clock dates and times: reading them, writing them, and what other ways of writing one may have meant. */
 import type { Moment } from "./syntax.ts";
 
-const minutesADay = 1440;
+export const minutesPerDay = 24 * 60;
 /** Years that a log can be of. A date beyond the four digits of a year couldn't be written. */
 const firstYear = 1900;
 const lastYear = 9998;
@@ -28,7 +28,7 @@ export function clockMinute(text: string): number | null {
   const [, hour, minute] = /^[Tt]?(\d{1,2}):(\d{2})$/.exec(text) ?? [];
   if (!hour || !minute || Number(minute) > 59) return null;
   const total = Number(hour) * 60 + Number(minute);
-  return total <= minutesADay ? total : null;
+  return total <= minutesPerDay ? total : null;
 }
 
 /** The dates that this word may have meant. */

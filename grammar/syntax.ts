@@ -85,8 +85,7 @@ export type StockCount =
   | { readonly by: "pieces"; readonly number: NumberWord }
   | { readonly by: "area"; readonly area: QuantityText };
 
-export const limitKinds = ["rise", "fall", "swing", "dose", "max", "min"] as const;
-export type LimitKind = (typeof limitKinds)[number];
+export type LimitKind = "rise" | "fall" | "swing" | "dose" | "max" | "min";
 
 export interface ReadItem extends Span {
   readonly parameter: Word;

@@ -1,5 +1,5 @@
 /** Statement → its tidy text, without indent and comment: the one writer of lines. Digits are never changed. */
-import { writeClock, writeDate } from "./dates.ts";
+import { minutesPerDay, writeClock, writeDate } from "./dates.ts";
 import type {
   Dated,
   Event,
@@ -25,8 +25,7 @@ const join = (...pieces: readonly Piece[]): string =>
 const quoted = (word: Word): string => `"${word.text}"`;
 const titled = (word: Word | null): Piece => word && quoted(word);
 
-const minutesADay = 1440;
-const timeOfDay = (minute: number): number => ((minute % minutesADay) + minutesADay) % minutesADay;
+const timeOfDay = (minute: number): number => ((minute % minutesPerDay) + minutesPerDay) % minutesPerDay;
 
 /** A date, and its time where one was written. */
 function moment(at: Moment): string {

@@ -12,7 +12,8 @@ import {
   shareQuantity,
 } from "./binder.ts";
 import { alkalinity } from "./convert.ts";
-import { enter, type FactOf, type FactsDraft, into } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
+import type { FactOf, FactsDraft } from "./facts-draft.ts";
 import type { Cohort } from "./model.ts";
 
 export function bindCohort(

@@ -3,7 +3,8 @@
 import type { QuantityText } from "../../grammar/syntax.ts";
 import { asDifference, asRate, asValue, readConcentration } from "../quantity/concentration.ts";
 import { amountOf, displayUnit, type Line, parameterNamed, placeOf, type ReferenceWater } from "./binder.ts";
-import { enter, type FactOf, type FactsDraft, into } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
+import type { FactOf, FactsDraft } from "./facts-draft.ts";
 import type { Hold } from "./model.ts";
 import { isPossible } from "./readings.ts";
 

@@ -22,7 +22,7 @@ import {
   type ReferenceWater,
   shareQuantity,
 } from "./binder.ts";
-import { enter } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
 import { addEntry, type Entry } from "./history.ts";
 import type { Kit, SaltWater } from "./model.ts";
 import type { Declaration } from "./names.ts";
@@ -58,8 +58,7 @@ export function bindWater(
   for (const { line, fact } of bySalinity) {
     const value = writtenValue(line, fact.parameter, fact.value, water());
     if (!value) continue;
-    const history = values.get(value.parameter) ?? [];
-    values.set(value.parameter, history);
+    const history = into(values, value.parameter);
     enter(line, history, fact, value.value, value.parameter);
   }
   for (const { line, event } of events) {
@@ -67,8 +66,7 @@ export function bindWater(
     for (const item of event.items) {
       const value = writtenValue(line, item.parameter, item.value, water());
       if (!value || item.below) continue;
-      const history = values.get(value.parameter) ?? [];
-      values.set(value.parameter, history);
+      const history = into(values, value.parameter);
       const from = event.at.minute;
       addEntry(history, {
         from,
@@ -127,8 +125,7 @@ export function bindKit(
           defaultWater,
         )?.value ?? null);
     if (value === null) continue;
-    const history = deviations.get(parameter.name) ?? [];
-    deviations.set(parameter.name, history);
+    const history = into(deviations, parameter.name);
     const deviation = { value: value / deviationsIn[fact.kind], relative };
     enter(line, history, fact, deviation, parameter.name);
   }

@@ -7,7 +7,7 @@ import { saturatedStrength } from "../chemistry/solubility.ts";
 import { readStrength } from "../quantity/concentration.ts";
 import { aboveZero, amountOf, defaultWater, type Line, parameterNamed, plain, positive } from "./binder.ts";
 import { defaults } from "./defaults.ts";
-import { enter } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
 import { changesOf, type Entry, factAt, type History } from "./history.ts";
 import type { Assumption, Solution, Strength } from "./model.ts";
 import type { Declaration } from "./names.ts";
@@ -96,8 +96,7 @@ function readRecipe(
           recipe.isWhole = false;
           break;
         }
-        const history = recipe.dissolved.get(solutionFact.reagent.text) ?? [];
-        recipe.dissolved.set(solutionFact.reagent.text, history);
+        const history = into(recipe.dissolved, solutionFact.reagent.text);
         enter(line, history, solutionFact, { reagent, grams }, `dissolve ${solutionFact.reagent.text}`);
         break;
       }
@@ -140,8 +139,7 @@ function readSupplied(
     parameter &&
     amountOf(line, fact.strength, parameter, readStrength(fact.strength, parameter), defaultWater);
   if (!parameter || !read || read.value < 0) return false;
-  const history = recipe.supplied.get(parameter.name) ?? [];
-  recipe.supplied.set(parameter.name, history);
+  const history = into(recipe.supplied, parameter.name);
   const millilitresPerL = 1000;
   enter(
     line,

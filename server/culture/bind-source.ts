@@ -1,7 +1,8 @@
 /** Sources of a solution: pumps and hands. */
 import type { QuantityText } from "../../grammar/syntax.ts";
 import { type Line, named, positive, wholeNumber } from "./binder.ts";
-import { enter, type FactOf, type FactsDraft, hoursOf, into } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
+import { type FactOf, type FactsDraft, hoursOf } from "./facts-draft.ts";
 import { type Source, sourceKey } from "./model.ts";
 
 export function bindPump(draft: FactsDraft, line: Line, fact: FactOf<"pump">): void {

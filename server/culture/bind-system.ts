@@ -20,7 +20,8 @@ import {
   shareQuantity,
   take,
 } from "./binder.ts";
-import { emptyFacts, enter, type FactOf, type FactsDraft, hoursOf, into } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
+import { emptyFacts, type FactOf, type FactsDraft, hoursOf } from "./facts-draft.ts";
 import type { StatedUptake, SystemFacts } from "./model.ts";
 
 /** A line of the section with its fact. */

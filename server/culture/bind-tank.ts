@@ -1,7 +1,8 @@
 /** Tanks and what takes up room in them. */
 import type { QuantityText, TankSize } from "../../grammar/syntax.ts";
 import { aboveZero, type Line, positive, wholeNumber } from "./binder.ts";
-import { enter, type FactOf, type FactsDraft, into } from "./facts-draft.ts";
+import { enter, into } from "./enter.ts";
+import type { FactOf, FactsDraft } from "./facts-draft.ts";
 import { tankLitres } from "./tank.ts";
 
 export function bindTank(draft: FactsDraft, line: Line, fact: FactOf<"tank">): void {

@@ -7,7 +7,7 @@ import { answeredRange } from "../chemistry/constants-at.ts";
 import { densityKgPerL } from "../chemistry/sea-water.ts";
 import type { Amount, Written } from "../quantity/amount.ts";
 import { asDifference, readConcentration } from "../quantity/concentration.ts";
-import { type Decimal34, toDouble } from "../quantity/decimal.ts";
+import { toDouble } from "../quantity/decimal.ts";
 import type { QuantityFinding, Reading } from "../quantity/finding.ts";
 import { type PlainKind, readPlain } from "../quantity/plain.ts";
 import { inModelUnit } from "./convert.ts";
@@ -68,26 +68,8 @@ export function take<T>(line: Line, reading: Reading<T>): T | null {
 
 /** A quantity of one dimension in base units (L, g, day …), or null. */
 export function plain(line: Line, quantity: QuantityText, kind: PlainKind): number | null {
-  return plainWithDeviation(line, quantity, kind)?.value ?? null;
-}
-
-/** The same with what stands after `±`. */
-export function plainWithDeviation(
-  line: Line,
-  quantity: QuantityText,
-  kind: PlainKind,
-): { readonly value: number; readonly deviation: number | null } | null {
   const read = take(line, readPlain(quantity, kind));
-  if (!read) return null;
-  return finite(line, quantity, read.value, read.uncertainty);
-}
-
-function finite(line: Line, quantity: QuantityText, exact: Decimal34, uncertainty: Decimal34 | null) {
-  const value = toDouble(exact);
-  if (value === null) {
-    return refuseNumber(line, quantity.number);
-  }
-  return { value, deviation: uncertainty && toDouble(uncertainty) };
+  return read && (toDouble(read.value) ?? refuseNumber(line, quantity.number));
 }
 
 /** A quantity that can't be below zero: says so and gives null where it is. */

@@ -2,6 +2,9 @@
  * The one table of defaults: what is taken where the file says nothing. All are common practice without a
  * source, unless one is named. Beside each value stands the text that a technician would write for it.
  */
+import { minutesPerDay } from "../../grammar/dates.ts";
+import { dKH } from "./display.ts";
+
 export interface Default {
   /** What it stands for in a list of assumptions. */
   readonly what: string;
@@ -12,7 +15,6 @@ export interface Default {
 }
 
 const practice = "common practice";
-const dKH = 20 / 56.077;
 
 const entry = (what: string, value: number, text: string, basis = practice): Default => ({
   what,
@@ -53,7 +55,7 @@ export const defaults = {
   skeletonMagnesium: entry("magnesium in the skeleton", 0.005, "0.5 %", "aragonitic coral, from memory"),
   pumpLeast: entry("smallest dose of a pump", 0.001, "1 mL"),
   handHours: entry("hours of hand doses", 12 * 60, "07:00 to 19:00"),
-  pumpHours: entry("hours of a pump", 24 * 60, "the whole day"),
+  pumpHours: entry("hours of a pump", minutesPerDay, "the whole day"),
   pHScale: entry("pH scale", 0, "NBS"),
 } as const satisfies Record<string, Default>;
 

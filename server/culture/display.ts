@@ -1,5 +1,7 @@
 /** In which unit a parameter is told to people: as they write it themselves, else as the trade does. */
 import { type ParameterName, parameterOf } from "../../grammar/parameters.ts";
+import { unitTable } from "../../grammar/units.ts";
+import { factorOf } from "../quantity/decimal.ts";
 import { factAt } from "./history.ts";
 import type { DisplayUnit, SystemFacts } from "./model.ts";
 
@@ -9,9 +11,17 @@ export const plainUnit = (parameter: ParameterName): DisplayUnit => ({
   perModelUnit: 1,
 });
 
-/** Alkalinity is told in dKH where the file shows no unit (common practice): 1 meq/L is M(CaO) / 20 dKH. */
+const inMeqPerL = (spelling: string): number => {
+  const row = unitTable.find((unit) => unit.spelling === spelling);
+  return row ? factorOf(row.factor).toNumber() : 1;
+};
+
+/** meq/L in 1 dKH, as the unit table has it. */
+export const dKH = inMeqPerL("dKH");
+
+/** Alkalinity is told in dKH where the file shows no unit: common practice. */
 const tradeUnit = (parameter: ParameterName): DisplayUnit =>
-  parameter === "alkalinity" ? { spelling: "dKH", perModelUnit: 56.077 / 20 } : plainUnit(parameter);
+  parameter === "alkalinity" ? { spelling: "dKH", perModelUnit: 1 / dKH } : plainUnit(parameter);
 
 /** As its hold is written, else as a reading of it was, else as the trade tells it. */
 export const shownIn = (

@@ -1,8 +1,7 @@
-/** The facts of a system while they are gathered, and how one is entered in its history. */
+/** The facts of a system while they are gathered. */
 import type { ParameterName } from "../../grammar/parameters.ts";
-import type { Hours, Standing, SystemFact } from "../../grammar/syntax.ts";
-import { type Line, placeOf } from "./binder.ts";
-import { addEntry, type Entry, entryOf } from "./history.ts";
+import type { Hours, SystemFact } from "../../grammar/syntax.ts";
+import type { Entry } from "./history.ts";
 import type { Cohort, DayHours, Hold, Limit, Source, StatedUptake } from "./model.ts";
 
 /** One statement of a system's section. */
@@ -46,35 +45,5 @@ export const emptyFacts = (): FactsDraft => ({
   flowsThrough: [],
   sources: new Map(),
 });
-
-/** Puts an entry in its history, or reports that the same fact is declared twice. */
-export function enter<T>(line: Line, history: Entry<T>[], standing: Standing, value: T, what: string): void {
-  if (standing.from && standing.until && standing.until.minute <= standing.from.minute) {
-    line.report({
-      code: "system/until-before-from",
-      place: placeOf(line, standing.until),
-      system: line.system,
-    });
-    return;
-  }
-  const same = addEntry(history, entryOf(standing, value, placeOf(line, null)));
-  if (same) {
-    line.report({
-      code: "name/twice",
-      place: placeOf(line, null),
-      system: line.system,
-      word: what,
-      what: "fact",
-      first: same.place,
-    });
-  }
-}
-
-/** The history under a key, made where it isn't there yet. */
-export function into<K, T>(histories: Map<K, Entry<T>[]>, key: K): Entry<T>[] {
-  const history = histories.get(key) ?? [];
-  histories.set(key, history);
-  return history;
-}
 
 export const hoursOf = (hours: Hours): DayHours => ({ from: hours.from.minute, to: hours.to.minute });

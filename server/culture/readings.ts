@@ -2,6 +2,7 @@
  * Readings: what each value is in the model's unit, whether sea water can have it, and which salinity,
  * temperature and calcium belong to a moment.
  */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { type Parameter, type ParameterName, parameterOf } from "../../grammar/parameters.ts";
 import type { QuantityText, ReadItem, Span, Word } from "../../grammar/syntax.ts";
 import type { Written } from "../quantity/amount.ts";
@@ -77,7 +78,7 @@ export function takeReadItems(
 }
 
 /** Minutes within which a value of another line belongs to a reading. */
-const sameDay = 24 * 60;
+const sameDay = minutesPerDay;
 
 export interface Seen {
   readonly minute: number;
@@ -101,9 +102,6 @@ export function nearestKnown(seen: readonly Seen[], minute: number, byDefault: n
   if (nearest && apart(nearest) <= sameDay) return { value: nearest.value, from: "reading" };
   return before ? { value: before.value, from: "reading" } : { value: byDefault, from: "default" };
 }
-
-/** Values of one parameter over time, for looking up the nearest. */
-export type SeenBy = ReadonlyMap<ParameterName, readonly Seen[]>;
 
 /** Counts a reading into a lookup: not what was disregarded, impossible, or only known to be below something. */
 export function seenIn(events: readonly ReadEvent[], parameter: ParameterName): Seen[] {

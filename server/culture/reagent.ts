@@ -12,7 +12,7 @@ import {
   reagents,
 } from "../chemistry/reagents.ts";
 import { type Line, named, placeOf, shareQuantity } from "./binder.ts";
-import { enter } from "./facts-draft.ts";
+import { enter } from "./enter.ts";
 import { addEntry, changesOf, type Entry, entryOf, factAt, type History } from "./history.ts";
 import type { Declaration } from "./names.ts";
 import { resolve } from "./names.ts";

@@ -1,4 +1,5 @@
 /** Everything that is said of one system at a moment: the water now, where it goes, what to dose, what is wrong. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Hold, System } from "../culture/model.ts";
@@ -27,7 +28,7 @@ import { dosed, type Tracked, tracked } from "./tracked.ts";
 import { type Uptake, uptakeAt } from "./uptake.ts";
 import { type Volume, volumeAt } from "./volume.ts";
 import { waterFindings } from "./water-findings.ts";
-import { carriedMinutes, isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+import { carriedMinutes, isStale, type WaterState } from "./water-state.ts";
 
 export interface Assessment {
   readonly system: System;

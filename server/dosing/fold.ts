@@ -1,4 +1,5 @@
 /** The log as a fold: a state, an event, the next state. What comes in between is carried forward in closed form. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { factAt } from "../culture/history.ts";
 import type { ReadEvent, SystemEvent } from "../culture/model.ts";
 import type { SystemConstants } from "./constants.ts";
@@ -6,7 +7,7 @@ import { after, type Flow, flowsSet, type Rates, ratesWith, topOffFlow } from ".
 import { type ByTracked, broughtPerLitre, byTracked, type Tracked, tracked } from "./tracked.ts";
 import { meanUptake, type Uptake, uptakeAt } from "./uptake.ts";
 import { volumeAt } from "./volume.ts";
-import { type Carried, carriedMinutes, minutesPerDay, startState, type WaterState } from "./water-state.ts";
+import { type Carried, carriedMinutes, startState, type WaterState } from "./water-state.ts";
 
 /** A dose of the log, or a change of what pumps give, with the water before and after it. */
 export interface DoseInLog {
@@ -68,12 +69,8 @@ export function uptakeOfLastDay(constants: SystemConstants, lastDay: readonly Sp
   return meanUptake(pieces, now);
 }
 
-/** One step: the water carried to the event, and the event. */
-export const step = (state: WaterState, event: SystemEvent, constants: SystemConstants): WaterState =>
-  happen(carryTo(state, event.minute, constants), event, constants);
-
 /** The water carried to a later minute, piece by piece between the changes of its facts. */
-export function carryTo(state: WaterState, minute: number, constants: SystemConstants): WaterState {
+function carryTo(state: WaterState, minute: number, constants: SystemConstants): WaterState {
   if (minute <= state.minute) return state;
   let { carried } = state;
   let from = state.minute;

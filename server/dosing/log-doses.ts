@@ -1,5 +1,6 @@
 /** Doses of the log that broke a limit of the system, however old they are. */
 
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { SystemEvent } from "../culture/model.ts";
@@ -13,7 +14,7 @@ import { limitAt } from "./limits.ts";
 import { beyondCapacity } from "./set-capacity.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
 import { volumeAt } from "./volume.ts";
-import { isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+import { isStale, type WaterState } from "./water-state.ts";
 
 interface Given {
   readonly minute: number;

@@ -1,4 +1,5 @@
 /** What changes a system's water from one moment to the next: supply, uptake, exchange. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Source } from "../culture/model.ts";
@@ -11,7 +12,7 @@ import {
   type Tracked,
 } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
-import { minutesPerDay, type WaterState } from "./water-state.ts";
+import type { WaterState } from "./water-state.ts";
 
 /** Litres a day of a solution. */
 export interface Flow {

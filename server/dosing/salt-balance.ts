@@ -1,10 +1,10 @@
 /** What dosing leaves behind: salt that nothing takes up. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import type { System } from "../culture/model.ts";
 import { salinityNow } from "./dose-chemistry.ts";
 import { ratesAt } from "./fold.ts";
 import { type Plan, plannedPhases, type Situation } from "./make-plan.ts";
 import { volumeAt } from "./volume.ts";
-import { minutesPerDay } from "./water-state.ts";
 
 export interface SaltBalance {
   /** Change of salinity in 30 days of maintenance, exchange counted. */

@@ -1,12 +1,13 @@
 /** What the corals take a day, as stated or from the cohorts; what nitrification takes of alkalinity beside them. */
 
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { calcificationPerMeq, calciumCarbonateGPerMeq } from "../chemistry/calcification.ts";
 import { atomicWeight } from "../chemistry/elements.ts";
 import { defaults } from "../culture/defaults.ts";
 import { factAt } from "../culture/history.ts";
 import type { Cohort, SystemFacts } from "../culture/model.ts";
 import { type Dosed, dosed } from "./tracked.ts";
-import { minutesPerDay, type WaterState } from "./water-state.ts";
+import type { WaterState } from "./water-state.ts";
 
 export interface Uptake {
   readonly basis: "stated" | "cohorts" | "none";

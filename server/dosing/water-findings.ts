@@ -1,5 +1,6 @@
 /** What is wrong with the water now, and what soon will be. */
 
+import { minutesPerDay } from "../../grammar/dates.ts";
 import { parameterTable } from "../../grammar/parameters.ts";
 import { pco2OfAir } from "../chemistry/carbon-before.ts";
 import { fromAlkalinityAndPco2 } from "../chemistry/carbonate-system.ts";
@@ -19,7 +20,7 @@ import { flowsSet, topOffFlow } from "./rates.ts";
 import { judgeSalinity } from "./salinity-cause.ts";
 import { broughtPerLitre, dosed, isTracked, type Tracked } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
-import { carriedMinutes, isStale, minutesPerDay, type WaterState } from "./water-state.ts";
+import { carriedMinutes, isStale, type WaterState } from "./water-state.ts";
 
 export interface WaterSeen {
   readonly system: System;

@@ -1,4 +1,5 @@
 /** The state of a system's water between events: a small value, all that later steps need. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import type { ReadValue } from "../culture/model.ts";
 import { type ByTracked, byTracked } from "./tracked.ts";
 
@@ -31,8 +32,6 @@ export const startState = (minute: number): WaterState => ({
   pH: null,
   temperature: null,
 });
-
-export const minutesPerDay = 24 * 60;
 
 /** A value is carried forward so long after its reading; then it is stale. */
 export const carriedMinutes = 7 * minutesPerDay;

@@ -1,5 +1,5 @@
 /** The sheet's first part, what to dose today, and what the doses do. */
-import { writeMoment } from "../../grammar/dates.ts";
+import { minutesPerDay, writeMoment } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
 import { changeFigure, doseFigure, figure, rounded, valueFigure } from "../checks/figures.ts";
 import { aboutWhen, atStart, nameOf, oneOf } from "../checks/words.ts";
@@ -10,7 +10,7 @@ import { balanceOf } from "../dosing/balance.ts";
 import type { Plan } from "../dosing/make-plan.ts";
 import type { PlannedSource } from "../dosing/plan/problem.ts";
 import { topOffFlow } from "../dosing/rates.ts";
-import { minutesPerDay } from "../dosing/water-state.ts";
+
 import { type Section, section } from "./sheet-model.ts";
 
 const unitIn = ({ constants, at }: Assessment, name: ParameterName) => shownIn(constants.facts, name, at);

@@ -1,6 +1,6 @@
 /** The sheet's table of the water now and where it goes, and what the corals take. */
 
-import { writeClock } from "../../grammar/dates.ts";
+import { minutesPerDay, writeClock } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
 import { bandFigure, changeFigure, edgeFigure, figure, valueBeside } from "../checks/figures.ts";
 import { dayText } from "../checks/words.ts";
@@ -10,7 +10,7 @@ import type { ReadValue } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import { driftCases } from "../dosing/projection.ts";
 import { isTracked } from "../dosing/tracked.ts";
-import { minutesPerDay } from "../dosing/water-state.ts";
+
 import { type Section, section } from "./sheet-model.ts";
 
 const rowsInOrder: readonly ParameterName[] = [

@@ -1,6 +1,6 @@
 /** Farm → the dose sheet as plain data: headings, tables, lines. The faces (text, Markdown) only draw it. */
 
-import { writeClock } from "../../grammar/dates.ts";
+import { minutesPerDay, writeClock } from "../../grammar/dates.ts";
 import { figure } from "../checks/figures.ts";
 import type { Problem } from "../checks/problem.ts";
 import { dayText } from "../checks/words.ts";
@@ -12,8 +12,6 @@ import { dosesSection, effectsSection } from "./sheet-doses.ts";
 import { type Section, type Sheet, type SheetProblem, type SystemSheet, section } from "./sheet-model.ts";
 import { cautionLines, solutionSection } from "./sheet-solutions.ts";
 import { uptakeSection, waterSection } from "./sheet-water.ts";
-
-const minutesPerDay = 24 * 60;
 
 export function momentText(minute: number): string {
   const year = new Date(minute * 60_000).getUTCFullYear();
