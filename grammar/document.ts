@@ -60,6 +60,7 @@ interface Kept {
 
 const noReading: LineReading = { statement: null, comment: null, findings: [] };
 const kinds: readonly string[] = sectionKinds;
+const linesAtOnce = 64;
 const statementWords = [...new Set(statementTable.map((row) => row.word))];
 
 const indentedHeader = new RegExp(`^\\W*(?:${sectionKinds.join("|")})`);
@@ -68,6 +69,15 @@ const isAtMargin = (text: string): boolean => /^[^\s\u180e\u200b\u2060\ufeff]/.t
 
 /** Reads a whole file; with the version before it, only what changed. */
 export function readDocument(text: string, previous?: MarlDocument): MarlDocument {
+  const steps = readDocumentInSteps(text, previous);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
+
+/** The same, pausing every so many lines. */
+export function* readDocumentInSteps(text: string, previous?: MarlDocument): Generator<void, MarlDocument> {
   const hasByteOrderMark = text.startsWith("\ufeff");
   const texts = (hasByteOrderMark ? text.slice(1) : text).split("\n");
   const lineEnding = texts.length > 1 && texts[0]!.endsWith("\r") ? "\r\n" : "\n";
@@ -82,6 +92,7 @@ export function readDocument(text: string, previous?: MarlDocument): MarlDocumen
   let inConflict = false;
 
   for (let number = 0; number < texts.length; number += 1) {
+    if (number % linesAtOnce === linesAtOnce - 1) yield;
     const raw = texts[number]!;
     const kind: SectionKind | null = open === null || open === "unread" ? null : open.kind;
     const entry = lookUp(number, kind, raw.endsWith("\r") ? raw.slice(0, -1) : raw);
@@ -134,7 +145,7 @@ function finder(readings: Readings, previous: MarlDocument | undefined, lineCoun
     if (same && same.kind === kind && same.text === text) return same;
     const moved = before[number + shift];
     if (moved && moved.kind === kind && moved.text === text) return moved;
-    return entryOf(readings, kind, text);
+    return entryOf(readings, kind, text, same ?? moved);
   };
 }
 
@@ -146,15 +157,28 @@ function keptReadings(previous: MarlDocument | undefined, lineCount: number): Re
   return new Map([null, ...sectionKinds].map((kind) => [kind, new Map<string, Entry>()]));
 }
 
-function entryOf(readings: Readings, kind: SectionKind | null, text: string): Entry {
+function entryOf(
+  readings: Readings,
+  kind: SectionKind | null,
+  text: string,
+  before: Entry | undefined,
+): Entry {
   const ofKind = readings.get(kind)!;
   const kept = ofKind.get(text);
   if (kept) return kept;
   // A part of a string keeps the whole in memory: a kept line must not hold on to the file that it was cut from.
   const own = text.length === 0 ? "" : ` ${text}`.slice(1);
-  const entry = readEntry(kind, own);
+  const entry = sayingAsBefore(readEntry(kind, own), before);
   ofKind.set(own, entry);
   return entry;
+}
+
+/** Where only the comment or the space at the end changed, the statement stays the same value: it says the same. */
+function sayingAsBefore(entry: Entry, before: Entry | undefined): Entry {
+  const { statement } = entry.reading;
+  const said = before?.kind === entry.kind ? before.reading.statement : null;
+  if (!statement || !said || JSON.stringify(statement) !== JSON.stringify(said)) return entry;
+  return { ...entry, reading: { ...entry.reading, statement: said } };
 }
 
 function readEntry(kind: SectionKind | null, text: string): Entry {

@@ -77,7 +77,7 @@ export function syntaxProblem(
   }
   const word = token.image;
   const misplaced = { code: "syntax/misplaced", span: spanOf(token), word, belongs: [] } as const;
-  if (word in parser.parts && parser.parts[word as keyof Parts] !== null)
+  if (Object.hasOwn(parser.parts, word) && parser.parts[word as keyof Parts] !== null)
     return { ...misplaced, why: "repeated" };
   if (expected.includes("a name") && isReserved(word)) {
     // `pump gives soda …` lacks its name, `tank pump 3 L` has one that it can't have.
@@ -86,7 +86,7 @@ export function syntaxProblem(
       ? unknownWord(word, misplaced.span, expected)
       : { ...misplaced, why: "keyword-as-name", expected };
   }
-  if (word in keyword && keywordsIn(parser, rule).has(word)) return { ...misplaced, why: "order", expected };
+  if (Object.hasOwn(keyword, word) && keywordsIn(parser, rule).has(word)) return { ...misplaced, why: "order", expected };
   return unknownWord(word, spanOf(token), expected);
 }
 

@@ -118,7 +118,7 @@ export const keyword = Object.fromEntries(keywords.map((word) => [word, keywordT
 >;
 
 /** True where no name may be spelt like this. */
-export const isReserved = (word: string): boolean => word in keyword && !alsoNames.has(word);
+export const isReserved = (word: string): boolean => Object.hasOwn(keyword, word) && !alsoNames.has(word);
 
 export const cross = createToken({ name: "x", pattern: /×|x/, longer_alt: plainWord });
 export const comma = createToken({ name: ",", pattern: "," });

@@ -2,11 +2,13 @@
  * The whole walk from texts to answers: advance(previous, changes, at) → Farm, and what the next advance may
  * reuse. Knows no files, no clock, no protocol: texts and a moment come in, a value goes out.
  */
-import { type MarlDocument, readDocument } from "../grammar/document.ts";
+import { type MarlDocument, readDocumentInSteps } from "../grammar/document.ts";
 import { quieten } from "./checks/quieten.ts";
 import { type Problem, problemsOf } from "./checks/rules.ts";
-import { type BoundFarm, bindFarm } from "./culture/farm-model.ts";
-import { type Assessment, assess } from "./dosing/assess.ts";
+import { type BoundFarm, bindFarmInSteps } from "./culture/farm-model.ts";
+import { inOneGo, type Kept, keeper } from "./culture/keep.ts";
+import { type Assessment, assessInSteps, type KeptAssessment } from "./dosing/assess.ts";
+import { withRemedies } from "./dosing/remedies.ts";
 
 /** The moment that everything is seen as at, and the real clock; minutes since 1970-01-01 of the wall clock. */
 export interface Moment {
@@ -36,10 +38,13 @@ export interface Farm {
   /** By the system's reference, in order of declaration. */
   readonly assessments: ReadonlyMap<string, Assessment>;
   readonly problems: readonly Problem[];
+  /** For the next walk. */
+  readonly kept: Kept;
 }
 
-/** How far the walk is, for those who show it. */
+/** How far the walk is, for those who show it. While lines are still read and bound, `of` is 0. */
 export interface Progress {
+  /** The system that was done last, or is being worked on. */
   readonly system: string;
   readonly done: number;
   readonly of: number;
@@ -51,35 +56,51 @@ export function advance(
   changes: ReadonlyMap<string, FileChange>,
   moment: Moment,
 ): Farm {
-  const steps = advanceBySystem(previous, changes, moment);
-  for (;;) {
-    const step = steps.next();
-    if (step.done) return step.value;
-  }
+  return inOneGo(advanceBySystem(previous, changes, moment));
 }
 
-/** The same walk, pausing after each system, so that a caller may show how far it is or stop. */
+/** The same walk, pausing every few milliseconds, so that a caller may show how far it is or stop. */
 export function* advanceBySystem(
   previous: Farm | null,
   changes: ReadonlyMap<string, FileChange>,
   moment: Moment,
 ): Generator<Progress, Farm> {
-  const files = changedFiles(previous, changes);
+  const files = yield* told(starting, changedFiles(previous, changes));
   const sameFiles = previous !== null && changes.size === 0;
-  const bound = sameFiles ? previous.bound : bindFarm(files.documents, files.links);
   const sameMoment =
     previous !== null && previous.moment.at === moment.at && previous.moment.clock === moment.clock;
   if (sameFiles && sameMoment) return previous;
 
+  const bound = sameFiles
+    ? previous.bound
+    : yield* told(starting, bindFarmInSteps(files.documents, files.links, previous?.bound ?? null));
+  const keeping = keeper(previous?.kept ?? null);
+  const { model } = bound;
   const assessments = new Map<string, Assessment>();
-  const { systems } = bound.model;
-  for (const [ref, system] of systems) {
-    assessments.set(ref, assess(bound.model, system, moment.at, moment.clock));
-    yield { system: system.name, done: assessments.size, of: systems.size };
+  const of = model.systems.size;
+  for (const [ref, system] of model.systems) {
+    const refs = [...system.refersTo];
+    const parts = refs.flatMap((each) => [
+      model.solutions.get(each),
+      model.waters.get(each),
+      model.systems.get(each),
+    ]);
+    const progress = { system: system.name, done: assessments.size, of };
+    const { at, clock } = moment;
+    const kept = yield* told(
+      progress,
+      keeping.keepSteps(
+        assessmentKey(ref),
+        [system, at, clock, ...refs, ...parts],
+        (before: KeptAssessment | undefined) => assessInSteps(model, system, at, clock, before ?? null),
+      ),
+    );
+    assessments.set(ref, kept.assessment);
+    yield { ...progress, done: assessments.size };
   }
   const findings = [
     ...bound.findings,
-    ...[...assessments.values()].flatMap((assessment) => assessment.findings),
+    ...[...assessments.values()].flatMap((assessment) => withRemedies(model, assessment)),
   ];
   const unreadable = [...files.unreadable].map(([file, reason]) => ({
     code: "file/unreadable" as const,
@@ -87,11 +108,28 @@ export function* advanceBySystem(
     system: null,
     reason,
   }));
-  const problems = problemsOf([...findings, ...unreadable], files.documents);
-  return { moment, ...files, bound, assessments, problems: quieten(problems, files.documents) };
+  const problems = quieten(problemsOf([...findings, ...unreadable], files.documents), files.documents);
+  return { moment, ...files, bound, assessments, problems, kept: keeping.kept };
 }
 
-function changedFiles(previous: Farm | null, changes: ReadonlyMap<string, FileChange>) {
+/** A system's log and readings as the walk went through them, to look into; null where it has no such system. */
+export const walkedLog = (farm: Farm, ref: string): KeptAssessment | null =>
+  (farm.kept.get(assessmentKey(ref))?.result as KeptAssessment | undefined) ?? null;
+
+const assessmentKey = (ref: string): string => `assessment ${ref}`;
+
+const starting: Progress = { system: "", done: 0, of: 0 };
+
+/** Passes on the pauses of a part of the walk, saying how far that is. */
+function* told<T>(progress: Progress, steps: Generator<void, T>): Generator<Progress, T> {
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+    yield progress;
+  }
+}
+
+function* changedFiles(previous: Farm | null, changes: ReadonlyMap<string, FileChange>) {
   const documents = new Map(previous?.documents);
   const texts = new Map(previous?.texts);
   const unreadable = new Map(previous?.unreadable);
@@ -106,7 +144,8 @@ function changedFiles(previous: Farm | null, changes: ReadonlyMap<string, FileCh
     else if ("linkTo" in change) links.set(file, change.linkTo);
     else {
       texts.set(file, change.text);
-      documents.set(file, readDocument(change.text, previous?.documents.get(file)));
+      documents.set(file, yield* readDocumentInSteps(change.text, previous?.documents.get(file)));
+      yield;
     }
   }
   return { documents, texts, unreadable, links };

@@ -43,6 +43,15 @@ export function figure(value: number, unit: FigureUnit): string {
   return withUnit(number, bare.has(unit) ? "" : unit);
 }
 
+/** The same number, rounded towards zero or away from it: never more, or never less, than was worked out. */
+export function figureWithin(value: number, unit: FigureUnit, way: "down" | "up"): string {
+  const decimals = decimalsOfUnit[unit](Math.abs(value));
+  const step = 10 ** decimals;
+  // What the last bits of a double add is no more and no less.
+  const steps = way === "down" ? Math.floor(value * step + 1e-6) : Math.ceil(value * step - 1e-6);
+  return figure(steps / step, unit);
+}
+
 /** A dose: in millilitres up to 10 L. */
 export const doseFigure = (litres: number): string =>
   Math.abs(litres) < 10 ? figure(litres * 1000, "mL") : figure(litres, "L");

@@ -7,6 +7,7 @@ import type { Files } from "../culture/names.ts";
 import { endOfWords, lineAt, removedLine, replacing } from "./fixing.ts";
 import type { LineFix } from "./problem.ts";
 import type { Of } from "./rule.ts";
+import { linesAtEnd } from "./sections.ts";
 import { inQuotes, oneOf, said } from "./words.ts";
 
 type Misplaced = Of<"syntax/misplaced">;
@@ -205,12 +206,7 @@ function moving(
   const text = texts.find((each) => each !== null && reads(target.kind, each));
   if (!text) return [];
   const { file } = place;
-  const after = lastSaid(document, target);
-  const end = document.lines[after]!.text.length;
-  const edits = [
-    removedLine(place, line),
-    { file, line: after, start: end, end, text: `\n  ${text.trimStart()}` },
-  ];
+  const edits = [removedLine(place, line), linesAtEnd(document, file, target, [text.trimStart()])];
   const name = [target.kind, target.name?.text].filter(Boolean).join(" ");
   return [{ title: `Move it under ${name}`, safe: false, edits }];
 }
@@ -226,10 +222,4 @@ function meantSection(
   const alike = fitting.filter((section) => name && section.name?.text === name);
   const [only, ...others] = alike.length > 0 ? alike : fitting;
   return only && others.length === 0 ? only : null;
-}
-
-/** The last line of a section that says something. */
-function lastSaid({ lines }: MarlDocument, { headerLine, lastLine }: Section): number {
-  for (let line = lastLine; line > headerLine; line -= 1) if (lines[line]!.statement) return line;
-  return headerLine;
 }

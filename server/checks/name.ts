@@ -5,6 +5,7 @@ import type { Files } from "../culture/names.ts";
 import { lineAt, removingDoubled, replacingWith } from "./fixing.ts";
 import type { LineFix, Problem } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
+import { sectionAtEnd } from "./sections.ts";
 import { allOf, inQuotes, nameOf, oneOf, sourceName } from "./words.ts";
 
 const kindInWords: Readonly<Record<NamedKind | OwnKind, string>> = {
@@ -17,7 +18,7 @@ const kindInWords: Readonly<Record<NamedKind | OwnKind, string>> = {
   cohort: "cohort",
   source: "hand dose",
 };
-const kindOf = (kind: string): string => kindInWords[kind as NamedKind] ?? kind;
+export const kindOf = (kind: string): string => kindInWords[kind as NamedKind] ?? kind;
 const withArticle = (words: string): string => `a ${words}`;
 
 type Undeclared = Of<"name/undeclared">;
@@ -53,14 +54,42 @@ function undeclaredTodo(finding: Undeclared): string {
     : "Declare it in a section of its own, or use the file that declares it.";
 }
 
-function undeclaredFixes(finding: Undeclared): readonly LineFix[] {
+/** What a new section says at least; what only the farm knows is an example, to be corrected. */
+const exampleLines: Readonly<Record<NamedKind, readonly string[]>> = {
+  system: ["tank main 500 L"],
+  solution: ["dissolve sodium-bicarbonate 80 g", "make up to 1 L"],
+  reagent: ["is sodium-bicarbonate"],
+  saltwater: ["salinity 35"],
+  kit: ["alkalinity scatter 0.15 dKH"],
+};
+
+/** A section of its own for the name, at the end of the file. */
+function declaring({ place: { file }, word, ...finding }: Undeclared, files: Files): readonly LineFix[] {
+  const document = files.get(file);
+  if (!document || "severalSources" in finding || finding.standsFor) return [];
+  // Water is renewed with a salt water or a system; the former is likelier to be still undeclared.
+  const kind = finding.wanted.filter((each): each is NamedKind => each in exampleLines).at(-1);
+  if (!kind || isOfSystem(finding.wanted)) return [];
+  const wanted = finding.wanted.includes("saltwater") ? "saltwater" : kind;
+  const edits = [sectionAtEnd(document, file, `${wanted} ${word}`, exampleLines[wanted])];
+  const title = `Declare ${kindOf(wanted)} ${word}, with example values to correct`;
+  return [{ title, safe: false, edits }];
+}
+
+const mostNames = 5;
+
+function undeclaredFixes(finding: Undeclared, files: Files): readonly LineFix[] {
   if ("severalSources" in finding)
     return replacingWith(
       finding.place,
       finding.severalSources.filter((by) => by !== sourceName("hand")),
       false,
     );
-  if (!finding.elsewhere) return replacingWith(finding.place, offered(finding.nearest), false);
+  if (!finding.elsewhere)
+    return [
+      ...replacingWith(finding.place, offered(finding.nearest), false).slice(0, mostNames),
+      ...declaring(finding, files),
+    ];
   const { file } = finding.place;
   const text = `use "${pathTo(file, finding.elsewhere)}"`;
   return [

@@ -1,6 +1,10 @@
 /** Doses of the log that broke a limit, however old they are. */
+
+import type { Files } from "../culture/names.ts";
 import { type Dosed, dosed } from "../dosing/tracked.ts";
 import { changeBeside, edgeFigure, figure, valueBeside } from "./figures.ts";
+import { doseSplit, ratesSet } from "./mending.ts";
+import type { LineFix } from "./problem.ts";
 import type { Example, Of, Rule, Rules } from "./rule.ts";
 import { atStart } from "./words.ts";
 
@@ -9,6 +13,14 @@ type OfDosed = Of<DosedCode>;
 
 /** Where the file states no limit, the default is named as such. */
 const byDefault = ({ limitStated }: OfDosed): string => (limitStated ? "" : ", by default");
+
+/** A rate is set anew; a dose that isn't long past is given in parts. */
+const mended = (finding: OfDosed, files: Files): readonly LineFix[] =>
+  finding.solution === null
+    ? finding.remedies
+      ? ratesSet(finding.system, finding.remedies, files)
+      : []
+    : doseSplit(finding, files);
 
 /** A farm whose log has one dose by hand; strength and limits so that nothing else is wrong with it. */
 const oneDose = (supplies: string, facts: string, reading: string, dose: string): string =>
@@ -125,6 +137,7 @@ const dosedRule = (parameter: Dosed) => ({
     todo: "Spread it over more days.",
     todoHere: ({ solution }: OfDosed) =>
       solution === null ? "Set less, and reach the aim over more days." : "Spread it over more days.",
+    fixes: mended,
     background: riseBackground[parameter],
     example: exampleOf(parameter, "rise"),
   },
@@ -140,6 +153,7 @@ const dosedRule = (parameter: Dosed) => ({
         ? "A sudden rise stresses coral tissue and can set off precipitation."
         : "A sudden rise stresses coral tissue.",
     todo: "Split it over several deliveries.",
+    fixes: mended,
     background:
       parameter === "alkalinity"
         ? "Without a `limit alkalinity dose` line 0.5 dKH by hand and 0.2 dKH by pump are taken: common practice, no source."
@@ -155,6 +169,7 @@ const dosedRule = (parameter: Dosed) => ({
     },
     why: "Beyond a limit not growth but lives are at risk.",
     todo: `Test ${parameter}, and dose nothing that raises it until it is below.`,
+    fixes: mended,
     background: maxBackground[parameter],
     example: exampleOf(parameter, "max"),
   },

@@ -1,6 +1,9 @@
 /** What the plan couldn't do as wished, and what is worth knowing about how it doses. */
+import type { Files } from "../culture/names.ts";
 import { changeFigure, doseFigure } from "./figures.ts";
+import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
+import { linesAtEnd, sectionAt, sees } from "./sections.ts";
 import { atStart, isParameter, nameOf } from "./words.ts";
 
 type Obstacle = Of<"plan/held-back" | "plan/no-source" | "plan/passive-breach">;
@@ -50,6 +53,20 @@ function heldBackTodo({ by }: Obstacle): string {
     : "Nothing needs to be done while it stays in its band: it takes more days.";
 }
 
+const mostSolutions = 3;
+
+/** A hand dose of each solution that the file sees and that holds it. */
+function handDoses({ place, solutions }: Of<"plan/no-source">, files: Files): readonly LineFix[] {
+  const document = files.get(place.file);
+  const section = sectionAt(files, place);
+  if (!document || section?.kind !== "system" || !solutions) return [];
+  const seen = solutions.filter((ref) => sees(files, place.file, "solution", ref));
+  return seen.slice(0, mostSolutions).map((ref) => {
+    const text = `by-hand ${nameOf(ref)}`;
+    return { title: `Add ${text}`, safe: false, edits: [linesAtEnd(document, place.file, section, [text])] };
+  });
+}
+
 const vat = (facts: string, log: string) =>
   `system vat\n  tank main 1000 L\n  hold alkalinity 7.5 to 8.5 dKH\n  uptake alkalinity 0.3 dKH/day\n${facts}\nsolution ash-part\n  supplies alkalinity 1.6 meq/mL as bicarbonate\n\nlog vat\n  2026-12-01 07:00 read alkalinity 8 dKH\n${log}`;
 
@@ -92,6 +109,7 @@ export const planRules: Rules<
       `No pump or hand dose of this system raises ${finding.parameter}; ${perDay(finding) ?? "some of it"} is needed.`,
     why: "It falls for as long as corals take it.",
     todo: "Add a pump or by-hand line with a solution that holds it, or leave out its hold line.",
+    fixes: handDoses,
     example: {
       fires:
         "system vat\n  tank main 1000 L\n  hold alkalinity 6.5 to 9.5 dKH\n  uptake alkalinity 0.1 dKH/day\n\nlog vat\n  2026-12-01 07:00 read alkalinity 8 dKH\n",

@@ -8,7 +8,7 @@ import type { QuietFinding } from "./rule.ts";
 import { codes, inOrder, problemsOf, rules } from "./rules.ts";
 
 /** One code that a comment asks to be quiet about. */
-interface Wish {
+export interface Wish {
   readonly file: string;
   readonly line: number;
   readonly wholeFile: boolean;
@@ -89,7 +89,7 @@ function wishesOf(files: Files): Wish[] {
 const asking = /^(\s*quiet(\s+file)?\s*:)(.*)$/;
 
 /** Each part of a comment that starts with `#` may ask for itself; any other part is a reason. */
-function wishesOfLine(file: string, line: number, { text }: DocumentLine, comment: Span): Wish[] {
+export function wishesOfLine(file: string, line: number, { text }: DocumentLine, comment: Span): Wish[] {
   const alone = text.slice(0, comment.start).trim() === "";
   const wishes: Wish[] = [];
   for (const part of text.slice(comment.start, comment.end).matchAll(/#([^#]*)/g)) {

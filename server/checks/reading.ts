@@ -3,6 +3,7 @@ import { parameterOf } from "../../grammar/parameters.ts";
 import type { Files } from "../culture/names.ts";
 import { bandFigure } from "./figures.ts";
 import { lineAt, replacing } from "./fixing.ts";
+import { disregarding } from "./mending.ts";
 import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
 import { inQuotes } from "./words.ts";
@@ -35,6 +36,11 @@ function pointSet({ place, written, tenth }: OffRange, files: Files): readonly L
   return replacing({ ...place, span: { start, end: start + written.length } }, tenth, false);
 }
 
+const setRightOrAside = (finding: OffRange, files: Files): readonly LineFix[] => [
+  ...pointSet(finding, files),
+  ...disregarding(finding.place, files),
+];
+
 export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "reading/disregarded"> = {
   "reading/impossible": {
     severity: "error",
@@ -49,7 +55,7 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
       finding.tenth
         ? `Is this ${finding.tenth}?`
         : `Check the number and its unit; possible is ${range(finding)}.`,
-    fixes: pointSet,
+    fixes: setRightOrAside,
     background:
       "Possible, as common practice without a source: alkalinity 0 to 20 meq/L, calcium 0 to 1000 mg/L, magnesium 0 to 3000, potassium 0 to 1500, strontium 0 to 100, salinity 0 to 60, temperature −2 to 45 °C, pH 4 to 11.",
     example: {
@@ -68,7 +74,7 @@ export const readingRules: Rules<"reading/impossible" | "reading/unusual" | "rea
       tenth
         ? `Is this ${tenth}?`
         : "Test again; if the reading was wrong, end its line with disregard and the reason.",
-    fixes: pointSet,
+    fixes: setRightOrAside,
     background: "What is usual is common practice without a source.",
     example: {
       fires: `${vat}  2026-11-30 08:00 read salinity 22\n`,

@@ -3,6 +3,7 @@ import type { Files } from "../culture/names.ts";
 import { comparePlaces } from "../culture/place.ts";
 import type { DosingFinding } from "../dosing/finding.ts";
 import { fileRules } from "./file.ts";
+import { hazardRules } from "./hazard.ts";
 import { logRules } from "./log.ts";
 import { nameRules } from "./name.ts";
 import { overdoseRules } from "./overdose.ts";
@@ -32,6 +33,7 @@ export const rules: Rules<Code> = {
   ...waterRules,
   ...overdoseRules,
   ...planRules,
+  ...hazardRules,
   ...quietRules,
   ...fileRules,
 };

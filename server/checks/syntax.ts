@@ -8,6 +8,7 @@ import { adding, lineAt, replacingWith, standsApart } from "./fixing.ts";
 import { misplaced, misplacedFixes } from "./misplaced.ts";
 import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
+import { linesAtEnd, sectionAt } from "./sections.ts";
 import { inQuotes, isParameter, oneOf, said } from "./words.ts";
 
 const why = "What the line says counts for nothing until it can be read; every other line counts.";
@@ -70,6 +71,24 @@ function numberTodo({ place, word, readings }: Of<"syntax/number-form">, files: 
   return word.length > mostDigits
     ? "Write it with fewer digits."
     : "Write a share as at most 100 %, and a count as a whole number above 0.";
+}
+
+/** A volume that a recipe lacks: an example of one. */
+const exampleVolume = "make up to 1 L";
+
+/** What is missing, where that can be one thing only. */
+function unfinishedFixes(finding: Of<"syntax/unfinished">, files: Files): readonly LineFix[] {
+  const { place, expected } = finding;
+  const [word = "", ...others] = expected;
+  if (isRecipe(finding)) {
+    const document = files.get(place.file);
+    const section = sectionAt(files, place);
+    if (word !== "make up to" || !document || section?.kind !== "solution") return [];
+    const edits = [linesAtEnd(document, place.file, section, [exampleVolume])];
+    return [{ title: `Add ${exampleVolume}, an example to correct`, safe: false, edits }];
+  }
+  if (word === '"') return adding(place, word, false);
+  return others.length === 0 && isReserved(word) ? adding(place, ` ${word}`, false) : [];
 }
 
 /** `8.10`, which may be a time and may be a number. */
@@ -143,7 +162,7 @@ export const syntaxRules: Rules<
       if (expected[0] === '"') return 'Put a " at its end.';
       return expected.length > 0 ? `Next comes ${said(expected)}.` : "Finish it, or remove it.";
     },
-    fixes: ({ place, expected }) => (place.span && expected[0] === '"' ? adding(place, '"', false) : []),
+    fixes: unfinishedFixes,
     background: "Of a solution whose recipe lacks a part the problem stands at the solution's header.",
     example: {
       fires: "system vat\n  tank main 500 L\n  evaporates\n",

@@ -6,6 +6,7 @@ import { bandFigure, edgeFigure, figure } from "./figures.ts";
 import { lineAt, swapping } from "./fixing.ts";
 import type { LineFix } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
+import { linesAfter } from "./sections.ts";
 import { atStart } from "./words.ts";
 
 /** Why there is no water to dose into. */
@@ -52,6 +53,16 @@ function datesSwapped({ place }: Of<"system/until-before-from">, files: Files): 
   return swapping(place, line.text, "Swap the two dates", from, until);
 }
 
+/** A size is needed that nobody but the farm knows: an example of one. */
+const exampleTank = "tank main 500 L";
+
+function tankAdded({ place, reason }: Of<"system/no-volume">, files: Files): readonly LineFix[] {
+  const document = files.get(place.file);
+  if (reason !== "no-tank" || !document?.lines[place.line]) return [];
+  const edits = [linesAfter(document, place.file, place.line, true, [exampleTank])];
+  return [{ title: `Add ${exampleTank}, an example to correct`, safe: false, edits }];
+}
+
 export const systemRules: Rules<
   | "system/no-volume"
   | "system/volume-differs"
@@ -69,6 +80,7 @@ export const systemRules: Rules<
       reason === "no-tank"
         ? "Add a tank line, or one with measured volume."
         : "Check the sizes of the tanks and of what is displaced.",
+    fixes: tankAdded,
     example: {
       fires: "system vat\n  tank main 100 L\n  displace rock 120 L\n",
       silent: "system vat\n  tank main 100 L\n  displace rock 12 L\n",

@@ -16,6 +16,17 @@ function written(examples: readonly string[]): string {
 
 const hasUnit = (example: string): boolean => example !== "no unit";
 
+/** Beside the units that are given as examples, others that people mean as often. */
+const meantToo: Readonly<Record<string, readonly string[]>> = {
+  "mL/min": ["mL/day"],
+  dKH: ["mg/L as CaCO3"],
+};
+
+/** All units that a fix may offer. */
+const offered = (examples: readonly string[]): readonly string[] => [
+  ...new Set(examples.filter(hasUnit).flatMap((unit) => [unit, ...(meantToo[unit] ?? [])])),
+];
+
 /** Of a unit like `mgg/L` only a part is misspelt: where that stands. */
 function partOf(place: Place, word: string, files: Files): Place {
   const { span } = place;
@@ -57,7 +68,7 @@ export const unitRules: Rules<
       // A time that was forgotten; any other unit would need another number.
       replacingWith(
         place,
-        examples.filter((example) => example.startsWith(`${unit}/`)),
+        offered(examples).filter((example) => example.startsWith(`${unit}/`)),
         false,
       ),
     background:
@@ -75,8 +86,7 @@ export const unitRules: Rules<
     todo: "Write the unit behind the number.",
     todoHere: ({ number, examples }) =>
       `Write ${oneOf(examples.filter(hasUnit).map((unit) => `${number} ${unit}`))}.`,
-    fixes: ({ place, examples }) =>
-      [...new Set(examples)].filter(hasUnit).flatMap((unit) => adding(place, ` ${unit}`, false)),
+    fixes: ({ place, examples }) => offered(examples).flatMap((unit) => adding(place, ` ${unit}`, false)),
     example: {
       fires: "system vat\n  tank main 500\n  tank sump 100 L\n",
       silent: "system vat\n  tank main 500 L\n  tank sump 100 L\n",

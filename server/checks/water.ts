@@ -2,6 +2,7 @@
 import { writeDate } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
 import type { DisplayUnit } from "../culture/model.ts";
+import type { Files } from "../culture/names.ts";
 import {
   bandFigure,
   changeFigure,
@@ -12,6 +13,8 @@ import {
   valueBeside,
   valueFigure,
 } from "./figures.ts";
+import { disregarding, mostFixes, writtenNow } from "./mending.ts";
+import type { LineFix } from "./problem.ts";
 import type { Of, Rule, Rules } from "./rule.ts";
 import { aboutWhen, allOf, atStart, nameOf } from "./words.ts";
 
@@ -45,6 +48,15 @@ function outsideTodo({ parameter, value, low }: Of<"water/outside-hold">): strin
 /** Whether a value isn't the reading itself any more, as people see it. */
 const isCarried = (parameter: ParameterName, value: number, read: number, unit: DisplayUnit): boolean =>
   valueFigure(parameter, value, unit) !== valueFigure(parameter, read, unit);
+
+/** What to do about a reading that is right, and what about one that is wrong. */
+const writtenOrDisregarded = (
+  finding: Of<"water/outside-hold" | "water/beyond-limit">,
+  files: Files,
+): readonly LineFix[] => [
+  ...writtenNow(finding, files).slice(0, mostFixes - 1),
+  ...disregarding(finding.place, files),
+];
 
 type Leaves = Of<"water/leaves-hold-soon" | "water/leaves-hold">;
 
@@ -85,6 +97,7 @@ const leaves = (severity: "warning" | "info", within: number, example: Rule["exa
     whyHere: leavesBecause,
     todo: "Set or give what the plan says, which the message names.",
     todoHere: leavesTodo,
+    fixes: writtenNow,
     background:
       "Judged on the mean of 24 hours, with pumps as they are set and uptake as it is known. A warning up to 3 days ahead, a note up to 7: common practice, no source.",
     example,
@@ -115,6 +128,7 @@ export const waterRules: Rules<
     why: "The band is what these corals are kept in.",
     todo: "Follow the plan, no faster than it says, and test again if the value surprises you. Salinity is mended with fresh or saltier water; a low pH with the room's air.",
     todoHere: outsideTodo,
+    fixes: writtenOrDisregarded,
     example: {
       fires:
         "system vat\n  tank main 500 L\n  hold temperature 24.5 to 26.5 degC\n\nlog vat\n  2026-12-01 07:00 read temperature 27.4 degC\n",
@@ -141,6 +155,7 @@ export const waterRules: Rules<
       which === "max"
         ? "Stop what raises it, test again with another kit, and renew water if it is confirmed."
         : "Test again with another kit; if it is confirmed, raise it as planned, not all at once.",
+    fixes: writtenOrDisregarded,
     background:
       "Limits come from the system's `limit … max` and `min` lines, else from the defaults: alkalinity 6 to 12 dKH, calcium up to 500 mg/L, magnesium up to 1600, potassium up to 480, strontium up to 14, pH up to 8.6 (NBS). All of these are common practice without a source.",
     example: {

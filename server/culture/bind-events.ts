@@ -8,6 +8,7 @@ import { aboveZero, type Line, named, placeOf, positive } from "./binder.ts";
 import type { OwnKind } from "./finding.ts";
 import { factAt } from "./history.ts";
 import type { EventHead, SystemEvent, SystemFacts } from "./model.ts";
+import type { Place } from "./place.ts";
 import { type PendingRead, takeReadItems } from "./readings.ts";
 
 export type BoundEvent = Exclude<SystemEvent, { kind: "read" }> | PendingRead;
@@ -40,7 +41,14 @@ export function bindEvent(line: Line, event: Event, own: OwnNames): BoundEvent |
           reason,
         });
       }
-      return { ...head, kind: "read", pending, line, disregard: event.disregard, kit: kit?.ref ?? null };
+      return {
+        ...head,
+        kind: "read",
+        pending,
+        system: line.system,
+        disregard: event.disregard,
+        kit: kit?.ref ?? null,
+      };
     }
     case "set":
       return bindSet(line, event.items, own, head);
@@ -121,7 +129,7 @@ function sourceNamed(line: Line, word: Word, own: OwnNames, minute: number): str
   if (own.facts.sources.has(word.text)) return word.text;
   const visible = line.names.visible.get(line.file)?.get(word.text);
   if (visible?.kind !== "solution") return pumpNamed(line, word, own);
-  line.used.add(visible);
+  line.used.add(visible.ref);
   const all = [...own.facts.sources].flatMap(([key, history]) => {
     const giving = history.some(({ value }) => value.solution === visible.ref);
     return giving ? [{ key, givesNow: factAt(history, minute)?.value.solution === visible.ref }] : [];
@@ -177,4 +185,15 @@ function bindStock(line: Line, event: StockEvent, own: OwnNames, head: EventHead
   const count = stockCount(line, event.count);
   if (count === null) return null;
   return { ...head, kind: event.kind, cohort: event.cohort.text, count, system: target?.ref ?? null };
+}
+
+/** The same event on another line. What it says of its own line is all that it says of where it stands. */
+export function onLine(event: BoundEvent, line: number): BoundEvent {
+  const placed = <T extends { readonly place: Place }>(part: T): T => ({
+    ...part,
+    place: { ...part.place, line },
+  });
+  if (event.kind === "gave") return { ...placed(event), doses: event.doses.map(placed) };
+  if (event.kind === "set") return { ...placed(event), rates: event.rates.map(placed) };
+  return placed(event);
 }

@@ -1,11 +1,21 @@
 /** Stock solutions: their strength over time from recipes, saturation or a printed strength. */
 
 import { type Parameter, parameterOf } from "../../grammar/parameters.ts";
-import type { Fact, ReagentFact, SolutionFact } from "../../grammar/syntax.ts";
-import type { ReagentName } from "../chemistry/reagents.ts";
+import type { Fact, ReagentFact, SolutionFact, Word } from "../../grammar/syntax.ts";
+import { isCaustic } from "../chemistry/hazards.ts";
+import { isReagent, type ReagentName } from "../chemistry/reagents.ts";
 import { saturatedStrength } from "../chemistry/solubility.ts";
 import { readStrength } from "../quantity/concentration.ts";
-import { aboveZero, amountOf, defaultWater, type Line, parameterNamed, plain, positive } from "./binder.ts";
+import {
+  aboveZero,
+  amountOf,
+  defaultWater,
+  type Line,
+  parameterNamed,
+  placeOf,
+  plain,
+  positive,
+} from "./binder.ts";
 import { defaults } from "./defaults.ts";
 import { enter, into } from "./enter.ts";
 import { changesOf, type Entry, factAt, type History } from "./history.ts";
@@ -86,11 +96,13 @@ function readRecipe(
     keepDegC: [],
     supplied: new Map(),
   };
+  const who = mayHandle(section);
   for (const { line, fact } of section.lines) {
     const solutionFact = fact as SolutionFact;
     switch (solutionFact.kind) {
       case "dissolve": {
         const reagent = reagentNamed(line, solutionFact.reagent, reagentFacts);
+        reportCaustic(line, solutionFact.reagent, reagent, who);
         const grams = positive(line, solutionFact.mass, "mass");
         if (!reagent || grams === null) {
           recipe.isWhole = false;
@@ -102,6 +114,7 @@ function readRecipe(
       }
       case "saturated": {
         const reagent = reagentNamed(line, solutionFact.reagent, reagentFacts);
+        reportCaustic(line, solutionFact.reagent, reagent, who);
         if (reagent) enter(line, recipe.saturated, solutionFact, reagent, "saturated");
         else recipe.isWhole = false;
         break;
@@ -126,6 +139,27 @@ function readRecipe(
   }
   reportUnfinished(section, recipe);
   return recipe;
+}
+
+/** Who may handle what is caustic in a recipe, as the section says. */
+function mayHandle({ lines }: RecipeSection): string | null {
+  for (const { fact } of lines) if (fact.kind === "acknowledge") return fact.who.text;
+  return null;
+}
+
+/** A reagent that is caustic under any of the meanings that its name has over time. */
+function reportCaustic(line: Line, word: Word, reagent: History<PureReagent> | null, who: string | null) {
+  const names = (reagent ?? []).flatMap(({ value }) => value.builtIn ?? []).filter(isReagent);
+  const caustic = names.findLast(isCaustic);
+  if (!caustic) return;
+  line.report({
+    code: "hazard/caustic",
+    place: placeOf(line, word),
+    system: null,
+    word: word.text,
+    reagent: caustic,
+    who,
+  });
 }
 
 function readSupplied(

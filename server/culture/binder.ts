@@ -34,7 +34,8 @@ export interface Binder {
   readonly file: string;
   readonly system: string | null;
   readonly names: Names;
-  readonly used: Set<Declaration>;
+  /** References of what was named. */
+  readonly used: Set<string>;
   readonly report: (finding: CultureFinding) => void;
 }
 
@@ -180,6 +181,6 @@ export function named(line: Line, word: Word, wanted: readonly NamedKind[]): Dec
     line.report(result.finding);
     return null;
   }
-  line.used.add(result.found);
+  line.used.add(result.found.ref);
   return result.found;
 }

@@ -33,3 +33,15 @@ export function compareEvents(left: SystemEvent, right: SystemEvent): number {
     (left.text < right.text ? -1 : left.text > right.text ? 1 : 0)
   );
 }
+
+/** How many of some events in order happened up to a minute. */
+export function countUpTo(events: readonly { readonly minute: number }[], minute: number): number {
+  let low = 0;
+  let high = events.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (events[middle]!.minute <= minute) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}

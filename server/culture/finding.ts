@@ -1,6 +1,7 @@
 /** What the model's making can find wrong: code, place and data; the sentences are made in `checks/`. */
 import type { ParameterName } from "../../grammar/parameters.ts";
 import type { LineFinding } from "../../grammar/syntax.ts";
+import type { ReagentName } from "../chemistry/reagents.ts";
 import type { QuantityFinding } from "../quantity/finding.ts";
 import type { DisplayUnit } from "./model.ts";
 import type { Place } from "./place.ts";
@@ -69,6 +70,14 @@ type Own = { readonly place: Place; readonly system: string | null } & (
       readonly tenth: string | null;
     }
   | { readonly code: "reading/disregarded"; readonly reason: string }
+  | {
+      readonly code: "hazard/caustic";
+      /** As the recipe names it, and the reagent that it is. */
+      readonly word: string;
+      readonly reagent: ReagentName;
+      /** Who may handle it, as the solution's section says; null where it doesn't. */
+      readonly who: string | null;
+    }
   | { readonly code: "log/twice"; readonly first: Place }
   | { readonly code: "log/out-of-order" }
   | { readonly code: "log/no-effect"; readonly why: string }

@@ -199,6 +199,8 @@ export interface System {
   readonly events: readonly SystemEvent[];
   /** The files that its log stands in. */
   readonly logFiles: readonly string[];
+  /** References of the solutions, salt waters and other systems that its facts and events name. */
+  readonly refersTo: ReadonlySet<string>;
 }
 
 /** The constants of a system over time, one value. */

@@ -38,6 +38,14 @@ export type Files = ReadonlyMap<string, MarlDocument>;
 /** Other names for files and folders of the farm: the path of a link → where it leads. */
 export type Links = ReadonlyMap<string, string>;
 
+/** All of a file that binding names looks at: headers with their names, and `use` lines. */
+export function namesWrittenIn({ lines, sections, uses }: MarlDocument): unknown[] {
+  const headers = sections.map(({ kind, name, from, headerLine }) =>
+    name && namedKinds.has(kind) ? [kind, name, from?.minute, headerLine] : null,
+  );
+  return [headers, uses.map(({ line }) => [line, lines[line]?.statement])];
+}
+
 /** Binds `use` lines and headers of all files. */
 export function bindNames(
   files: Files,
@@ -156,17 +164,23 @@ function usedBy(
   findings: CultureFinding[],
 ): UsedFile[] {
   const used: UsedFile[] = [];
-  for (const [line, { statement }] of document.lines.entries()) {
+  for (const { line } of document.uses) {
+    const statement = document.lines[line]?.statement;
     if (statement?.kind !== "use") continue;
     const path = statement.path.text;
     const place = { file, line, span: statement.path };
-    const written = resolvePath(file, path);
-    const target = written === null ? null : throughLinks(written, links);
+    const target = fileMeant(file, path, links);
     if (target === null) findings.push({ code: "use/outside", place, system: null, path });
     else if (!files.has(target)) findings.push({ code: "use/missing-file", place, system: null, path });
     else used.push({ file: target, place, path });
   }
   return used;
+}
+
+/** The file that a path written in a file means, links followed, whether or not it is there; null outside the farm. */
+export function fileMeant(file: string, path: string, links: Links): string | null {
+  const written = resolvePath(file, path);
+  return written === null ? null : throughLinks(written, links);
 }
 
 /** A link may lead to another one; more than so many lead in a circle. */

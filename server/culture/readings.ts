@@ -18,16 +18,20 @@ import {
 } from "./binder.ts";
 import { inModelUnit } from "./convert.ts";
 import { defaults } from "./defaults.ts";
-import type { ByParameter, EventHead, ReadEvent, ReadValue, SystemEvent } from "./model.ts";
+import { countUpTo } from "./event-order.ts";
+import type { EventHead, ReadEvent, ReadValue, SystemEvent } from "./model.ts";
 
 /** A read line with its amounts still as written; `readings.ts` turns them into the model's units. */
 export interface PendingRead extends EventHead {
   readonly kind: "read";
-  readonly pending: ReadonlyMap<ParameterName, PendingValue>;
-  readonly line: Line;
+  /** The same value wherever the line stands. */
+  readonly pending: PendingValues;
+  readonly system: string | null;
   readonly disregard: Word | null;
   readonly kit: string | null;
 }
+
+export type PendingValues = ReadonlyMap<ParameterName, PendingValue>;
 
 export interface PendingValue {
   readonly quantity: QuantityText;
@@ -46,10 +50,7 @@ export interface Known {
  * The values of one line as written; null where one of them can't be read: a line counts whole or not at all.
  * Of a parameter read twice in it the first counts.
  */
-export function takeReadItems(
-  line: Line,
-  items: readonly ReadItem[],
-): ReadonlyMap<ParameterName, PendingValue> | null {
+export function takeReadItems(line: Line, items: readonly ReadItem[]): PendingValues | null {
   let whole = true;
   const pending = new Map<ParameterName, PendingValue>();
   for (const item of items) {
@@ -78,7 +79,7 @@ export function takeReadItems(
 }
 
 /** Minutes within which a value of another line belongs to a reading. */
-const sameDay = minutesPerDay;
+export const sameDay = minutesPerDay;
 
 export interface Seen {
   readonly minute: number;
@@ -87,13 +88,7 @@ export interface Seen {
 
 /** The nearest value within a day, else the latest before, else the default. `seen` is in order of time. */
 export function nearestKnown(seen: readonly Seen[], minute: number, byDefault: number): Known {
-  let low = 0;
-  let high = seen.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (seen[middle]!.minute <= minute) low = middle + 1;
-    else high = middle;
-  }
+  const low = countUpTo(seen, minute);
   const before = seen[low - 1];
   const after = seen[low];
   const apart = (other: Seen | undefined) =>
@@ -105,124 +100,18 @@ export function nearestKnown(seen: readonly Seen[], minute: number, byDefault: n
 
 /** Counts a reading into a lookup: not what was disregarded, impossible, or only known to be below something. */
 export function seenIn(events: readonly ReadEvent[], parameter: ParameterName): Seen[] {
-  return events.flatMap(({ minute, values, disregarded }) => {
+  const seen: Seen[] = [];
+  for (const { minute, values, disregarded } of events) {
     const value = values[parameter];
-    return value && !disregarded && !value.impossible && !value.below ? [{ minute, value: value.value }] : [];
-  });
+    if (value && !disregarded && !value.impossible && !value.below) seen.push({ minute, value: value.value });
+  }
+  return seen;
 }
 
-/**
- * Converts all readings of a system, in order of time. Salinity and temperature need no other reading, so
- * they come first; then what is written for a kilogram is turned with the water of its own moment.
- */
-export function convertReads(reads: readonly PendingRead[]): ReadEvent[] {
-  const plain = (parameter: ParameterName) =>
-    reads.flatMap((read) => {
-      const pending = read.pending.get(parameter);
-      const row = parameterOf(parameter)!;
-      const value =
-        pending && !pending.below && !read.disregard
-          ? inModelUnit(pending.written.amount, row, () => 1)
-          : null;
-      const [low, high] = row.possible!;
-      return value !== null && value >= low && value <= high
-        ? [{ minute: read.minute, value, line: read.place }]
-        : [];
-    });
-  const salinities = plain("salinity");
-  const temperatures = plain("temperature");
-  return reads.map((read) => {
-    const own = (parameter: ParameterName) => {
-      const pending = read.pending.get(parameter);
-      const value = pending && inModelUnit(pending.written.amount, parameterOf(parameter)!, () => 1);
-      return value ?? null;
-    };
-    const water = {
-      salinity:
-        inRange("salinity", own("salinity")) ??
-        nearestKnown(salinities, read.minute, defaults.salinity.value).value,
-      temperatureDegC:
-        inRange("temperature", own("temperature")) ??
-        nearestKnown(temperatures, read.minute, defaults.temperature.value).value,
-    };
-    const values: Partial<Record<ParameterName, ReadValue>> = {};
-    for (const [parameter, pending] of read.pending) {
-      const value = convertValue(read, parameter, pending, water);
-      if (value) values[parameter] = value;
-    }
-    return readEvent(read, values);
-  });
-}
-
-function inRange(parameter: ParameterName, value: number | null): number | null {
+/** Null for a value that sea water can't have. */
+export function inRange(parameter: ParameterName, value: number | null): number | null {
   const range = parameterOf(parameter)!.possible;
   return value !== null && range && value >= range[0] && value <= range[1] ? value : null;
-}
-
-function readEvent(read: PendingRead, values: ByParameter<ReadValue>): ReadEvent {
-  const { minute, timeKnown, place, text, by, kit } = read;
-  return {
-    kind: "read",
-    minute,
-    timeKnown,
-    place,
-    text,
-    by,
-    kit,
-    values,
-    disregarded: read.disregard !== null,
-  };
-}
-
-function convertValue(
-  read: PendingRead,
-  parameter: ParameterName,
-  pending: PendingValue,
-  water: ReferenceWater,
-): ReadValue | null {
-  const row = parameterOf(parameter)!;
-  const { amount } = pending.written;
-  const value = inModelUnit(amount, row, () => densityOf(water));
-  const perKilogram =
-    amount.sort === "dissolved" && amount.per === "kilogram" ? inModelUnit(amount, row, () => 1) : null;
-  const unit = displayUnit(pending.quantity, row, water);
-  const place = placeOf(read.line, { start: pending.word.start, end: pending.quantity.end });
-  const scale = amount.sort === "pH" ? amount.scale : null;
-  const written = pending.quantity.number.text;
-  const shared = {
-    place,
-    system: read.line.system,
-    parameter,
-    written,
-    writtenUnit: writtenUnit(pending.quantity),
-    unit,
-  };
-  const possible = row.possible ?? [0, Number.MAX_VALUE];
-  // Null: no sea water has this specific gravity or conductivity.
-  const impossible = value === null || value < possible[0] || value > possible[1];
-  if (impossible) {
-    if (!read.disregard)
-      read.line.report({
-        code: "reading/impossible",
-        ...shared,
-        value,
-        range: possible,
-        tenth: tenthOf(pending.quantity, row, water),
-      });
-    return value === null || !Number.isFinite(value)
-      ? null
-      : { place, value, perKilogram, below: pending.below, impossible, scale, unit };
-  }
-  if (row.usual && !pending.below && !read.disregard && (value < row.usual[0] || value > row.usual[1])) {
-    read.line.report({
-      code: "reading/unusual",
-      ...shared,
-      value,
-      range: row.usual,
-      tenth: tenthOf(pending.quantity, row, water),
-    });
-  }
-  return { place, value, perKilogram, below: pending.below, impossible, scale, unit };
 }
 
 /**
@@ -230,13 +119,14 @@ function convertValue(
  * temperature nearest to it; of those only what is known by then may count, so the last day's is turned again.
  */
 export function eventsSeenAt(events: readonly SystemEvent[], at: number): readonly SystemEvent[] {
-  const reads = events.filter((event): event is ReadEvent => event.kind === "read");
-  if (!reads.some(({ minute }) => minute > at)) return events;
-  const known = reads.filter(({ minute }) => minute <= at);
-  const salinities = seenIn(known, "salinity");
-  const temperatures = seenIn(known, "temperature");
-  return events.map((event) => {
-    if (event.kind !== "read" || event.minute > at || event.minute <= at - sameDay) return event;
+  const known = countUpTo(events, at);
+  const dayBefore = countUpTo(events, at - sameDay);
+  if (!events.slice(dayBefore, known).some(isPerKilogram) || !events.slice(known).some(isRead)) return events;
+  const reads = events.slice(0, known).filter(isRead);
+  const salinities = seenIn(reads, "salinity");
+  const temperatures = seenIn(reads, "temperature");
+  return events.map((event, index) => {
+    if (index < dayBefore || index >= known || !isPerKilogram(event)) return event;
     const own = (parameter: ParameterName) => inRange(parameter, event.values[parameter]?.value ?? null);
     const water = {
       salinity: own("salinity") ?? nearestKnown(salinities, event.minute, defaults.salinity.value).value,
@@ -251,8 +141,14 @@ export function eventsSeenAt(events: readonly SystemEvent[], at: number): readon
   });
 }
 
+export const isRead = (event: SystemEvent): event is ReadEvent => event.kind === "read";
+
+const isPerKilogram = (event: SystemEvent): event is ReadEvent =>
+  isRead(event) &&
+  Object.values(event.values as Record<string, ReadValue>).some(({ perKilogram }) => perKilogram !== null);
+
 /** The unit as it stands on the line; empty for a bare number. */
-const writtenUnit = ({ unit, asCaCO3 }: QuantityText): string =>
+export const writtenUnit = ({ unit, asCaCO3 }: QuantityText): string =>
   `${unit?.text ?? ""}${asCaCO3 ? " as CaCO3" : ""}`;
 
 /** Says so where sea water can't have a value; false then. */
@@ -282,7 +178,7 @@ export function isPossible(
 }
 
 /** The same digits with the point one place to the left, where that would be usual. */
-function tenthOf(quantity: QuantityText, parameter: Parameter, water: ReferenceWater): string | null {
+export function tenthOf(quantity: QuantityText, parameter: Parameter, water: ReferenceWater): string | null {
   const { usual } = parameter;
   const [whole = "0", decimals = ""] = quantity.number.text.split(".");
   if (!usual || whole.startsWith("-")) return null;

@@ -1,15 +1,17 @@
 /** Everything that is said of one system at a moment: the water now, where it goes, what to dose, what is wrong. */
 import { minutesPerDay } from "../../grammar/dates.ts";
 import { defaults } from "../culture/defaults.ts";
+import { countUpTo } from "../culture/event-order.ts";
 import { factAt } from "../culture/history.ts";
+import { inOneGo } from "../culture/keep.ts";
 import type { Assumption, FarmModel, Hold, System } from "../culture/model.ts";
 import { eventsSeenAt } from "../culture/readings.ts";
 import { assumeDensity, assuming } from "./assumptions.ts";
-import { type ReadingWithCarbonate, readingsUpTo } from "./carbonate-of-reading.ts";
+import { type KeptReadings, type ReadingWithCarbonate, readingsUpTo } from "./carbonate-of-reading.ts";
 import { constantsOf, type SystemConstants } from "./constants.ts";
 import type { DosingFinding } from "./finding.ts";
-import { type Folded, foldEvents, uptakeOfLastDay } from "./fold.ts";
-import { checkDoses } from "./log-doses.ts";
+import { uptakeOfLastDay } from "./fold.ts";
+import { type FoldedLog, foldedAt, foldLog, foundIn } from "./fold-log.ts";
 import { makePlan, type Plan, plannedPhases, type Situation } from "./make-plan.ts";
 import { planFindings } from "./plan-findings.ts";
 import {
@@ -52,23 +54,46 @@ export interface Assessment {
   readonly assumptions: readonly Assumption[];
 }
 
+/** An assessment with what the next one of the system may start from. */
+export interface KeptAssessment {
+  readonly assessment: Assessment;
+  readonly log: FoldedLog;
+  readonly readings: KeptReadings;
+}
+
 /** Assesses a system at a minute. `clock`: the real time, for lines that lie past both. */
 export function assess(model: FarmModel, declared: System, at: number, clock: number): Assessment {
+  return inOneGo(assessInSteps(model, declared, at, clock, null)).assessment;
+}
+
+/** The same, pausing now and then; what its last assessment worked out and is still so is taken as it is. */
+export function* assessInSteps(
+  model: FarmModel,
+  declared: System,
+  at: number,
+  clock: number,
+  before: KeptAssessment | null,
+): Generator<void, KeptAssessment> {
   const system: System = { ...declared, events: eventsSeenAt(declared.events, at) };
   const constants = constantsOf(model, system);
-  return assessFolded(model, system, constants, foldEvents(constants, system.events, at), at, clock);
+  const log = yield* foldLog(model, system, constants, at, before?.log ?? null);
+  const readings = yield* readingsUpTo(system.events, at, before?.readings ?? null);
+  return { assessment: assessFolded(model, system, constants, log, readings, at, clock), log, readings };
 }
 
 function assessFolded(
   model: FarmModel,
   system: System,
   constants: SystemConstants,
-  { state, doses, lastDay }: Folded,
+  log: FoldedLog,
+  kept: KeptReadings,
   at: number,
   clock: number,
 ): Assessment {
+  const { state, lastDay } = foldedAt(log, constants, at);
   const assumed = assuming();
-  const readings = readingsUpTo(system, at, assumed);
+  for (const { assumption } of kept.assumptions) assumed.add(assumption);
+  const { readings } = kept;
   const volume = volumeAt(constants.facts, at);
   const shared = { system, at, constants, volume, readings, state };
   const staleParameters = dosed.filter(
@@ -77,7 +102,7 @@ function assessFolded(
   const findings: DosingFinding[] = [
     ...volumeFindings(system, volume),
     ...futureLines(system, at, clock),
-    ...checkDoses(system.name, constants, doses),
+    ...foundIn(log),
   ];
   if (volume.litres === null) {
     findings.push(...waterFindings({ ...shared, staleParameters, drifts: [], plan: null, uptake: null }));
@@ -181,8 +206,8 @@ function listAssumptions(
     if (source) addSolution(source.solution);
   }
   // What was given or exchanged while the values carried now were on their way.
-  for (const event of system.events) {
-    if (event.minute > state.minute || event.minute < state.minute - carriedMinutes) continue;
+  const carriedSince = countUpTo(system.events, state.minute - carriedMinutes - 1);
+  for (const event of system.events.slice(carriedSince, countUpTo(system.events, state.minute))) {
     if (event.kind === "renewed") addWater(event.water, event.minute);
     if (event.kind === "topped" && event.solution) addSolution(event.solution);
     if (event.kind === "gave") for (const { solution } of event.doses) addSolution(solution);
@@ -258,6 +283,6 @@ const volumeDifference = 0.1;
 function futureLines(system: System, at: number, clock: number): DosingFinding[] {
   const latest = Math.max(at, clock) + minutesPerDay;
   return system.events
-    .filter(({ minute }) => minute > latest)
+    .slice(countUpTo(system.events, latest))
     .map(({ minute, place }) => ({ code: "log/future", place, system: system.name, minute }));
 }

@@ -3,6 +3,7 @@ import type { ParameterName } from "../../grammar/parameters.ts";
 import { seaWaterComposition } from "../chemistry/sea-water.ts";
 import { densityOf } from "../culture/binder.ts";
 import { defaults } from "../culture/defaults.ts";
+import { countUpTo } from "../culture/event-order.ts";
 import { changesOf, factAt } from "../culture/history.ts";
 import type { Assumption, FarmModel, Strength, System, SystemFacts } from "../culture/model.ts";
 import { type ByTracked, byTracked, isTracked, type Tracked, tracked } from "./tracked.ts";
@@ -107,9 +108,9 @@ const heldAim = (system: System, parameter: ParameterName, minute: number): numb
 /** The last reading of another system before a minute; null where there is none. */
 function lastReading(system: System, parameter: ParameterName, minute: number): number | null {
   if (!isTracked(parameter) && parameter !== "temperature") return null;
-  for (let index = system.events.length - 1; index >= 0; index--) {
+  for (let index = countUpTo(system.events, minute) - 1; index >= 0; index--) {
     const event = system.events[index]!;
-    if (event.minute > minute || event.kind !== "read" || event.disregarded) continue;
+    if (event.kind !== "read" || event.disregarded) continue;
     const value = event.values[parameter];
     if (value && !value.impossible && !value.below) return value.value;
   }

@@ -3,7 +3,13 @@ import type { ParameterName } from "../../grammar/parameters.ts";
 import type { CultureFinding } from "../culture/finding.ts";
 import type { DisplayUnit } from "../culture/model.ts";
 import type { Place } from "../culture/place.ts";
+import type { Remedies, Split } from "./remedy.ts";
 import type { Dosed } from "./tracked.ts";
+
+interface Mendable {
+  /** What would mend it at the moment asked; added when all else is known. */
+  readonly remedies?: Remedies;
+}
 
 interface OfParameter {
   readonly parameter: ParameterName;
@@ -11,35 +17,38 @@ interface OfParameter {
 }
 
 type Own = { readonly place: Place; readonly system: string } & (
-  | (OfParameter & {
-      readonly code: "water/outside-hold";
-      readonly value: number;
-      /** What was read; `value` is what has become of it since. */
-      readonly read: number;
-      readonly low: number;
-      readonly high: number;
-    })
-  | (OfParameter & {
-      readonly code: "water/leaves-hold-soon" | "water/leaves-hold";
-      readonly at: number;
-      readonly edge: number;
-      readonly takenPerDay: number | null;
-      readonly dosedPerDay: number;
-      /** What the plan gives a day: source and litres. */
-      readonly planned: readonly {
-        readonly by: string;
-        readonly solution: string;
-        readonly litresPerDay: number;
-      }[];
-    })
-  | (OfParameter & {
-      readonly code: "water/beyond-limit";
-      readonly which: "max" | "min";
-      readonly value: number;
-      /** What was read; `value` is what has become of it since. */
-      readonly read: number;
-      readonly limit: number;
-    })
+  | (OfParameter &
+      Mendable & {
+        readonly code: "water/outside-hold";
+        readonly value: number;
+        /** What was read; `value` is what has become of it since. */
+        readonly read: number;
+        readonly low: number;
+        readonly high: number;
+      })
+  | (OfParameter &
+      Mendable & {
+        readonly code: "water/leaves-hold-soon" | "water/leaves-hold";
+        readonly at: number;
+        readonly edge: number;
+        readonly takenPerDay: number | null;
+        readonly dosedPerDay: number;
+        /** What the plan gives a day: source and litres. */
+        readonly planned: readonly {
+          readonly by: string;
+          readonly solution: string;
+          readonly litresPerDay: number;
+        }[];
+      })
+  | (OfParameter &
+      Mendable & {
+        readonly code: "water/beyond-limit";
+        readonly which: "max" | "min";
+        readonly value: number;
+        /** What was read; `value` is what has become of it since. */
+        readonly read: number;
+        readonly limit: number;
+      })
   | (OfParameter & {
       readonly code: "water/salinity-is-the-cause";
       readonly value: number;
@@ -61,13 +70,16 @@ type Own = { readonly place: Place; readonly system: string } & (
       readonly code: "water/stale";
       readonly parameters: readonly { readonly name: ParameterName; readonly readAt: number | null }[];
     }
-  | (OfParameter & {
-      readonly code: `overdose/${Dosed}-rise` | `overdose/${Dosed}-dose` | `overdose/${Dosed}-max`;
-      readonly solution: string | null;
-      readonly value: number;
-      readonly limit: number;
-      readonly limitStated: boolean;
-    })
+  | (OfParameter &
+      Mendable & {
+        readonly code: `overdose/${Dosed}-rise` | `overdose/${Dosed}-dose` | `overdose/${Dosed}-max`;
+        readonly solution: string | null;
+        readonly value: number;
+        readonly limit: number;
+        readonly limitStated: boolean;
+        /** The dose in parts that break no limit; null where that can't be, or it is a rate that was set. */
+        readonly split: Split | null;
+      })
   | {
       readonly code: "overdose/ph";
       readonly before: number;
@@ -87,6 +99,8 @@ type Own = { readonly place: Place; readonly system: string } & (
       readonly by: string;
       readonly perDay: number | null;
       readonly unit: DisplayUnit;
+      /** Of what nothing gives: solutions of the farm that hold it, by reference; added when all else is known. */
+      readonly solutions?: readonly string[];
     }
   | {
       readonly code: "plan/every-other-day";

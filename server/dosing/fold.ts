@@ -1,7 +1,8 @@
 /** The log as a fold: a state, an event, the next state. What comes in between is carried forward in closed form. */
 import { minutesPerDay } from "../../grammar/dates.ts";
+import { countUpTo } from "../culture/event-order.ts";
 import { factAt } from "../culture/history.ts";
-import type { ReadEvent, SystemEvent } from "../culture/model.ts";
+import type { ReadEvent, ReadValue, SystemEvent } from "../culture/model.ts";
 import type { SystemConstants } from "./constants.ts";
 import { after, type Flow, flowsSet, type Rates, ratesWith, topOffFlow } from "./rates.ts";
 import { type ByTracked, broughtPerLitre, byTracked, type Tracked, tracked } from "./tracked.ts";
@@ -25,15 +26,31 @@ export interface Span {
 
 export interface Folded {
   readonly state: WaterState;
-  readonly doses: readonly DoseInLog[];
   /** The spans of the 24 hours before the moment asked. */
   readonly lastDay: readonly Span[];
 }
 
-/** Folds all events up to a minute, and carries the water to it. Later events wait silently. */
-export function foldEvents(constants: SystemConstants, events: readonly SystemEvent[], at: number): Folded {
-  let state = startState(Math.min(events[0]?.minute ?? at, at));
-  const doses: DoseInLog[] = [];
+/** One event: the water carried to it, and what it does. */
+export function foldEvent(
+  state: WaterState,
+  event: SystemEvent,
+  constants: SystemConstants,
+): { readonly before: WaterState; readonly after: WaterState } {
+  const before = carryTo(state, event.minute, constants);
+  return { before, after: happen(before, event, constants) };
+}
+
+/**
+ * Folds events, the last of a log, onto a state before the 24 hours that end at a minute, or before the whole log;
+ * and carries the water to that minute.
+ */
+export function foldUpTo(
+  start: WaterState,
+  events: readonly SystemEvent[],
+  at: number,
+  constants: SystemConstants,
+): Folded {
+  let state = start;
   const dayBefore = at - minutesPerDay;
   const lastDay: Span[] = [];
   const watch = (from: number, to: number) => {
@@ -43,15 +60,17 @@ export function foldEvents(constants: SystemConstants, events: readonly SystemEv
   // Before the log begins the stock is as declared.
   watch(dayBefore, state.minute);
   for (const event of events) {
-    if (event.minute > at) break;
     watch(state.minute, event.minute);
-    const before = carryTo(state, event.minute, constants);
-    state = happen(before, event, constants);
-    if (event.kind === "gave" || event.kind === "topped" || event.kind === "set" || event.kind === "started")
-      doses.push({ event, before, after: state });
+    state = foldEvent(state, event, constants).after;
   }
   watch(state.minute, at);
-  return { state: carryTo(state, at, constants), doses, lastDay };
+  return { state: carryTo(state, at, constants), lastDay };
+}
+
+/** Folds all events up to a minute, and carries the water to it. Later events wait silently. */
+export function foldEvents(constants: SystemConstants, events: readonly SystemEvent[], at: number): Folded {
+  const start = startState(Math.min(events[0]?.minute ?? at, at));
+  return foldUpTo(start, events.slice(0, countUpTo(events, at)), at, constants);
 }
 
 /** Uptake over the 24 hours before a moment, piece by piece between events and changes of facts. */
@@ -136,7 +155,7 @@ export function ratesAt(
 function happen(state: WaterState, event: SystemEvent, constants: SystemConstants): WaterState {
   switch (event.kind) {
     case "read":
-      return event.disregarded ? state : readInto(state, event);
+      return readInto(state, event);
     case "set": {
       const set = new Map(state.set);
       for (const { source, litresPerDay } of event.rates) set.set(source, litresPerDay);
@@ -164,24 +183,44 @@ function happen(state: WaterState, event: SystemEvent, constants: SystemConstant
   }
 }
 
+/** What a reading says of a parameter, where it counts. */
+const usable = (event: ReadEvent, name: keyof ReadEvent["values"]): ReadValue | null => {
+  const value = event.values[name];
+  return value && !event.disregarded && !value.impossible && !value.below ? value : null;
+};
+
 /** A reading stands as read. */
 function readInto(state: WaterState, event: ReadEvent): WaterState {
-  const usable = (name: keyof ReadEvent["values"]) => {
-    const value = event.values[name];
-    return value && !value.impossible && !value.below ? value : null;
-  };
   const carried = byTracked((name: Tracked): Carried | null => {
-    const reading = usable(name);
+    const reading = usable(event, name);
     return reading ? { value: reading.value, readAt: event.minute, reading } : state.carried[name];
   });
-  const pH = usable("pH");
-  const temperature = usable("temperature");
+  const pH = usable(event, "pH");
+  const temperature = usable(event, "temperature");
   return {
     ...state,
     carried,
     pH: pH ? { minute: event.minute, reading: pH } : state.pH,
     temperature: temperature ? { minute: event.minute, value: temperature.value } : state.temperature,
   };
+}
+
+/** A state after some events, with its readings as they are told in these: their lines may have moved since. */
+export function withReadingsOf(state: WaterState, events: readonly SystemEvent[]): WaterState {
+  const found = (name: keyof ReadEvent["values"], minute: number): ReadValue | null => {
+    for (let index = countUpTo(events, minute) - 1; events[index]?.minute === minute; index -= 1) {
+      const event = events[index]!;
+      const reading = event.kind === "read" ? usable(event, name) : null;
+      if (reading) return reading;
+    }
+    return null;
+  };
+  const carried = byTracked((name: Tracked): Carried | null => {
+    const old = state.carried[name];
+    return old && { ...old, reading: found(name, old.readAt) ?? old.reading };
+  });
+  const { pH } = state;
+  return { ...state, carried, pH: pH && { ...pH, reading: found("pH", pH.minute) ?? pH.reading } };
 }
 
 const isCarried = (carried: Carried | null, minute: number): carried is Carried =>

@@ -1,6 +1,5 @@
 /** Doses of the log that broke a limit of the system, however old they are. */
 
-import { minutesPerDay } from "../../grammar/dates.ts";
 import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { SystemEvent } from "../culture/model.ts";
@@ -11,12 +10,15 @@ import type { DosingFinding } from "./finding.ts";
 import type { DoseInLog } from "./fold.ts";
 import { ratesAsSet } from "./fold.ts";
 import { limitAt } from "./limits.ts";
+import type { Split } from "./remedy.ts";
 import { beyondCapacity } from "./set-capacity.ts";
+import { splitInDay, splitOverDays } from "./split-dose.ts";
 import { broughtPerLitre, type Dosed, dosed } from "./tracked.ts";
 import { volumeAt } from "./volume.ts";
 import { isStale, type WaterState } from "./water-state.ts";
 
-interface Given {
+/** A dose given at once. */
+export interface Given {
   readonly minute: number;
   readonly solution: string;
   readonly litres: number;
@@ -27,35 +29,38 @@ interface Given {
 const precipitationGrades = { info: 7, warning: 12, error: 30 } as const;
 const precipitationPh = 10;
 
-/** Checks every `gave` and `set` of a log against the limits that were in force. */
-export function checkDoses(
+/**
+ * Checks an event of a log against the limits that were in force. `earlier`: what was given before it within a day.
+ */
+export function checkDose(
   system: string,
   constants: SystemConstants,
-  doses: readonly DoseInLog[],
+  { event, before, after }: DoseInLog,
+  earlier: readonly Given[],
 ): DosingFinding[] {
   const findings: DosingFinding[] = [];
-  const lastDay: Given[] = [];
-  for (const { event, before, after } of doses) {
-    if (event.kind !== "gave" && event.kind !== "topped") {
-      if (event.kind === "set") findings.push(...beyondCapacity(system, constants, event));
-      findings.push(...checkSet(system, constants, event, after));
-      continue;
-    }
-    while (lastDay[0] && lastDay[0].minute <= event.minute - minutesPerDay) lastDay.shift();
-    let state = before;
-    for (const given of givenBy(event)) {
-      lastDay.push(given);
-      findings.push(...checkGiven(system, constants, state, given, lastDay));
-      state = withGiven(state, constants, given);
-    }
+  if (event.kind !== "gave" && event.kind !== "topped") {
+    if (event.kind === "set") findings.push(...beyondCapacity(system, constants, event));
+    findings.push(...checkSet(system, constants, event, after));
+    return findings;
+  }
+  const lastDay = [...earlier];
+  let state = before;
+  for (const given of givenBy(event)) {
+    lastDay.push(given);
+    findings.push(...checkGiven(system, constants, state, given, lastDay));
+    state = withGiven(state, constants, given);
   }
   return findings;
 }
 
-function givenBy(event: Extract<SystemEvent, { kind: "gave" | "topped" }>): Given[] {
+/** What an event gives at once. */
+export function givenBy(event: SystemEvent): Given[] {
   const { minute, place } = event;
   if (event.kind === "gave") return event.doses.map((dose) => ({ minute, ...dose }));
-  return event.solution ? [{ minute, solution: event.solution, litres: event.litres, place }] : [];
+  return event.kind === "topped" && event.solution
+    ? [{ minute, solution: event.solution, litres: event.litres, place }]
+    : [];
 }
 
 /** The state with one of several doses of a line given, so that the next is judged from there. */
@@ -90,7 +95,7 @@ function checkGiven(
     const rise = raised(state, constants, given, name);
     if (rise <= 0) continue;
     const unit = shownIn(facts, name, minute);
-    const shared = { place, system, parameter: name, unit, solution };
+    const shared = { place, system, parameter: name, unit, solution, split: null };
     const dose = limitAt(facts, name, "dose", "hand", minute, null);
     if (dose && rise > dose.value * tolerance) {
       findings.push({
@@ -125,7 +130,29 @@ function checkGiven(
       });
     }
   }
-  return [...findings, ...checkPeak(system, constants, state, given)];
+  return [
+    ...withSplits(findings, constants, state, given, lastDay),
+    ...checkPeak(system, constants, state, given),
+  ];
+}
+
+/** Adds to what is wrong with a dose the parts that it could be given in. */
+function withSplits(
+  findings: readonly DosingFinding[],
+  constants: SystemConstants,
+  state: WaterState,
+  given: Given,
+  lastDay: readonly Given[],
+): DosingFinding[] {
+  // A line of its own can be split; what tops up the water can't.
+  if (findings.length === 0 || given.place.span === null) return [...findings];
+  const others = (name: Dosed) =>
+    lastDay.reduce((sum, other) => sum + (other === given ? 0 : raised(state, constants, other, name)), 0);
+  const dose = { ...given, others };
+  const isOfOneDose = findings.every(({ code }) => code.endsWith("-dose"));
+  const inDay = isOfOneDose ? splitInDay(constants, state, dose) : null;
+  const split: Split | null = inDay ?? splitOverDays(constants, state, dose);
+  return findings.map((finding) => ("split" in finding ? { ...finding, split } : finding));
 }
 
 /** A limit counts as broken from here on: a dose planned to the limit and rounded to a millilitre breaks none. */
@@ -235,6 +262,7 @@ function checkSet(
       parameter: name,
       unit,
       solution: null,
+      split: null,
       value: gain,
       limit: limit.value,
       limitStated: limit.place !== null,

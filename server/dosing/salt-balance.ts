@@ -1,5 +1,6 @@
 /** What dosing leaves behind: salt that nothing takes up. */
 import { minutesPerDay } from "../../grammar/dates.ts";
+import { countUpTo } from "../culture/event-order.ts";
 import type { System } from "../culture/model.ts";
 import { salinityNow } from "./dose-chemistry.ts";
 import { ratesAt } from "./fold.ts";
@@ -38,8 +39,9 @@ export function saltBalance(situation: Situation, system: System, plan: Plan): S
 function exchangedPerDay({ constants, state }: Situation, system: System, salinity: number): number {
   const since = state.minute - daysPerMonth * minutesPerDay;
   let sum = 0;
-  for (const event of system.events) {
-    if (event.kind !== "renewed" || event.minute <= since || event.minute > state.minute) continue;
+  const [first, last] = [since, state.minute].map((minute) => countUpTo(system.events, minute));
+  for (const event of system.events.slice(first, last)) {
+    if (event.kind !== "renewed") continue;
     const volume = volumeAt(constants.facts, event.minute).litres;
     if (volume === null) continue;
     const incoming = constants.waterAt(event.water, event.minute).values.salinity;

@@ -98,14 +98,14 @@ function outsideHold(seen: WaterSeen): DosingFinding[] {
 }
 
 function lastRead({ readings, at }: WaterSeen, parameter: Hold["parameter"]) {
-  const found = readings.findLast(({ event }) => {
-    const value = event.values[parameter];
-    return value && !event.disregarded && !value.impossible && !value.below;
-  });
-  const reading = found?.event.values[parameter];
-  return reading && found && at - found.event.minute <= carriedMinutes
-    ? { value: reading.value, reading }
-    : null;
+  for (let index = readings.length - 1; index >= 0; index -= 1) {
+    const { minute, values, disregarded } = readings[index]!.event;
+    if (at - minute > carriedMinutes) return null;
+    const reading = values[parameter];
+    if (reading && !disregarded && !reading.impossible && !reading.below)
+      return { value: reading.value, reading };
+  }
+  return null;
 }
 
 /** A pH read on one scale, on the scale that it is compared on. */

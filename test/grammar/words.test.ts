@@ -1,4 +1,5 @@
-import { test } from "vitest";
+import { expect, test } from "vitest";
+import { readLine } from "../../grammar/line.ts";
 import { lines } from "./fixture.ts";
 
 test("a misspelt keyword, and the keyword", () => {
@@ -243,4 +244,13 @@ tank main 5 L ☃
 tank main 5 L # ☃ 🐠
 `,
   );
+});
+
+test("words that every object of the host language has are plain words here", () => {
+  for (const word of ["constructor", "toString", "hasOwnProperty"]) {
+    expect(readLine("system", `  tank main 500 L ${word}`).findings).toMatchObject([
+      { code: "syntax/unknown-word", word },
+    ]);
+    expect(readLine("system", `  tank ${word} 500 L`).statement).toMatchObject({ kind: "tank" });
+  }
 });
