@@ -14,17 +14,11 @@ import { parameterTopic } from "../server/report/explain/parameters.ts";
 import { reagentTopic } from "../server/report/explain/reagents.ts";
 import { statementTopic } from "../server/report/explain/statements.ts";
 import { unitTopic } from "../server/report/explain/units.ts";
+import { code, table } from "./markdown-table.ts";
 import { pageName } from "./problem-pages.ts";
 
 export const languagePage = "docs/language.md";
 const template = "scripts/language.md";
-
-const code = (text: string): string => `\`${text}\``;
-const cell = (text: string): string => text.replaceAll("|", "\\|");
-const table = (heads: readonly string[], rows: readonly (readonly string[])[]): string =>
-  [heads, heads.map(() => "---"), ...rows.map((row) => row.map(cell))]
-    .map((cells) => `| ${cells.join(" | ")} |`)
-    .join("\n");
 
 /** What every standing line or event may have, said once on the page. */
 const shared = [/^DATE \[TIME\] /, / \[by WHO\]$/, / \[from DATE \[TIME\]\] \[until DATE \[TIME\]\]$/];

@@ -11,7 +11,28 @@ import { sheet } from "./commands/sheet.ts";
 import { tidy } from "./commands/tidy.ts";
 import { clockNow, textOf } from "./environment.ts";
 
-const commands: readonly Command[] = [check, sheet, tidy, explain];
+/** Loaded when asked for: no other command needs what it brings. */
+const serve: Command = {
+  name: "serve",
+  form: "marl serve --stdio",
+  about: "the language server, for an editor to talk to",
+  options: {
+    stdio: { type: "boolean", about: "over standard input and output" },
+    ipc: { type: "boolean", about: "over the channel of a Node process that started it" },
+  },
+  run: async (words, outlet) => {
+    const [only, ...others] = (["stdio", "ipc"] as const).filter((name) => words.flag(name));
+    if (!only || others.length > 0 || words.paths.length > 0)
+      return refuse(outlet, "serve needs --stdio (or --ipc), and no path");
+    if (only === "ipc" && !process.send)
+      return refuse(outlet, "no Node process started this one with a channel");
+    const { serve: start } = await import("./language-server.ts");
+    start(only);
+    return 0;
+  },
+};
+
+const commands: readonly Command[] = [check, sheet, tidy, explain, serve];
 
 const { stdin, stdout, stderr, env } = process;
 

@@ -13,7 +13,7 @@ import {
   stat,
   writeFile,
 } from "node:fs/promises";
-import { basename, dirname, join, relative, resolve, sep } from "node:path";
+import { basename, dirname, isAbsolute, join, relative, resolve, sep } from "node:path";
 import type { FileChange } from "./farm.ts";
 
 /** A farm on disk: its folder, and for a path asked about, where that lies in it. */
@@ -32,9 +32,9 @@ const isMarl = (name: string): boolean => name.endsWith(".marl");
 
 /**
  * The farm that a path belongs to: the nearest folder upward with a `farm.marl`, else the nearest with `.git`,
- * else the path itself or its folder.
+ * else the innermost of these folders that holds it, else the path itself or its folder.
  */
-export async function findFarm(path: string): Promise<Found<FarmOnDisk>> {
+export async function findFarm(path: string, folders: readonly string[] = []): Promise<Found<FarmOnDisk>> {
   let real: string;
   let isFolder: boolean;
   try {
@@ -45,9 +45,83 @@ export async function findFarm(path: string): Promise<Found<FarmOnDisk>> {
   }
   if (!isFolder && !isMarl(real)) return { ok: false, reason: `${path} is no .marl file` };
   const folder = isFolder ? real : dirname(real);
-  const root = (await nearestHolding(folder, farmPage)) ?? (await nearestHolding(folder, ".git")) ?? folder;
-  return { ok: true, value: { root, asked: relative(root, real).split(sep).join("/") } };
+  const marked = (await nearestHolding(folder, farmPage)) ?? (await nearestHolding(folder, ".git"));
+  const root = marked ?? (await innermostOf(folders, folder)) ?? folder;
+  return { ok: true, value: { root, asked: slashed(relative(root, real)) } };
 }
+
+/**
+ * The farm of a file that may not be there yet, and where in it that is or would be; null where not even its folder
+ * is there.
+ */
+export async function farmOfFile(path: string, folders: readonly string[]): Promise<FarmOnDisk | null> {
+  const real = await realPlace(resolve(path));
+  const found = await findFarm(dirname(real), folders);
+  if (!found.ok) return null;
+  const { root } = found.value;
+  return { root, asked: slashed(relative(root, real)) };
+}
+
+/** The farms below a folder that have a page of their own, and the folder's own first. */
+export async function farmsBelow(folder: string): Promise<readonly string[]> {
+  const found = await findFarm(folder, [folder]);
+  if (!found.ok) return [];
+  const roots = new Set([found.value.root]);
+  await addFarmsBelow(await realPlace(folder), roots);
+  return [...roots];
+}
+
+/** Level by level, so that where there are too many folders the deepest are left out. */
+async function addFarmsBelow(top: string, roots: Set<string>): Promise<void> {
+  const waiting = [top];
+  for (let seen = 0; seen < mostFolders && waiting.length > 0; seen += 1) {
+    const folder = waiting.shift()!;
+    const entries = await readdir(folder, { withFileTypes: true }).catch(() => []);
+    if (entries.some(({ name }) => name === farmPage)) roots.add(folder);
+    for (const entry of entries)
+      if (entry.isDirectory() && isLookedInto(entry.name)) waiting.push(join(folder, entry.name));
+  }
+}
+
+const isLookedInto = (folder: string): boolean => !folder.startsWith(".") && folder !== "node_modules";
+
+/** A farm has not so many; someone who opens a whole disk doesn't want it read. */
+const mostFolders = 2000;
+
+/** What one file of a farm is now; null where it isn't there. */
+export async function readFileOf(root: string, file: string): Promise<FileChange> {
+  const path = join(root, file);
+  const kind = await lstat(path).catch(() => null);
+  if (kind?.isFile() && isMarl(file)) return readText(path);
+  if (!kind?.isSymbolicLink()) return null;
+  const target = await insideOf(root, path);
+  return target === null ? null : { linkTo: target };
+}
+
+/** Where a file that isn't there yet would be: its folder's real place, with its name. */
+export async function realPlace(path: string): Promise<string> {
+  const real = await realpath(path).catch(() => null);
+  if (real !== null || dirname(path) === path) return real ?? path;
+  return join(await realPlace(dirname(path)), basename(path));
+}
+
+async function innermostOf(folders: readonly string[], folder: string): Promise<string | null> {
+  const real = await Promise.all(folders.map(realPlace));
+  const holding = real.filter((each) => isInside(each, folder));
+  return holding.sort((left, right) => right.length - left.length)[0] ?? null;
+}
+
+/** True where a path is a folder or lies in it. */
+export function isInside(folder: string, path: string): boolean {
+  const way = relative(folder, path);
+  return way === "" || !(way === ".." || way.startsWith(`..${sep}`) || isAbsolute(way));
+}
+
+const slashed = (path: string): string => path.split(sep).join("/");
+
+/** Where a path lies in a folder, with `/`; null where it doesn't. */
+export const pathIn = (folder: string, path: string): string | null =>
+  isInside(folder, path) ? slashed(relative(folder, path)) : null;
 
 async function nearestHolding(folder: string, name: string): Promise<string | null> {
   for (let here = folder; ; here = dirname(here)) {
@@ -65,42 +139,51 @@ const exists = (path: string): Promise<boolean> =>
 /**
  * All files of a farm with their texts. Dot-folders and `node_modules` are left out, a folder below with a
  * `farm.marl` of its own is another farm. A link to a place inside the farm is another name for it, one that
- * leads out isn't followed.
+ * leads out isn't followed. Of more than 2000 folders the deepest are left out.
  */
 export async function readFarm(root: string): Promise<ReadonlyMap<string, FileChange>> {
   const files = new Map<string, FileChange>();
-  await readFolder(root, "", files);
+  const waiting = [""];
+  for (let seen = 0; seen < mostFolders && waiting.length > 0; seen += 1)
+    waiting.push(...(await readFolder(root, waiting.shift()!, files)));
   return files;
 }
 
-async function readFolder(root: string, folder: string, files: Map<string, FileChange>): Promise<void> {
+/** Adds the files of one folder; gives the folders in it that are to be looked into. */
+async function readFolder(
+  root: string,
+  folder: string,
+  files: Map<string, FileChange>,
+): Promise<readonly string[]> {
   let names: string[];
   try {
     names = (await readdir(join(root, folder))).sort();
   } catch {
     files.set(folder, { unreadable: "this folder can't be opened" });
-    return;
+    return [];
   }
-  if (folder !== "" && names.includes(farmPage)) return;
+  if (folder !== "" && names.includes(farmPage)) return [];
+  const folders: string[] = [];
   for (const name of names) {
     const path = folder === "" ? name : `${folder}/${name}`;
     const kind = await lstat(join(root, path)).catch(() => null);
     if (kind?.isDirectory()) {
-      if (!name.startsWith(".") && name !== "node_modules") await readFolder(root, path, files);
+      if (isLookedInto(name)) folders.push(path);
     } else if (kind?.isFile() && isMarl(name)) files.set(path, await readText(join(root, path)));
     else if (kind?.isSymbolicLink()) {
       const target = await insideOf(root, join(root, path));
       if (target !== null) files.set(path, { linkTo: target });
     }
   }
+  return folders;
 }
 
 /** Where in the farm a link leads, with `/`; null where it leads out or nowhere. */
 async function insideOf(root: string, link: string): Promise<string | null> {
   const target = await realpath(link).catch(() => null);
   if (target === null) return null;
-  const path = relative(root, target).split(sep).join("/");
-  return path === "" || path === ".." || path.startsWith("../") ? null : path;
+  const path = pathIn(root, target);
+  return path === "" ? null : path;
 }
 
 /**

@@ -55,7 +55,7 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
 }
 
 /** What runs in by itself, and the plan works around. */
-function topOffLine(model: FarmModel, { constants, at }: Assessment): string[] {
+export function topOffLine(model: FarmModel, { constants, at }: Assessment): string[] {
   const flow = topOffFlow(constants, at);
   if (!flow) return [];
   const name = model.solutions.get(flow.solution)?.name ?? nameOf(flow.solution);
@@ -77,18 +77,31 @@ function correctionText({ answer }: Plan, { correctionLPerDay, serves }: Planned
     : "";
 }
 
-function planLines(assessment: Assessment, { answer, problem, sources }: Plan): string[] {
-  const { at, state } = assessment;
-  const corrections = answer.corrections.map(({ parameter, distance, days, limitedBy }) => {
-    const unit = unitIn(assessment, parameter);
-    const until = aboutWhen(at + days * minutesPerDay);
-    const slowed = limitedBy ? `, no faster because of ${reason(limitedBy)}` : "";
-    return `${atStart(parameter)} comes up by ${changeFigure(parameter, distance, unit)} until ${until}${slowed}.`;
-  });
-  const cuts = answer.cuts.map(({ parameter, perDay, days }) => {
-    const unit = unitIn(assessment, parameter);
-    return `${atStart(parameter)} is above its aim: maintenance runs ${changeFigure(parameter, perDay, unit)} a day lower until ${aboutWhen(at + days * minutesPerDay)}.`;
-  });
+/** How a parameter comes up to its aim, or down to it. */
+export function correctionLines(assessment: Assessment, { answer }: Plan, of: ParameterName): string[] {
+  const { at } = assessment;
+  const unit = unitIn(assessment, of);
+  const corrections = answer.corrections
+    .filter(({ parameter }) => parameter === of)
+    .map(({ distance, days, limitedBy }) => {
+      const until = aboutWhen(at + days * minutesPerDay);
+      const slowed = limitedBy ? `, no faster because of ${reason(limitedBy)}` : "";
+      return `${atStart(of)} comes up by ${changeFigure(of, distance, unit)} until ${until}${slowed}.`;
+    });
+  const cuts = answer.cuts
+    .filter(({ parameter }) => parameter === of)
+    .map(
+      ({ perDay, days }) =>
+        `${atStart(of)} is above its aim: maintenance runs ${changeFigure(of, perDay, unit)} a day lower until ${aboutWhen(at + days * minutesPerDay)}.`,
+    );
+  return [...corrections, ...cuts];
+}
+
+function planLines(assessment: Assessment, plan: Plan): string[] {
+  const { state } = assessment;
+  const { answer, problem, sources } = plan;
+  const changing = [...answer.corrections, ...answer.cuts].map(({ parameter }) => parameter);
+  const changes = [...new Set(changing)].flatMap((name) => correctionLines(assessment, plan, name));
   const unknown = problem.parameters.filter(({ needPerDay }) => needPerDay === null).map(({ name }) => name);
   const unknownLines =
     unknown.length > 0
@@ -101,7 +114,7 @@ function planLines(assessment: Assessment, { answer, problem, sources }: Plan): 
       ? [`${source.by} stands stopped in the log: start it, or what is planned for it stays out.`]
       : [],
   );
-  return [...stopped, ...corrections, ...cuts, ...unknownLines];
+  return [...stopped, ...changes, ...unknownLines];
 }
 
 /** Longer, a line wouldn't fit the sheet. */

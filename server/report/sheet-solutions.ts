@@ -1,5 +1,6 @@
 /** The solutions on the sheet: their strengths, and the caution that caustic ones need. */
 import { rounded } from "../checks/figures.ts";
+import { causticPrecautions, sheetComesFirst } from "../checks/hazard.ts";
 import { allOf } from "../checks/words.ts";
 import { factAt } from "../culture/history.ts";
 import type { Solution, Strength } from "../culture/model.ts";
@@ -34,17 +35,17 @@ export function solutionSection(solutions: readonly Solution[], at: number): Sec
 }
 
 /** Bicarbonate brings a mole of carbon for each equivalent; clearly less than that is carbonate or hydroxide. */
-const isCaustic = ({ alkalinityMeq, carbonMmol }: Strength): boolean =>
+export const isCausticByStrength = ({ alkalinityMeq, carbonMmol }: Strength): boolean =>
   alkalinityMeq !== null && alkalinityMeq > 0 && (carbonMmol ?? 0) < 0.9 * alkalinityMeq;
 
 /** The usual precautions where something caustic is handled (common practice; the data sheet comes first). */
 export function cautionLines(solutions: readonly Solution[], at: number): string[] {
   const caustic = solutions.flatMap(({ name, strengths }) => {
     const strength = factAt(strengths, at)?.value;
-    return strength && isCaustic(strength) ? [name] : [];
+    return strength && isCausticByStrength(strength) ? [name] : [];
   });
   if (caustic.length === 0) return [];
   return [
-    `Care: ${allOf(caustic)} can hurt eyes and skin. Goggles and gloves; the dry reagent slowly into cold stirred water, never water onto it, no aluminium or zinc; rinse a splash 15 minutes with water and get medical help; keep away from acid and from the calcium and magnesium parts. The supplier's safety data sheet and local rules come first.`,
+    `Care: ${allOf(caustic)} can hurt eyes and skin. ${causticPrecautions} Keep it from the calcium and magnesium parts. ${sheetComesFirst}`,
   ];
 }

@@ -13,7 +13,7 @@ import { isTracked } from "../dosing/tracked.ts";
 
 import { type Section, section } from "./sheet-model.ts";
 
-const rowsInOrder: readonly ParameterName[] = [
+export const rowsInOrder: readonly ParameterName[] = [
   "alkalinity",
   "calcium",
   "magnesium",
@@ -26,7 +26,7 @@ const rowsInOrder: readonly ParameterName[] = [
   "phosphate",
 ];
 
-interface Latest {
+export interface Latest {
   readonly value: number;
   readonly readAt: number;
   readonly reading: ReadValue | null;
@@ -68,7 +68,8 @@ export function waterSection(assessment: Assessment): Section {
   return section("The water, and when it leaves its hold", { table: { columns, rows }, lines });
 }
 
-function latestOf({ state, readings }: Assessment, name: ParameterName): Latest | null {
+/** The value now: carried forward where that is done, else as last read. */
+export function latestOf({ state, readings }: Assessment, name: ParameterName): Latest | null {
   if (isTracked(name)) return state.carried[name];
   const found = readings.findLast(({ event }) => {
     const value = event.values[name];
@@ -81,13 +82,14 @@ function latestOf({ state, readings }: Assessment, name: ParameterName): Latest 
 const minutesPerHour = 60;
 
 /** How long ago, in the largest unit that says something. */
-function ago(minutes: number): string {
+export function ago(minutes: number): string {
   if (minutes < minutesPerHour) return `${Math.round(minutes)} min ago`;
   if (minutes < 2 * minutesPerDay) return `${Math.round(minutes / minutesPerHour)} h ago`;
   return `${Math.floor(minutes / minutesPerDay)} days ago`;
 }
 
-function leavingText(
+/** When the mean of a day leaves its hold: a day and hour, `stays`, `outside`; empty where nothing can be said. */
+export function leavingText(
   { drifts, at }: Assessment,
   name: ParameterName,
   each: (typeof driftCases)[number],

@@ -6,6 +6,7 @@ import type { Problem } from "../checks/problem.ts";
 import { dayText } from "../checks/words.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import type { Farm } from "../farm.ts";
+import { assumptionLines } from "./assumption-lines.ts";
 import { problemReport } from "./report.ts";
 import { coversSystem, problemsIn, type Scope, solutionsIn } from "./scope.ts";
 import { dosesSection, effectsSection } from "./sheet-doses.ts";
@@ -21,7 +22,10 @@ export function momentText(minute: number): string {
 
 export function sheetOf(farm: Farm, scope: Scope): Sheet {
   const { model } = farm.bound;
-  const problems = problemsIn(scope, farm).filter(({ severity }) => severity !== "hint");
+  // What caustic solutions need heads the sheet; the reagents' own cautions stand with their lines.
+  const problems = problemsIn(scope, farm).filter(
+    ({ severity, code }) => severity !== "hint" && code !== "hazard/caustic",
+  );
   const covered = [...farm.assessments.values()].filter(({ system }) => coversSystem(scope, system));
   const names = new Set(covered.map(({ system }) => system.name));
   const solutions = [...model.solutions.values()].filter(({ ref }) => solutionsIn(scope, farm).has(ref));
@@ -85,11 +89,5 @@ export function sheetProblem(farm: Farm, problem: Problem): SheetProblem {
 /** What was taken for granted, together by what it rests on. */
 function assumptionSection({ assumptions }: Assessment): Section | null {
   if (assumptions.length === 0) return null;
-  const byBasis = new Map<string, string[]>();
-  for (const { what, value, basis } of assumptions)
-    byBasis.set(basis, [...(byBasis.get(basis) ?? []), `${what}: ${value}`]);
-  const lines = [...byBasis].map(
-    ([basis, items]) => `${basis.charAt(0).toUpperCase()}${basis.slice(1)} – ${items.join("; ")}.`,
-  );
-  return section("Taken for granted", { lines });
+  return section("Taken for granted", { lines: assumptionLines(assumptions) });
 }

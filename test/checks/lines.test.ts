@@ -51,7 +51,7 @@ system vat
     void problems(`
 solution ash-part
 ^^^^^^^^^^^^^^^^^ error syntax/unfinished This recipe doesn't say to which volume it is made up. Its strength stays unknown, so no dose of it can be worked out. Add a line: make up to, and the volume.
-  dissolve sodium-carbonate 400 g
+  dissolve sodium-bicarbonate 400 g
 
 solution other-part
 ^^^^^^^^^^^^^^^^^^^ error syntax/unfinished This recipe doesn't say what is in it. Its strength stays unknown, so no dose of it can be worked out. Add a line that starts with dissolve, saturated or supplies.
@@ -66,11 +66,12 @@ system vat
   test("two recipes that lack nothing", () =>
     void problems(`
 solution ash-part
-  dissolve sodium-carbonate 400 g
+  dissolve sodium-bicarbonate 400 g
   make up to 5 L
 
 solution other-part
   saturated calcium-hydroxide
+            ^^^^^^^^^^^^^^^^^ warning hazard/caustic
   keep at 20 degC
 
 system vat

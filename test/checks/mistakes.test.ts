@@ -1,9 +1,9 @@
 /**
  * Every mistake that the language answers: its place, what is said, each fix that is offered and the line after it.
- * The text after a fix is the silent twin: it has no problem left.
+ * The text after a fix is the silent twin: it has no problem left but what is drawn under it.
  */
 import { describe, expect, test } from "vitest";
-import { mended, problems } from "./problems.ts";
+import { isMark, mended, problems } from "./problems.ts";
 import { filesOf, walk } from "./walk.ts";
 
 /** The line, the words underlined, the code, words of the message, and by the title of a fix the line after it. */
@@ -16,6 +16,14 @@ type Mistake = readonly [
   /** A line without the mistake, where no fix is offered. */
   twin?: string,
 ];
+
+/** The line set aside, which is told as such. */
+const setAside = (line: string): Readonly<Record<string, string>> => {
+  const [words = "", comment = ""] = line.split(/(?= #)/);
+  const after = `${words} disregard "say why"`;
+  const mark = `${" ".repeat(after.length - 9)}^^^^^^^^^ info reading/disregarded`;
+  return { "Disregard this line: say why": `${after}${comment}\n${mark}` };
+};
 
 const inSystem = (lines: string): string => `system vat\n  tank main 500 L\n${lines}\n`;
 const inLog = (lines: string): string =>
@@ -37,7 +45,8 @@ function answered(into: (lines: string) => string, [line, underlined, code, mess
   problems(into(`${line}\n${mark}`));
   expect(offers(into(line), code)).toEqual(Object.keys(fixes));
   for (const [title, after] of Object.entries(fixes)) {
-    expect(mended(into(line), code, title), title).toBe(into(after));
+    const unmarked = after.split("\n").filter((each) => !isMark(each));
+    expect(mended(into(line), code, title), title).toBe(into(unmarked.join("\n")));
     problems(into(after));
   }
   if (twin !== undefined) problems(into(twin));
@@ -276,7 +285,10 @@ describe("in a log", () => {
           "reading/impossible",
           "Is this 7.9?",
         ] as const),
-        { "Write 7.9": "  2026-11-30 08:00 read alkalinity 7.9 dKH" },
+        {
+          "Write 7.9": "  2026-11-30 08:00 read alkalinity 7.9 dKH",
+          ...setAside("  2026-11-30 08:00 read alkalinity 79 dKH"),
+        },
       ],
       [
         ...([
@@ -285,7 +297,10 @@ describe("in a log", () => {
           "reading/impossible",
           "Is this 425?",
         ] as const),
-        { "Write 425": "  2026-11-30 08:00 read calcium 425 mg/L ± 80" },
+        {
+          "Write 425": "  2026-11-30 08:00 read calcium 425 mg/L ± 80",
+          ...setAside("  2026-11-30 08:00 read calcium 4250 mg/L ± 80"),
+        },
       ],
       [
         ...([
@@ -294,7 +309,7 @@ describe("in a log", () => {
           "reading/unusual",
           "42 mg/L is unusual for calcium; usual is 300 to 600 mg/L.",
         ] as const),
-        {},
+        setAside("  2026-11-30 08:00 read calcium 42 mg/L"),
         "  2026-11-30 08:00 read calcium 420 mg/L",
       ],
       [
@@ -304,7 +319,7 @@ describe("in a log", () => {
           "reading/impossible",
           "possible is -2 to 45 °C",
         ] as const),
-        {},
+        setAside("  2026-11-30 08:00 read temperature 77 degC"),
         "  2026-11-30 08:00 read temperature 77 degF",
       ],
       [

@@ -56,6 +56,7 @@ const promised: Readonly<Record<string, string | null>> = {
   "plan/no-source": "warning",
   "plan/passive-breach": "warning",
   "plan/every-other-day": "info",
+  "hazard/caustic": null,
   "quiet/unused": "hint",
   "file/unreadable": "error",
   "file/more": "info",

@@ -12,8 +12,7 @@ const vat = `system vat "Test vat"
   by-hand ash times 12
 
 solution ash
-  dissolve sodium-carbonate 84.79 g
-  make up to 1 L
+  supplies alkalinity 1.6 meq/mL as carbonate
 
 log vat
   2026-12-01 08:00 read alkalinity 7.9 dKH, salinity 35, temperature 25 degC, pH 8.1

@@ -16,8 +16,9 @@ const storeys: readonly (readonly string[])[] = [
   ["server/farm.ts"],
   ["server/report"],
   ["server/editor", "server/environment.ts"],
-  ["server/commands"],
-  ["server/cli.ts", "server/language-server.ts"],
+  ["server/commands", "server/protocol"],
+  ["server/language-server.ts"],
+  ["server/cli.ts"],
 ];
 
 const heightOf = (file: string): number =>
@@ -50,7 +51,7 @@ function arrowsOf(file: string, text: string): Arrow[] {
 }
 
 const isUpward = ({ from, to }: Arrow): boolean => {
-  if (to === "package.json") return roomOf(from) !== "server/cli.ts";
+  if (to === "package.json") return !["server/cli.ts", "server/language-server.ts"].includes(roomOf(from));
   if (heightOf(to) < 0) return true;
   return heightOf(to) > heightOf(from) || (heightOf(to) === heightOf(from) && roomOf(to) !== roomOf(from));
 };

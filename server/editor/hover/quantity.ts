@@ -1,0 +1,88 @@
+/** A quantity: the same in the other units of its kind. */
+import type { QuantityText, Span, Statement } from "../../../grammar/syntax.ts";
+import { otherUnits } from "./other-units.ts";
+import { digits } from "./parts.ts";
+import type { Tells } from "./spot.ts";
+
+/** A quantity with the part of its statement that says what it is of. */
+interface Placed {
+  readonly quantity: QuantityText;
+  readonly parent: Readonly<Record<string, unknown>>;
+}
+
+/** The quantity whose number, unit or deviation a column is in. */
+function quantityAt(statement: Statement, column: number): Placed | null {
+  const walk = (value: unknown, parent: Placed["parent"]): Placed | null => {
+    if (typeof value !== "object" || value === null) return null;
+    const part = value as Placed["parent"];
+    if ("borrowedUnit" in part) {
+      const quantity = value as QuantityText;
+      return ownSpans(quantity).some(({ start, end }) => start <= column && column <= end)
+        ? { quantity, parent }
+        : null;
+    }
+    for (const each of Object.values(part)) {
+      const found = walk(each, Array.isArray(value) ? parent : part);
+      if (found) return found;
+    }
+    return null;
+  };
+  return walk(statement, statement as unknown as Placed["parent"]);
+}
+
+function ownSpans({ number, unit, borrowedUnit, asCaCO3, uncertainty }: QuantityText): Span[] {
+  return [
+    number,
+    ...(unit && !borrowedUnit ? [unit] : []),
+    ...(asCaCO3 && !borrowedUnit ? [asCaCO3] : []),
+    ...(uncertainty ? [uncertainty] : []),
+  ];
+}
+
+export const quantityTold: Tells = (spot) => {
+  const column = spot.under.word?.start ?? spot.under.cursor.column;
+  const found = quantityAt(spot.statement, column);
+  if (!found) return null;
+  const others = otherUnits(spot, found.quantity, found.parent);
+  if (!others || others.texts.length === 0) return null;
+  return {
+    answer: `${writtenOf(found.quantity)} = ${others.texts.join(" = ")}.`,
+    blocks: [deviationLines(found.quantity)],
+    assumptions: others.assumptions,
+    sources: others.sources,
+  };
+};
+
+/** A line that states one value: in other units. */
+export const valueTold: Tells = (spot) => {
+  const { statement } = spot;
+  if (statement.kind !== "value" && statement.kind !== "scatter" && statement.kind !== "tolerance")
+    return null;
+  const others = otherUnits(spot, statement.value, statement);
+  if (!others || others.texts.length === 0) return null;
+  const half = statement.kind === "tolerance" ? ["Taken as two standard deviations."] : [];
+  return {
+    answer: `${statement.parameter.text} ${writtenOf(statement.value)} = ${others.texts.join(" = ")}.`,
+    blocks: [half],
+    assumptions: others.assumptions,
+    sources: others.sources,
+  };
+};
+
+const writtenOf = ({ number, unit, asCaCO3 }: QuantityText): string =>
+  `${number.text}${unit ? ` ${unit.text}` : ""}${asCaCO3 ? " as CaCO3" : ""}`;
+
+/** How large a deviation is beside its number. */
+function deviationLines({ number, unit, uncertainty }: QuantityText): string[] {
+  if (!uncertainty) return [];
+  const size = Number(uncertainty.number.text);
+  const value = Number(number.text);
+  const isShare = uncertainty.unit?.text === "%";
+  const own = uncertainty.unit?.text ?? unit?.text ?? "";
+  const written = `± ${uncertainty.number.text}${own ? ` ${own}` : ""} is one standard deviation`;
+  if (isShare) return [`${written}: ${digits((value * size) / 100, 2)}${unit ? ` ${unit.text}` : ""}.`];
+  const sameUnit = uncertainty.unit === null || uncertainty.unit.text === unit?.text;
+  return [
+    value === 0 || !sameUnit ? `${written}.` : `${written}, ${digits((100 * size) / Math.abs(value), 2)} %.`,
+  ];
+}
