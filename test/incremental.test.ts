@@ -291,3 +291,24 @@ test("a walk that was left half way changes nothing for the next", () => {
     expect(isDeepStrictEqual(answersOf(advance(before, changes, now)), fresh)).toBe(true);
   }
 });
+
+test("what was given within the day reaches over a reading that makes the water the same, wherever it stands", () => {
+  const at = moment("2026-12-01T08:00");
+  const now = { at, clock: at };
+  const farmWith = (place: number, dose: number) => {
+    const events = Array.from({ length: 90 }, (_, number) => {
+      const when = new Date((at - 60 * (100 - number)) * 60_000).toISOString().replace("T", " ").slice(0, 16);
+      if (number === place) return `  ${when} gave part ${dose} mL\n`;
+      if (number === place + 2) return `  ${when} gave part 100 mL\n`;
+      return `  ${when} read alkalinity 8 dKH\n`;
+    });
+    const text = `system vat\n  tank main 1000 L\n  uptake alkalinity 0 dKH/day\n  limit alkalinity rise 0.5 dKH/day\n  limit alkalinity dose 3 dKH\n  by-hand part\n\nsolution part\n  supplies alkalinity 1 meq/mL as bicarbonate\n\nlog vat\n${events.join("")}`;
+    return new Map([["farm.marl", { text }]]);
+  };
+  for (let place = 0; place < 80; place += 1) {
+    const farm = advance(advance(null, farmWith(place, 10), now), farmWith(place, 90), now);
+    const fresh = advance(null, farmWith(place, 90), now);
+    expect(farm.problems, `at ${place}`).toEqual(fresh.problems);
+    expect(fresh.problems.some(({ code }) => code === "overdose/alkalinity-rise")).toBe(true);
+  }
+});
