@@ -27,7 +27,8 @@ export type Found<T> =
   | { readonly ok: true; readonly value: T }
   | { readonly ok: false; readonly reason: string };
 
-const farmPage = "farm.marl";
+/** The page that makes a folder a farm. */
+export const farmPage = "farm.marl";
 const isMarl = (name: string): boolean => name.endsWith(".marl");
 
 /**
@@ -130,7 +131,8 @@ async function nearestHolding(folder: string, name: string): Promise<string | nu
   }
 }
 
-const exists = (path: string): Promise<boolean> =>
+/** True where something is at a path. */
+export const exists = (path: string): Promise<boolean> =>
   access(path).then(
     () => true,
     () => false,

@@ -16,17 +16,17 @@ import {
   ProposedFeatures,
   StreamMessageReader,
   StreamMessageWriter,
-  type WorkDoneProgressServerReporter,
+  WatchKind,
 } from "vscode-languageserver/node";
 import { readMoment } from "../grammar/dates.ts";
 import manifest from "../package.json" with { type: "json" };
 import { clockNow } from "./environment.ts";
-import type { Progress } from "./farm.ts";
-import { type Client, clientOf } from "./protocol/client.ts";
-import { convertFor } from "./protocol/convert.ts";
 import { capabilitiesFor } from "./protocol/capabilities.ts";
+import { clientOf } from "./protocol/client.ts";
+import { convertFor } from "./protocol/convert.ts";
 import { features } from "./protocol/features.ts";
 import { inOrder } from "./protocol/in-order.ts";
+import { progressFor } from "./protocol/progress.ts";
 import { type Publisher, publisherFor } from "./protocol/publish.ts";
 import { stateChanged } from "./protocol/requests.ts";
 import type { Session } from "./protocol/session.ts";
@@ -36,6 +36,16 @@ import { makeWorkspace } from "./protocol/workspace.ts";
 
 /** Time alone makes problems: after so long everything is looked at again, ms. */
 const lookAgainAfter = 10 * 60_000;
+/** So long the farms wait for a client's settings, ms. */
+const longestWait = 2000;
+
+const after = (time: number): Promise<void> =>
+  new Promise((resolve) => {
+    setTimeout(resolve, time).unref();
+  });
+
+const wordsOf = (error: unknown): string =>
+  error instanceof Error ? (error.stack ?? error.message) : String(error);
 
 /** Serves one client until it says `exit` or goes away. */
 export function serve(by: "stdio" | "ipc"): void {
@@ -43,6 +53,8 @@ export function serve(by: "stdio" | "ipc"): void {
     by === "ipc"
       ? [new IPCMessageReader(process), new IPCMessageWriter(process)]
       : [new StreamMessageReader(process.stdin), new StreamMessageWriter(process.stdout)];
+  // What one message brought about must not take the others with it.
+  process.on("unhandledRejection", (error) => process.stderr.write(`marl: ${wordsOf(error)}\n`));
   const order = inOrder();
   // A message that can't be read has no number to answer it by; the rest is unharmed.
   reader.onError(() => void writer.write(unreadable));
@@ -69,15 +81,17 @@ function initialize(connection: Connection, params: InitializeParams): Initializ
   const now = (): number => (fixed?.known ? fixed.moment.minute : clockNow());
   let settings = settingsOf(options.settings);
   let publisher: Publisher | null = null;
-  const progress = progressFor(connection, client);
+  const failed = (error: unknown): void => connection.console.error(wordsOf(error));
+  const send = (sending: Promise<unknown>): void => void sending.catch(failed);
   const workspace = makeWorkspace(client.encoding, {
     moment: () => ({ at: now(), clock: now() }),
-    walked: (look, _before, changed) => {
+    walked: (look, changed) => {
       publisher?.walked(look, changed);
       // An extension that shows more than the protocol knows of asks again.
-      if (client.commands.size > 0) void connection.sendNotification(stateChanged);
+      if (client.commands.size > 0) send(connection.sendNotification(stateChanged));
     },
-    progress,
+    progress: progressFor(connection, client, failed),
+    failed,
   });
   const session: Session = {
     connection,
@@ -86,6 +100,7 @@ function initialize(connection: Connection, params: InitializeParams): Initializ
     workspace,
     settings: () => settings,
     now,
+    send,
     pageOf,
   };
   publisher = publisherFor(session);
@@ -93,27 +108,31 @@ function initialize(connection: Connection, params: InitializeParams): Initializ
 
   const refreshViews = (): void => {
     const { refreshes } = client;
-    if (refreshes.problems && client.pullsProblems) void connection.languages.diagnostics.refresh();
-    if (refreshes.hints) void connection.languages.inlayHint.refresh();
-    if (refreshes.lenses) void connection.sendRequest("workspace/codeLens/refresh");
+    if (refreshes.problems && client.pullsProblems) send(connection.languages.diagnostics.refresh());
+    if (refreshes.hints) send(connection.languages.inlayHint.refresh());
+    if (refreshes.lenses) send(connection.sendRequest("workspace/codeLens/refresh"));
   };
   const lookAgain = async (): Promise<void> => {
     await workspace.lookAgain();
     refreshViews();
   };
   const takeSettings = async (given: unknown): Promise<void> => {
-    settings = settingsOf(client.configuration ? await connection.workspace.getConfiguration("marl") : given);
+    const asked = client.configuration ? connection.workspace.getConfiguration("marl") : given;
+    settings = settingsOf(await asked);
     await lookAgain();
   };
   let folders = foldersOf(params);
 
   connection.onInitialized(() => {
     if (client.watchesFiles)
-      void connection.client.register(DidChangeWatchedFilesNotification.type, {
-        watchers: [{ globPattern: "**/*.marl" }],
-      });
+      send(
+        connection.client.register(DidChangeWatchedFilesNotification.type, {
+          // Of a folder that goes only its own path may be told.
+          watchers: [{ globPattern: "**/*.marl" }, { globPattern: "**/*", kind: WatchKind.Delete }],
+        }),
+      );
     if (client.configurationRegistration)
-      void connection.client.register(DidChangeConfigurationNotification.type, { section: "marl" });
+      send(connection.client.register(DidChangeConfigurationNotification.type, { section: "marl" }));
     if (client.folders)
       connection.workspace.onDidChangeWorkspaceFolders(({ added, removed }) => {
         const gone = new Set(removed.map(({ uri }) => pathOf(uri)));
@@ -123,27 +142,28 @@ function initialize(connection: Connection, params: InitializeParams): Initializ
         ];
         void workspace.setFolders(folders, Promise.resolve());
       });
-    const settled = client.configuration ? takeSettings(null) : Promise.resolve();
-    void workspace.setFolders(folders, settled);
+    const settled = client.configuration ? takeSettings(null).catch(failed) : Promise.resolve();
+    // A client that never answers must not keep its own farms waiting.
+    void workspace.setFolders(folders, Promise.race([settled, after(longestWait)]));
   });
   connection.onDidChangeConfiguration(({ settings: given }) => {
-    void takeSettings((given as { marl?: unknown } | null)?.marl);
+    send(takeSettings((given as { marl?: unknown } | null)?.marl));
   });
   connection.onDidOpenTextDocument(({ textDocument: { uri, version, text } }) => {
     void workspace.open(uri, version, text);
-    if (!client.watchesFiles) void workspace.refresh(uri);
+    if (!client.watchesFiles) void workspace.refresh();
   });
   connection.onDidChangeTextDocument(({ textDocument: { uri, version }, contentChanges }) => {
     void workspace.change(uri, version, contentChanges);
   });
-  connection.onDidSaveTextDocument(({ textDocument: { uri } }) => {
-    if (!client.watchesFiles) void workspace.refresh(uri);
+  connection.onDidSaveTextDocument(() => {
+    if (!client.watchesFiles) void workspace.refresh();
   });
   connection.onDidCloseTextDocument(({ textDocument: { uri } }) => void workspace.close(uri));
   connection.onDidChangeWatchedFiles(({ changes }) => {
     void workspace.touched(changes.flatMap(({ uri }) => pathOf(uri) ?? []));
   });
-  const timer = setInterval(() => void lookAgain(), lookAgainAfter);
+  const timer = setInterval(() => send(lookAgain()), lookAgainAfter);
   timer.unref();
   connection.onShutdown(() => clearInterval(timer));
 
@@ -162,27 +182,4 @@ const shipped = fileURLToPath(new URL("..", import.meta.url));
 function pageOf(code: string): string | null {
   const path = join(shipped, "docs", "problems", `${code.replace("/", "-")}.md`);
   return existsSync(path) ? pathToFileURL(path).href : null;
-}
-
-/** Shows how far a walk is, to a client that draws progress, once the walk has taken long enough to be told of. */
-function progressFor(connection: Connection, client: Client) {
-  const shown = new Map<string, Promise<WorkDoneProgressServerReporter>>();
-  return (key: string, progress: Progress | null): void => {
-    if (!client.progress) return;
-    const reporter = shown.get(key);
-    if (progress === null) {
-      shown.delete(key);
-      void reporter?.then((each) => each.done());
-      return;
-    }
-    const { done, of, system } = progress;
-    const share = Math.round((100 * done) / Math.max(of, 1));
-    if (reporter) {
-      void reporter.then((each) => each.report(share, system));
-      return;
-    }
-    const made = connection.window.createWorkDoneProgress();
-    shown.set(key, made);
-    void made.then((each) => each.begin("Marl", share, system));
-  };
 }

@@ -54,11 +54,12 @@ export interface Client {
 
 /** Reads what a client declared; whatever it leaves out it can't do. */
 export function clientOf({ capabilities, initializationOptions }: InitializeParams): Client {
-  const { textDocument: text, workspace, window, general } = capabilities;
+  const { textDocument: text, workspace, window, general } = capabilities ?? {};
   const offered: readonly string[] = general?.positionEncodings ?? [];
   const listed = (initializationOptions as { commands?: unknown } | null | undefined)?.commands;
   const commands = Array.isArray(listed) ? listed.filter((name) => typeof name === "string") : [];
-  const isMarkdown = (formats: readonly string[] | undefined) => formats?.includes("markdown") ?? false;
+  // The first that it names is the one that it likes best.
+  const isMarkdown = (formats: readonly string[] | undefined) => formats?.[0] === "markdown";
   return {
     encoding: encodings.find((encoding) => offered.includes(encoding)) ?? "utf-16",
     pullsProblems: text?.diagnostic !== undefined,

@@ -14,8 +14,10 @@ export interface FarmWalk {
 
 export interface WalkListener {
   readonly moment: () => Moment;
-  /** After each walk that wasn't overtaken by another change. */
-  readonly walked: (farm: Farm, before: Farm | null, changed: ReadonlySet<string>) => void;
+  /** After each walk that wasn't overtaken by another change, with the files that changed since the last. */
+  readonly walked: (farm: Farm, changed: ReadonlySet<string>) => void;
+  /** A walk that didn't come to its end; the next change tries again. */
+  readonly failed: (error: unknown) => void;
   readonly progress: (progress: Progress | null) => void;
 }
 
@@ -25,15 +27,14 @@ export const longestSlice = 8;
 /** Lets everything that waits have its turn. */
 export const turn = (): Promise<void> => new Promise((resolve) => setImmediate(resolve));
 
-export function walkFarm({ moment, walked, progress }: WalkListener): FarmWalk {
+export function walkFarm({ moment, walked, failed, progress }: WalkListener): FarmWalk {
   let farm: Farm | null = null;
   let pending = new Map<string, FileChange>();
   let arrivals = 0;
   let running: Promise<Farm> | null = null;
 
-  /** One walk over all that has come in; null where something else came in on the way. */
-  async function walkOnce(): Promise<Farm | null> {
-    const seen = arrivals;
+  /** One walk over all that has come in so far. What comes in on the way is left for the next. */
+  async function walkOnce(): Promise<Farm> {
     const changes = pending;
     const steps = advanceBySystem(farm, changes, moment());
     let began = performance.now();
@@ -46,30 +47,29 @@ export function walkFarm({ moment, walked, progress }: WalkListener): FarmWalk {
       if (performance.now() - began < longestSlice) continue;
       progress(step.value);
       await turn();
-      if (arrivals !== seen) return null;
       began = performance.now();
     }
   }
 
+  /** Walks until nothing has come in meanwhile: a walk that was overtaken is the start of the next, and not told of. */
   async function run(): Promise<Farm> {
     await turn();
+    const changed = new Set<string>();
     for (;;) {
       const seen = arrivals;
-      const changed = new Set(pending.keys());
-      const next = await walkOnce();
-      if (!next) continue;
-      const before = farm;
-      farm = next;
+      for (const file of pending.keys()) changed.add(file);
+      farm = await walkOnce();
       if (arrivals !== seen) continue;
-      running = null;
-      progress(null);
-      walked(next, before, changed);
-      return next;
+      walked(farm, changed);
+      return farm;
     }
   }
 
   const start = (): Promise<Farm> => {
-    running ??= run();
+    running ??= run().finally(() => {
+      running = null;
+      progress(null);
+    });
     return running;
   };
   return {
@@ -77,11 +77,11 @@ export function walkFarm({ moment, walked, progress }: WalkListener): FarmWalk {
       // A map of its own: a walk on its way keeps the one that it began with.
       pending = new Map([...pending, ...changes]);
       arrivals += 1;
-      void start();
+      start().catch(failed);
     },
     lookAgain: () => {
       arrivals += 1;
-      void start();
+      start().catch(failed);
     },
     settled: () => running ?? (farm ? Promise.resolve(farm) : start()),
     last: () => farm,

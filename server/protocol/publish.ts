@@ -5,7 +5,7 @@ import type {
   WorkspaceDocumentDiagnosticReport,
 } from "vscode-languageserver/node";
 import { diagnosticsOf, problemsByFile } from "./problems.ts";
-import { about, type Feature, type Session, stopIfCancelled } from "./session.ts";
+import { about, type Feature, type Session, stopIfCancelled, unlessCancelled } from "./session.ts";
 import type { Look } from "./workspace.ts";
 
 /** What was last told of a file, to know whether it changed. */
@@ -45,7 +45,7 @@ export function publisherFor(session: Session): Publisher {
       const version = look.versionOf(file);
       if (!isNew && !(changed.has(file) && version !== null)) continue;
       const params: PublishDiagnosticsParams = { uri, diagnostics: items };
-      void session.connection.sendDiagnostics(version === null ? params : { ...params, version });
+      session.send(session.connection.sendDiagnostics(version === null ? params : { ...params, version }));
     }
   }
 
@@ -59,7 +59,7 @@ export function publisherFor(session: Session): Publisher {
     waiting = [];
     const others = files.filter((file) => !(changed.has(file) && look.isOpen(file)));
     if (others.length > 0 && session.client.refreshes.problems)
-      void session.connection.languages.diagnostics.refresh();
+      session.send(session.connection.languages.diagnostics.refresh());
   }
 
   if (session.client.pullsProblems) listenToPulls();
@@ -80,8 +80,7 @@ export function publisherFor(session: Session): Publisher {
     connection.languages.diagnostics.onWorkspace(async ({ previousResultIds }, token) => {
       const known = new Map(previousResultIds.map(({ uri, value }) => [uri, value]));
       for (;;) {
-        const looks = await workspace.looks();
-        stopIfCancelled(token);
+        const looks = await unlessCancelled(token, workspace.looks());
         const items: WorkspaceDocumentDiagnosticReport[] = looks.flatMap((look) =>
           [...problemsByFile(look.farm)].map(([file, problems]): WorkspaceDocumentDiagnosticReport => {
             const { uri, items: list, id } = report(look, file, problems);

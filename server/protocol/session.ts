@@ -20,6 +20,8 @@ export interface Session {
   readonly settings: () => Settings;
   /** The wall clock's minute, or the moment that the client fixed. */
   readonly now: () => number;
+  /** Sends something whose answer nobody waits for: what goes wrong with it is told to the client's log. */
+  readonly send: (sending: Promise<unknown>) => void;
   /** The address of a problem's page as it is shipped; null where it isn't there. */
   readonly pageOf: (code: string) => string | null;
 }
@@ -39,6 +41,23 @@ export function stopIfCancelled(token: CancellationToken): void {
   if (token.isCancellationRequested) throw new ResponseError(LSPErrorCodes.RequestCancelled, "Cancelled.");
 }
 
+/** Waits for something, but no longer than the client does. */
+export async function unlessCancelled<T>(token: CancellationToken, work: Promise<T>): Promise<T> {
+  stopIfCancelled(token);
+  let listening: { readonly dispose: () => void } | null = null;
+  const cancelled = new Promise<"cancelled">((resolve) => {
+    listening = token.onCancellationRequested(() => resolve("cancelled"));
+  });
+  try {
+    const first = await Promise.race([work.then((value) => ({ value })), cancelled]);
+    if (first !== "cancelled") return first.value;
+  } finally {
+    (listening as { readonly dispose: () => void } | null)?.dispose();
+  }
+  stopIfCancelled(token);
+  return work;
+}
+
 /** Asks about one document: waits for its farm, and stops where the client has lost interest. */
 export async function about<T>(
   { workspace }: Session,
@@ -48,8 +67,6 @@ export async function about<T>(
 ): Promise<T | null> {
   // A cancel that came right behind its request is read first.
   await turn();
-  stopIfCancelled(token);
-  const look = await workspace.look(uri);
-  stopIfCancelled(token);
+  const look = await unlessCancelled(token, workspace.look(uri));
   return look?.farm.documents.has(look.file) ? answer(look) : null;
 }

@@ -5,6 +5,7 @@ import { onTestFinished } from "vitest";
 import {
   CancellationTokenSource,
   createMessageConnection,
+  ResponseError,
   StreamMessageReader,
   StreamMessageWriter,
 } from "vscode-jsonrpc/node";
@@ -36,6 +37,8 @@ export interface ClientOptions {
   readonly folder: string | null;
   readonly at?: string;
   readonly initializationOptions?: Readonly<Record<string, unknown>>;
+  /** Answers every request of the server with an error. */
+  readonly refuses?: boolean;
   /** What it answers to `workspace/configuration`. */
   readonly settings?: unknown;
 }
@@ -88,6 +91,7 @@ export async function startClient(options: ClientOptions) {
   connection.onRequest((method, params) => {
     requests.push({ method, params });
     hear();
+    if (options.refuses) throw new ResponseError(-32601, "No such thing here.");
     if (method !== "workspace/configuration") return null;
     const { items } = params as { readonly items: readonly unknown[] };
     return items.map(() => options.settings ?? null);

@@ -4,6 +4,7 @@ import { folder } from "../commands/marl.ts";
 import { poor, rich, startBare, startClient } from "./client.ts";
 
 const farm = { "farm.marl": "system vat\n  tank main 500 L\n  hold alkalinty 7.5 to 8.5 dKH\n" };
+const pushes = { ...rich, textDocument: { ...rich.textDocument, diagnostic: undefined } };
 const hoverAt = (uri: string) => ({ textDocument: { uri }, position: { line: 1, character: 3 } });
 const codeOf = (request: Promise<unknown>): Promise<unknown> =>
   request.then(
@@ -157,4 +158,34 @@ test("binary, unreadable and huge files, CRLF and a byte order mark", async () =
   expect(last?.range.start).toEqual({ line: huge.split("\n").length - 2, character: 19 });
   expect(diagnostics.length).toBeLessThanOrEqual(201);
   expect(diagnostics[0]).toMatchObject({ code: "file/more", range: { start: { line: 0, character: 0 } } });
+});
+
+test("a client that refuses all that it is asked loses nothing by it", async () => {
+  const root = folder(farm);
+  const client = await startClient({ capabilities: rich, folder: root, refuses: true });
+  await client.open("farm.marl", farm["farm.marl"]);
+  await client.notify("workspace/didChangeConfiguration", { settings: null });
+  await client.until(() => client.requests.find(({ method }) => method === "workspace/configuration"));
+  const uri = client.uriOf("farm.marl");
+  const answer = await client.request<{ readonly items: readonly unknown[] }>("textDocument/diagnostic", {
+    textDocument: { uri },
+  });
+  expect(answer.items).toHaveLength(1);
+  expect(await client.request("workspace/symbol", { query: "vat" })).toHaveLength(1);
+});
+
+test("a request that is taken back during a long walk is answered before the walk ends", async () => {
+  const client = await startClient({ capabilities: pushes, folder: folder({}) });
+  await client.open("farm.marl", large(400));
+  const uri = client.uriOf("farm.marl");
+  const cancel = client.cancellable("textDocument/hover", hoverAt(uri));
+  const symbols = client.cancellable("workspace/symbol", { query: "vat" });
+  // Something else is heard first, so that both wait for the walk by now.
+  await codeOf(client.request("marl/nonesuch", {}));
+  cancel.take();
+  symbols.take();
+  expect(await codeOf(cancel.answer)).toBe(-32800);
+  expect(await codeOf(symbols.answer)).toBe(-32800);
+  expect(client.published.filter((each) => each.uri === uri)).toEqual([]);
+  await client.problemsOf("farm.marl", 1);
 });

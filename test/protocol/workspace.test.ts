@@ -215,3 +215,84 @@ test("a long first walk shows how far it is to a client that draws progress, and
   });
   expect(told[0]).toBe("begin");
 });
+
+test("a farm.marl that appears in a folder makes a farm of it, and one that goes gives it back", async () => {
+  const root = folder({
+    "farm.marl": page,
+    "parts.marl": parts,
+    "east/log.marl": 'use "../farm.marl"\n\nlog vat\n',
+  });
+  for (const capabilities of [pushes, poor]) {
+    const client = await startClient({ capabilities, folder: root });
+    await client.open("east/log.marl", 'use "../farm.marl"\n\nlog vat\n');
+    await untilCodes(client, "east/log.marl", []);
+    const changed = async (type: number) => {
+      if (capabilities === poor)
+        await client.notify("textDocument/didSave", { textDocument: { uri: client.uriOf("east/log.marl") } });
+      else
+        await client.notify("workspace/didChangeWatchedFiles", {
+          changes: [{ uri: client.uriOf("east/farm.marl"), type }],
+        });
+    };
+    writeFileSync(join(root, "east/farm.marl"), "# The east hall.\n");
+    await changed(1);
+    await untilCodes(client, "east/log.marl", ["use/outside", "name/undeclared"]);
+    rmSync(join(root, "east/farm.marl"));
+    await changed(3);
+    await untilCodes(client, "east/log.marl", []);
+  }
+});
+
+test("a folder that is deleted takes its files' problems with it", async () => {
+  const root = folder({ "farm.marl": "", "east/vat.marl": "system vat\n  tank main 500 kg\n" });
+  const client = await startClient({ capabilities: pushes, folder: root });
+  await untilCodes(client, "east/vat.marl", ["system/no-volume", "unit/dimension"]);
+  rmSync(join(root, "east"), { recursive: true });
+  await client.notify("workspace/didChangeWatchedFiles", {
+    changes: [{ uri: client.uriOf("east"), type: 3 }],
+  });
+  await untilCodes(client, "east/vat.marl", []);
+});
+
+test("documents without a farm are forgotten when they are closed, and no late question brings one back", async () => {
+  const outside = folder({ "vat.marl": "system vat\n  tank main 500 kg\n" });
+  const client = await startClient({
+    capabilities: poor,
+    folder: folder({ "farm.marl": page, "parts.marl": parts }),
+  });
+  const uris = ["untitled:Untitled-1", pathToFileURL(join(outside, "vat.marl")).href];
+  const last = (uri: string) => client.published.findLast((each) => each.uri === uri)?.diagnostics.length;
+  for (const uri of uris) {
+    const text = "system vat\n  tank main 500 kg\n";
+    await client.notify("textDocument/didOpen", {
+      textDocument: { uri, languageId: "marl", version: 1, text },
+    });
+    await client.until(() => (last(uri) === 2 ? true : undefined));
+    await client.notify("textDocument/didClose", { textDocument: { uri } });
+    await client.until(() => (last(uri) === 0 ? true : undefined));
+    const before = client.published.length;
+    expect(
+      await client.request("textDocument/hover", {
+        textDocument: { uri },
+        position: { line: 0, character: 1 },
+      }),
+    ).toBeNull();
+    expect(client.published.length).toBe(before);
+  }
+  expect(client.published.every(({ uri }) => uris.includes(uri) || !uri.includes("Untitled"))).toBe(true);
+});
+
+test("a document that is closed and opened again at once is open", async () => {
+  const client = await startClient({
+    capabilities: poor,
+    folder: folder({ "farm.marl": page, "parts.marl": parts }),
+  });
+  await client.open("farm.marl", page);
+  await client.notify("textDocument/didClose", { textDocument: { uri: client.uriOf("farm.marl") } });
+  await client.open("farm.marl", "system vat\n", 2);
+  await client.change("farm.marl", 3, [{ text: "system vat\n  tank main 500 kg\n" }]);
+  expect((await client.problemsOf("farm.marl", 3)).diagnostics.map(({ code }) => code)).toEqual([
+    "system/no-volume",
+    "unit/dimension",
+  ]);
+});

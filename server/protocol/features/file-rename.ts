@@ -9,7 +9,7 @@ import { mendedUses, movesOf } from "../../editor/file-rename.ts";
 import { pathIn } from "../../environment.ts";
 import type { Convert } from "../convert.ts";
 import { turn } from "../farm-walk.ts";
-import { type Feature, stopIfCancelled } from "../session.ts";
+import { type Feature, unlessCancelled } from "../session.ts";
 import { pathOf } from "../uris.ts";
 import type { Look } from "../workspace.ts";
 
@@ -70,9 +70,7 @@ export const fileRenameFeature: Feature = {
     if (client.fileRenames.will)
       connection.workspace.onWillRenameFiles(async ({ files }, token) => {
         await turn();
-        stopIfCancelled(token);
-        const looks = await workspace.looks();
-        stopIfCancelled(token);
+        const looks = await unlessCancelled(token, workspace.looks());
         return joined(convert, looks, files);
       });
     if (client.fileRenames.did)

@@ -11,7 +11,7 @@ import { workspaceSymbols } from "../../editor/workspace-symbols.ts";
 import type { Farm } from "../../farm.ts";
 import type { Convert } from "../convert.ts";
 import { turn } from "../farm-walk.ts";
-import { about, type Feature, stopIfCancelled } from "../session.ts";
+import { about, type Feature, unlessCancelled } from "../session.ts";
 import { inTurns } from "../turns.ts";
 import type { Look } from "../workspace.ts";
 
@@ -95,8 +95,7 @@ export const workspaceSymbolsFeature: Feature = {
   listen: ({ connection, convert, workspace }) => {
     connection.onWorkspaceSymbol(async ({ query }, token): Promise<SymbolInformation[]> => {
       await turn();
-      stopIfCancelled(token);
-      const looks = await workspace.looks();
+      const looks = await unlessCancelled(token, workspace.looks());
       const found = await inTurns(workspaceSymbols(looks, query), token);
       return found.map(({ symbol, where }) => flat(convert, where, symbol, false));
     });
