@@ -34,5 +34,7 @@ export function whyNoPlanEdit(farm: Farm, system: System): string {
     return `${system.name} has no line in a log yet. Record a reading first, then write the plan.`;
   const byHand = assessment.plan.sources.some(({ source }) => source.device === "hand");
   const hand = byHand ? " Doses by hand are written once they are given." : "";
-  return set.length > 0 ? `Every pump of ${system.name} is set as planned.${hand}` : `${system.name} has no pump to set.${hand}`;
+  return set.length > 0
+    ? `Every pump of ${system.name} is set as planned.${hand}`
+    : `${system.name} has no pump to set.${hand}`;
 }

@@ -6,7 +6,7 @@ import { parameterTable } from "../../grammar/parameters.ts";
 import type { ReadItem, Statement } from "../../grammar/syntax.ts";
 import { writeStatement } from "../../grammar/write.ts";
 import { editedText } from "../checks/apply-fixes.ts";
-import type { LineEdit } from "../checks/problem.ts";
+import type { LineEdit, Problem } from "../checks/problem.ts";
 import { intoLog, linesAtEnd, sectionAtEnd } from "../checks/sections.ts";
 import { countUpTo } from "../culture/event-order.ts";
 import type { System } from "../culture/model.ts";
@@ -159,6 +159,12 @@ function newestPlace({ events }: System, at: number): Place | null {
   return (own.findLast(({ minute }) => minute <= at) ?? own[0])?.place ?? null;
 }
 
+/** What a problem says, without why it matters and what to do. */
+function whatOf({ message, why }: Problem): string {
+  const end = why === "" ? -1 : message.indexOf(why);
+  return end > 0 ? message.slice(0, end).trim() : message;
+}
+
 /** What would be told of the line if it stood there, pausing now and then. */
 export function* notesOn(
   farm: Farm,
@@ -172,5 +178,5 @@ export function* notesOn(
   const number = lines.findIndex((each, index) => index > edit.line && each.text.trim() === line);
   return after.problems
     .filter(({ place, severity }) => place.file === edit.file && place.line === number && severity !== "hint")
-    .map(({ message }) => message);
+    .map(whatOf);
 }

@@ -18,7 +18,8 @@ const storeys: readonly (readonly string[])[] = [
   ["server/editor", "server/environment.ts"],
   ["server/commands", "server/protocol"],
   ["server/language-server.ts"],
-  ["server/cli.ts"],
+  // The command line, the extension, and the server as the extension starts it: entrances, none of which another knows.
+  ["server/cli.ts", "server/ipc.ts", "client"],
 ];
 
 const heightOf = (file: string): number =>
@@ -56,7 +57,7 @@ const isUpward = ({ from, to }: Arrow): boolean => {
   return heightOf(to) > heightOf(from) || (heightOf(to) === heightOf(from) && roomOf(to) !== roomOf(from));
 };
 
-const files = [...sources("grammar"), ...sources("server")];
+const files = [...sources("grammar"), ...sources("server"), ...sources("client")];
 
 test("every source file stands in a room", () => {
   expect(files.length).toBeGreaterThan(50);
@@ -69,6 +70,28 @@ test("imports point down only", () => {
   expect(arrows.filter(isUpward)).toEqual([]);
 });
 
+test("the extension knows of the server only what the two say to each other", () => {
+  const arrows = sources("client").flatMap((file) => arrowsOf(file, readFileSync(join(root, file), "utf8")));
+  const into = new Set(arrows.map(({ to }) => to).filter((to) => !to.startsWith("client/")));
+  expect([...into]).toEqual(["server/protocol/requests.ts"]);
+});
+
+/** Those of the extension that can be tried without VS Code. */
+const plain = sources("client").filter((file) =>
+  readFileSync(join(root, file), "utf8").includes("No VS Code in here."),
+);
+
+test("what says that no VS Code is in it has none", () => {
+  expect(plain.length).toBeGreaterThan(5);
+  const knowing = plain.filter((file) =>
+    arrowsOf(file, readFileSync(join(root, file), "utf8"))
+      .map(({ to }) => to)
+      .some((to) => to.startsWith("client/") && !plain.includes(to)),
+  );
+  expect(knowing).toEqual([]);
+  for (const file of plain) expect(readFileSync(join(root, file), "utf8")).not.toContain('from "vscode');
+});
+
 test("an import that points up is seen", () => {
   const text =
     'import type { Farm } from "../farm.ts";\nimport {\n  problem,\n} from "../checks/problem.ts";\nexport { x } from "./y.ts";';
@@ -79,7 +102,12 @@ test("an import that points up is seen", () => {
 });
 
 /** Only the doors to the outside may touch it. */
-const outside = new Set(["server/environment.ts", "server/cli.ts", "server/language-server.ts"]);
+const outside = new Set([
+  "server/environment.ts",
+  "server/cli.ts",
+  "server/language-server.ts",
+  "client/server.ts",
+]);
 
 test("the core knows no files, process or clock", () => {
   const touching = files.filter((file) => {

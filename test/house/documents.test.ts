@@ -1,6 +1,6 @@
 /** What README and DEVELOPERS.md quote is there: paths, commands, examples, and the sheet as it is printed. */
 import { existsSync, readFileSync } from "node:fs";
-import { join, resolve } from "node:path";
+import { dirname, join, resolve } from "node:path";
 import { describe, expect, test } from "vitest";
 import { readMoment } from "../../grammar/dates.ts";
 import manifest from "../../package.json" with { type: "json" };
@@ -49,7 +49,7 @@ describe.each(pages)("%s", (page) => {
       .filter((link) => !link.includes("://"));
     const words = quoted(text).filter((word) => isPath(word) && !isOfTheLanguage(word));
     const missing = [...links, ...words].filter((path) => {
-      const places = [root, join(root, "server/checks"), join(root, "server/culture")];
+      const places = [dirname(page), "", "server/checks", "server/culture"].map((place) => join(root, place));
       return !places.some((place) => existsSync(join(place, path)));
     });
     expect(missing).toEqual([]);

@@ -19,6 +19,7 @@ import { type Action, actionKinds, actionsAt } from "../../editor/code-actions.t
 import type { Client } from "../client.ts";
 import { diagnosticOf } from "../problems.ts";
 import { about, type Feature, type Session } from "../session.ts";
+import { inTurns } from "../turns.ts";
 import type { LookAt } from "../workspace.ts";
 
 /** The command of a client that knows no actions. */
@@ -58,14 +59,14 @@ export const codeActionsFeature: Feature = {
     const { connection, client } = session;
     const canDo = client.actionLiterals || client.appliesEdits;
     connection.onCodeAction(({ textDocument: { uri }, range, context }, token) =>
-      about(session, uri, token, (look): (CodeAction | Command)[] => {
+      about(session, uri, token, async (look): Promise<(CodeAction | Command)[]> => {
         if (!canDo) return [];
         const isAutomatic = context.triggerKind === CodeActionTriggerKind.Automatic;
         const only = context.only ?? (isAutomatic ? here : null);
         const version = look.versionOf(look.file);
-        return found(session, look, range, only).map((action, place) =>
-          written(session, look, action, { uri, version, range, only, place, title: action.title }),
-        );
+        const actions = await inTurns(found(session, look, range, only), token);
+        const carried = { uri, version, range, only };
+        return inTurns(allWritten(session, look, actions, carried), token);
       }),
     );
     if (client.actionLiterals && client.actionResolves.includes("edit"))
@@ -87,11 +88,25 @@ function found(
   look: LookAt,
   { start, end }: Range,
   only: readonly string[] | null,
-): readonly Action[] {
+): Generator<void, readonly Action[]> {
   const selection = { file: look.file, from: convert.cursor(look, start), to: convert.cursor(look, end) };
   // A document without a folder has no place beside it.
   const canCreate = client.fileCreation && client.versionedEdits && isAbsolute(look.key);
   return actionsAt({ farm: look.farm, selection, canCreate, now: now() }, only);
+}
+
+function* allWritten(
+  session: Session,
+  look: LookAt,
+  actions: readonly Action[],
+  carried: Omit<Carried, "place" | "title">,
+): Generator<void, (CodeAction | Command)[]> {
+  const all: (CodeAction | Command)[] = [];
+  for (const [place, action] of actions.entries()) {
+    all.push(written(session, look, action, { ...carried, place, title: action.title }));
+    yield;
+  }
+  return all;
 }
 
 /** An action as the client can take it. */
@@ -123,8 +138,8 @@ async function editOf(
 ): Promise<WorkspaceEdit | null> {
   const { uri, version, range, only = null, place, title } = carried ?? {};
   if (uri === undefined || range === undefined || place === undefined) return null;
-  return about(session, uri, token, (look) => {
-    const action = found(session, look, range, only)[place];
+  return about(session, uri, token, async (look) => {
+    const action = (await inTurns(found(session, look, range, only), token))[place];
     if (!action || action.title !== title || look.versionOf(look.file) !== version)
       throw new ResponseError(LSPErrorCodes.ContentModified, "The text has changed. Ask again.");
     return protocolEdit(session, look, action);

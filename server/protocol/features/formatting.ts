@@ -1,6 +1,22 @@
 /** Formatting: of a document, of a range of it, and while typing. */
 import { tidyEdits, tidyRangeEdits, tidyTypedEdits } from "../../editor/formatting.ts";
+import type { TextEdit } from "../../editor/text-edits.ts";
+import type { Farm } from "../../farm.ts";
+import type { Convert } from "../convert.ts";
 import { about, type Feature } from "../session.ts";
+import { inTurns } from "../turns.ts";
+
+const editsAtOnce = 256;
+
+/** Pauses every so many edits. */
+function* converted(convert: Convert, farm: Farm, edits: readonly TextEdit[]) {
+  const all: ReturnType<Convert["textEdit"]>[] = [];
+  for (const edit of edits) {
+    all.push(convert.textEdit(farm, edit));
+    if (all.length % editsAtOnce === 0) yield;
+  }
+  return all;
+}
 
 export const formattingFeature: Feature = {
   title: "Formatting",
@@ -10,9 +26,10 @@ export const formattingFeature: Feature = {
   listen: (session) => {
     const { connection, convert } = session;
     connection.onDocumentFormatting(({ textDocument }, token) =>
-      about(session, textDocument.uri, token, ({ farm, file }) =>
-        tidyEdits(farm, file).map((edit) => convert.textEdit(farm, edit)),
-      ),
+      about(session, textDocument.uri, token, async ({ farm, file }) => {
+        const edits = await inTurns(tidyEdits(farm, file), token);
+        return inTurns(converted(convert, farm, edits), token);
+      }),
     );
   },
 };
@@ -24,10 +41,11 @@ export const rangeFormattingFeature: Feature = {
   listen: (session) => {
     const { connection, convert } = session;
     connection.onDocumentRangeFormatting(({ textDocument, range }, token) =>
-      about(session, textDocument.uri, token, (look) => {
+      about(session, textDocument.uri, token, async (look) => {
         const { farm, file } = look;
         const [from, to] = [convert.cursor(look, range.start), convert.cursor(look, range.end)];
-        return tidyRangeEdits(farm, file, from, to).map((edit) => convert.textEdit(farm, edit));
+        const edits = await inTurns(tidyRangeEdits(farm, file, from, to), token);
+        return inTurns(converted(convert, farm, edits), token);
       }),
     );
   },

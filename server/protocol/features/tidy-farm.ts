@@ -1,5 +1,6 @@
 /** For an extension: every file of a farm in its tidy form. */
 import { tidyEdits } from "../../editor/formatting.ts";
+import type { TextEdit } from "../../editor/text-edits.ts";
 import { marlRequest, type TidyAnswer } from "../requests.ts";
 import { about, type Feature } from "../session.ts";
 import { inTurns } from "../turns.ts";
@@ -25,9 +26,9 @@ export const tidyFarmFeature: Feature = {
 };
 
 function* editsOfAll({ farm }: LookAt) {
-  const edits: ReturnType<typeof tidyEdits> = [];
+  const edits: TextEdit[] = [];
   for (const file of farm.texts.keys()) {
-    edits.push(...tidyEdits(farm, file));
+    for (const edit of yield* tidyEdits(farm, file)) edits.push(edit);
     yield;
   }
   return edits;
