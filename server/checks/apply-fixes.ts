@@ -1,4 +1,5 @@
 /** Texts and problems → the texts after their safe fixes, and what was done. Writes nothing. */
+import { inOneGo } from "../culture/keep.ts";
 import type { LineEdit, Problem } from "./problem.ts";
 
 export interface FixNote {
@@ -18,21 +19,46 @@ export interface Fixed {
 
 const byteOrderMark = "\ufeff";
 
+const problemsAtOnce = 256;
+
 /** Does the one safe fix of each problem that has one. Byte order mark and line endings stay as they are. */
-export function applySafeFixes(texts: ReadonlyMap<string, string>, problems: readonly Problem[]): Fixed {
+export const applySafeFixes = (texts: ReadonlyMap<string, string>, problems: readonly Problem[]): Fixed =>
+  inOneGo(applySafeFixesInSteps(texts, problems));
+
+/** The same, pausing now and then. */
+export function* applySafeFixesInSteps(
+  texts: ReadonlyMap<string, string>,
+  problems: readonly Problem[],
+): Generator<void, Fixed> {
   const done: FixNote[] = [];
   const skipped: FixNote[] = [];
   const edits = new Map<string, LineEdit[]>();
-  for (const { place, fixes } of problems) {
+  /** The same edits by file and line: those of other lines needn't be looked at. */
+  const byLine = new Map<string, LineEdit[]>();
+  const lineOf = ({ file, line }: LineEdit): string => `${line} ${file}`;
+  for (const [index, { place, fixes }] of problems.entries()) {
+    if (index % problemsAtOnce === 0) yield;
     const [fix, ...others] = fixes.filter(({ safe }) => safe);
     if (!fix || others.length > 0 || !fix.edits.every(({ file }) => texts.has(file))) continue;
     const note = { file: place.file, line: place.line, title: fix.title };
-    const isFree = fix.edits.every((edit) => !edits.get(edit.file)?.some((other) => overlap(edit, other)));
-    if (isFree) for (const edit of fix.edits) edits.set(edit.file, [...(edits.get(edit.file) ?? []), edit]);
+    const isFree = fix.edits.every(
+      (edit) => !byLine.get(lineOf(edit))?.some((other) => overlap(edit, other)),
+    );
+    if (isFree)
+      for (const edit of fix.edits) {
+        pushTo(edits, edit.file, edit);
+        pushTo(byLine, lineOf(edit), edit);
+      }
     (isFree ? done : skipped).push(note);
   }
   const changed = [...edits].map(([file, list]) => [file, editedText(texts.get(file)!, list)] as const);
   return { texts: new Map(changed), done, skipped };
+}
+
+function pushTo<K, V>(lists: Map<K, V[]>, key: K, value: V): void {
+  const list = lists.get(key);
+  if (list) list.push(value);
+  else lists.set(key, [value]);
 }
 
 /** True where two edits touch: also where both put something at the same place, whose order nobody knows. */

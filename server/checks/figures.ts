@@ -56,6 +56,18 @@ export function figureWithin(value: number, unit: FigureUnit, way: "down" | "up"
 export const doseFigure = (litres: number): string =>
   Math.abs(litres) < 10 ? figure(litres * 1000, "mL") : figure(litres, "L");
 
+/**
+ * What the plan gives, told the same wherever it is told or written: rounded down where a limit holds it, so that
+ * nobody is told to pass the limit.
+ */
+export function plannedFigure(litres: number, isLimited: boolean): string {
+  const way = (value: number, unit: "mL" | "L") =>
+    isLimited ? figureWithin(value, unit, "down") : figure(value, unit);
+  if (Math.abs(litres) < 10) return way(litres * 1000, "mL");
+  // A whole litre of some ten would be too coarse to set a pump by.
+  return `${rounded(isLimited ? Math.floor(litres * 10 + 1e-6) / 10 : litres, 1)} L`;
+}
+
 /** What a good test or probe tells apart, in the parameter's own unit. Common practice, no source. */
 const toldApart: Readonly<Record<ParameterName, number>> = {
   alkalinity: 0.02,

@@ -7,7 +7,8 @@ import type { DisplayUnit } from "../culture/model.ts";
 import type { Files } from "../culture/names.ts";
 import type { Place } from "../culture/place.ts";
 import type { Exchange, Remedies, Split } from "../dosing/remedy.ts";
-import { doseFigure, figure, figureWithin, rounded, valueFigure } from "./figures.ts";
+import { Decimal34 } from "../quantity/decimal.ts";
+import { figureWithin, plannedFigure, valueFigure } from "./figures.ts";
 import { endOfWords, lineAt } from "./fixing.ts";
 import type { LineEdit, LineFix } from "./problem.ts";
 import { intoLog, lastUpTo, linesAfter, sectionAt, sees } from "./sections.ts";
@@ -38,28 +39,27 @@ export function writtenNow({ system, parameter, unit, remedies }: InWater, files
   ];
 }
 
-/** The `set` line with every pump of the plan that is set to something else; by hand nothing is set. */
+/** The `set` line with every source of the plan that is set to something else; a hand only where it is set at all. */
 export function ratesSet(system: string, remedies: Remedies, files: Files): readonly LineFix[] {
   const { at, newest } = remedies;
-  const items = remedies.set.flatMap(({ pump, litresPerDay, setLPerDay, isLimited }) => {
-    const millilitres = litresPerDay * 1000;
-    const amount = isLimited ? figureWithin(millilitres, "mL", "down") : figure(millilitres, "mL");
-    return amount === figure(setLPerDay * 1000, "mL") ? [] : [{ pump, amount: `${amount}/day` }];
+  const items = remedies.set.flatMap(({ name, litresPerDay, setLPerDay, isLimited }) => {
+    const amount = plannedFigure(litresPerDay, isLimited);
+    return amount === plannedFigure(setLPerDay, false) ? [] : [{ name, amount: `${amount}/day` }];
   });
   const here = alreadySet(system, remedies, files);
-  const changed = items.flatMap(({ pump, amount }): LineEdit[] => {
-    const edit = here.get(pump);
+  const changed = items.flatMap(({ name, amount }): LineEdit[] => {
+    const edit = here.get(name);
     return edit ? [{ ...edit, text: amount }] : [];
   });
   const texts = setLines(
     at,
-    items.filter(({ pump }) => !here.has(pump)).map(({ pump, amount }) => `${pump} ${amount}`),
+    items.filter(({ name }) => !here.has(name)).map(({ name, amount }) => `${name} ${amount}`),
   );
   const added = texts.length > 0 ? intoLog(files, system, newest, at, texts) : null;
   const edits = added ? [...changed, added] : texts.length > 0 ? [] : changed;
   if (edits.length === 0) return [];
-  const said = items.map(({ pump, amount }) => `${pump} to ${amount}`);
-  const more = said.length > 3 ? [...said.slice(0, 2), `${said.length - 2} more pumps`] : said;
+  const said = items.map(({ name, amount }) => `${name} to ${amount}`);
+  const more = said.length > 3 ? [...said.slice(0, 2), `${said.length - 2} more`] : said;
   return [{ title: `Set ${allOf(more)} from now on`, safe: false, edits }];
 }
 
@@ -91,18 +91,30 @@ function setLines(minute: number, items: readonly string[]): string[] {
 /** Today's doses by hand, for who gives them now. */
 function givenNow(system: string, { at, newest, gave }: Remedies, files: Files): readonly LineFix[] {
   return gave.slice(0, 2).flatMap(({ solution, litres, isLimited }): LineFix[] => {
-    const amount = isLimited ? figureWithin(litres * 1000, "mL", "down") : doseFigure(litres);
+    const amount = plannedFigure(litres, isLimited);
     const words = `gave ${nameOf(solution)} ${amount}`;
     const edit = intoLog(files, system, newest, at, [`${dated(at)} ${words}`]);
     return edit ? [{ title: `Write ${words} (today's dose by hand)`, safe: false, edits: [edit] }] : [];
   });
 }
 
-const beside: Readonly<Record<Exchange["within"], string>> = {
-  limits: "",
-  day: ", as far as a day's limit allows",
-  beyond: ", more at once than a day's limit allows",
-};
+/** What a day's limits have to say of an exchange. */
+function besideLimits({ within, limits }: Exchange): string {
+  if (within === "limits") return "";
+  const named =
+    limits.length > 1
+      ? `a day's limits on ${allOf(limits)} allow`
+      : `a day's limit on ${allOf(limits)} allows`;
+  return within === "day" ? `, as far as ${named}` : `, more at once than ${named}`;
+}
+
+/** What else an exchange brings to another value, as people see it. */
+function otherMoves({ moves }: Exchange): string[] {
+  return moves.flatMap(({ parameter, unit, from, to }) => {
+    const reached = valueFigure(parameter, to, unit);
+    return reached === valueFigure(parameter, from, unit) ? [] : [`${parameter} to ${reached}`];
+  });
+}
 
 function exchanged(
   system: string,
@@ -112,7 +124,8 @@ function exchanged(
   files: Files,
 ): readonly LineFix[] {
   const waters = new Set<string>();
-  return exchanges.flatMap(({ water, litres, reached, within }): LineFix[] => {
+  return exchanges.flatMap((exchange): LineFix[] => {
+    const { water, litres, reached, within } = exchange;
     const way = within === "day" ? "down" : "up";
     const volume = litres < 100 ? tenths(litres, way) : figureWithin(litres, "L", way);
     const words = `renewed ${volume} with ${nameOf(water)}`;
@@ -120,7 +133,8 @@ function exchanged(
     if (!edit || !sees(files, edit.file, "saltwater", water) || Number.parseFloat(volume) === 0) return [];
     waters.add(water);
     if (waters.size > mostWaters) return [];
-    const brings = `brings ${parameter} to ${valueFigure(parameter, reached, unit)}${beside[within]}`;
+    const values = [`${parameter} to ${valueFigure(parameter, reached, unit)}`, ...otherMoves(exchange)];
+    const brings = `brings ${allOf(values)}${besideLimits(exchange)}`;
     return [{ title: `Write ${words} (${brings})`, safe: false, edits: [edit] }];
   });
 }
@@ -144,7 +158,9 @@ export function doseSplit(
   const item = items.find(({ start }) => start === place.span?.start);
   if (!item || (split.over === "day" && !at.timeKnown)) return [];
   const { number, unit } = item.quantity;
-  const amounts = split.parts.map(({ share }) => partOf(Number(number.text) * share));
+  const shares = split.parts.map(({ share }) => share);
+  const amounts = partsOf(number.text, shares);
+  if (!amounts) return [];
   const [first = ""] = amounts;
   const after = new Map<number, string[]>();
   for (const [index, { minute }] of split.parts.entries()) {
@@ -161,19 +177,37 @@ export function doseSplit(
   const each = [...new Set(amounts)];
   const of =
     each.length === 1 ? `${first} ${unit?.text ?? ""} each` : `${allOf(amounts)} ${unit?.text ?? ""}`;
-  const title =
-    split.over === "day"
-      ? `Split into ${amounts.length} doses over the day, ${of}`
-      : `Split over ${amounts.length} days, ${of}`;
+  const over =
+    split.over === "day" ? `into ${amounts.length} doses over the day` : `over ${amounts.length} days`;
+  const title = `Split ${over}, ${of} (if it isn't given yet; the later lines wait for their time)`;
   return [{ title, safe: false, edits }];
 }
 
-/** A part of an amount with digits enough for half a per cent, never more than it is. */
-function partOf(amount: number): string {
-  const decimals = Math.min(Math.max(Math.ceil(-Math.log10(amount * 0.005)), 0), 6);
-  const step = 10 ** decimals;
-  const text = rounded(Math.floor(amount * step + 1e-6) / step, decimals);
-  return /\.\d*$/.test(text) ? text.replace(/\.?0+$/, "") : text;
+/** The last part takes the rest: no more than so much above its share, or it could break the limit. */
+const mostAbove = 1.004;
+const mostDecimals = 6;
+
+/** An amount in parts that add up to it to the last digit, with digits enough for half a per cent. */
+function partsOf(written: string, shares: readonly number[]): string[] | null {
+  const whole = decimalOf(written);
+  if (!whole) return null;
+  const smallest = whole.toNumber() * Math.min(...shares);
+  const fewest = Math.min(Math.max(Math.ceil(-Math.log10(smallest * 0.005)), 0), mostDecimals);
+  for (let decimals = fewest; decimals <= mostDecimals; decimals += 1) {
+    const parts = shares
+      .slice(0, -1)
+      .map((share) => whole.times(share).plus(1e-6).toDecimalPlaces(decimals, Decimal34.ROUND_DOWN));
+    const rest = parts.reduce((left, part) => left.minus(part), whole);
+    if (rest.greaterThan(whole.times((shares.at(-1) ?? 0) * mostAbove)) && decimals < mostDecimals) continue;
+    const all = [...parts, rest];
+    return all.every((part) => part.greaterThan(0)) ? all.map((part) => part.toFixed()) : null;
+  }
+  return null;
+}
+
+function decimalOf(written: string): Decimal34 | null {
+  const isNumber = Number.isFinite(Number(written)) && Number(written) > 0;
+  return isNumber ? new Decimal34(written) : null;
 }
 
 /** Sets a line of readings aside, with the reason left to say; the line is written tidily, its comment kept. */

@@ -20,28 +20,31 @@ const isRecipe = ({ place }: Of<"syntax/unfinished">): boolean => place.span ===
 const isFormula = (expected: readonly string[]): boolean =>
   expected[0]?.startsWith("a chemical formula") === true;
 
-/** `x30x40`, as people write sizes without spaces. */
-const isCrossed = ({ word, expected }: Of<"syntax/unknown-word">): boolean =>
-  /^x\d+(?:x\d+)*$/.test(word) && expected.includes("x");
+/** `x30x40`, as people write sizes without spaces; with their unit too, `x30cm` or `cmx30`. */
+export const isCrossed = (word: string): boolean =>
+  /^(?:mm|cm|m|inch|ft)?(?:x\d+(?:mm|cm|m|inch|ft)?)+$/.test(word);
+
+const crossed =
+  /(?<![\w.,-])\d+(?:\.\d+)?(?:mm|cm|m|inch|ft)?(?:x\d+(?:\.\d+)?(?:mm|cm|m|inch|ft)?)+(?![\w.,])/g;
 
 /** The sizes that the place is among with a space on either side of each x; none where no such sizes are there. */
-function crossesApart(place: Place, files: Files): readonly LineFix[] {
+export function crossesApart(place: Place, files: Files): readonly LineFix[] {
   const { span } = place;
   const text = lineAt(files, place)?.text ?? "";
-  const sizes = [...text.matchAll(/(?<![\w.,-])\d+(?:\.\d+)?(?:x\d+(?:\.\d+)?)+(?![\w.,])/g)].find(
+  const sizes = [...text.matchAll(crossed)].find(
     ({ index, 0: found }) => span && index <= span.start && span.start < index + found.length,
   );
   if (!sizes) return [];
   const { index: start, 0: found } = sizes;
-  const edits = [{ ...place, start, end: start + found.length, text: found.replaceAll("x", " x ") }].map(
-    ({ span: _, ...edit }) => edit,
-  );
+  const apart = found.replace(/x(?=\d)/g, " x ").replace(/(\d)(?=[a-z])/g, "$1 ");
+  const { file, line } = place;
+  const edits = [{ file, line, start, end: start + found.length, text: apart }];
   return [{ title: "Put spaces round x", safe: true, edits }];
 }
 
 function unknownWord(finding: Of<"syntax/unknown-word">): string {
   const { word, expected } = finding;
-  if (isCrossed(finding)) return `In ${inQuotes(word)} the x stands without spaces.`;
+  if (isCrossed(word) && expected.includes("x")) return `In ${inQuotes(word)} the x stands without spaces.`;
   if (expected.includes("a name") && isReserved(word))
     return `${inQuotes(word)} is a word of the language and can't be a name.`;
   if (isFormula(expected)) return `${inQuotes(word)} can't be read as part of a chemical formula.`;
@@ -117,10 +120,10 @@ export const syntaxRules: Rules<
     why,
     whyHere: leftOut,
     todo: "Write the word as the language spells it; the message offers the nearest ones, or names what can stand there.",
-    todoHere: ({ expected, nearest, ...finding }) =>
+    todoHere: ({ word, expected, nearest }) =>
       nearest.length > 0
         ? `Is ${oneOf(nearest)} meant?`
-        : isCrossed({ ...finding, expected, nearest })
+        : isCrossed(word) && expected.includes("x")
           ? "Put a space on either side of it, as in 40 cm x 30 cm."
           : isFormula(expected)
             ? "Write it like SrCl2·6H2O."
@@ -128,7 +131,7 @@ export const syntaxRules: Rules<
               ? `Here can stand ${said(expected)}.`
               : "Remove it, or start a comment with # before it.",
     fixes: (finding, files) =>
-      isCrossed(finding)
+      isCrossed(finding.word) && finding.expected.includes("x")
         ? crossesApart(finding.place, files)
         : replacingWith(finding.place, finding.nearest, false),
     background:

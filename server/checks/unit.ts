@@ -3,7 +3,8 @@ import type { Files } from "../culture/names.ts";
 import type { Place } from "../culture/place.ts";
 import { adding, lineAt, replacing, replacingWith } from "./fixing.ts";
 import type { Rules } from "./rule.ts";
-import { inQuotes, oneOf } from "./words.ts";
+import { crossesApart, isCrossed } from "./syntax.ts";
+import { inQuotes, isParameter, oneOf } from "./words.ts";
 
 const leftOut = "This line is left out.";
 
@@ -45,12 +46,22 @@ export const unitRules: Rules<
   "unit/unknown": {
     severity: "error",
     title: "A unit that isn't known",
-    says: ({ word }) => `${inQuotes(word)} is no unit.`,
+    says: ({ word }) =>
+      isCrossed(word) ? `In ${inQuotes(word)} the x stands without spaces.` : `${inQuotes(word)} is no unit.`,
     why: leftOut,
     todo: "Write the unit as the language spells it.",
-    todoHere: ({ nearest }) =>
-      nearest.length > 0 ? `Is ${oneOf(nearest)} meant?` : "Write a unit such as mL, mg/L, meq/L or dKH.",
-    fixes: ({ place, word, nearest }, files) => replacingWith(partOf(place, word, files), nearest, false),
+    todoHere: ({ word, nearest }) =>
+      isCrossed(word)
+        ? "Put a space on either side of it, as in 40 cm x 30 cm."
+        : nearest.includes("")
+          ? "Write the number without a unit."
+          : nearest.length > 0
+            ? `Is ${oneOf(nearest)} meant?`
+            : "Write a unit such as mL, mg/L, meq/L or dKH.",
+    fixes: ({ place, word, nearest }, files) =>
+      isCrossed(word)
+        ? crossesApart(place, files)
+        : replacingWith(partOf(place, word, files), nearest, false),
     example: {
       fires: "system vat\n  tank main 500 L\n  evaporates 4 L/dya\n",
       silent: "system vat\n  tank main 500 L\n  evaporates 4 L/day\n",
@@ -64,11 +75,13 @@ export const unitRules: Rules<
     why: leftOut,
     todo: "Write the number in one of the units that the message gives as examples.",
     todoHere: ({ examples }) => `Write it ${written(examples)}.`,
-    fixes: ({ place, unit, examples }) =>
-      // A time that was forgotten; any other unit would need another number.
+    fixes: ({ place, unit, expected, examples }) =>
+      // A time that was forgotten, or a parameter's unit that was mixed up; any other would need another number.
       replacingWith(
         place,
-        offered(examples).filter((example) => example.startsWith(`${unit}/`)),
+        offered(examples).filter(
+          (example) => example.startsWith(`${unit}/`) || (unit !== "" && isParameter(expected)),
+        ),
         false,
       ),
     background:

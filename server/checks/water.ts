@@ -6,9 +6,9 @@ import type { Files } from "../culture/names.ts";
 import {
   bandFigure,
   changeFigure,
-  doseFigure,
   edgeFigure,
   figure,
+  plannedFigure,
   unitText,
   valueBeside,
   valueFigure,
@@ -49,13 +49,21 @@ function outsideTodo({ parameter, value, low }: Of<"water/outside-hold">): strin
 const isCarried = (parameter: ParameterName, value: number, read: number, unit: DisplayUnit): boolean =>
   valueFigure(parameter, value, unit) !== valueFigure(parameter, read, unit);
 
+/** The reading itself is where it shouldn't be, whatever doses and corals made of it since. */
+function isReadSo(finding: Of<"water/outside-hold" | "water/beyond-limit">): boolean {
+  const { value, read } = finding;
+  if (finding.code === "water/beyond-limit")
+    return finding.which === "max" ? read > finding.limit : read < finding.limit;
+  return value < finding.low ? read < finding.low : read > finding.high;
+}
+
 /** What to do about a reading that is right, and what about one that is wrong. */
 const writtenOrDisregarded = (
   finding: Of<"water/outside-hold" | "water/beyond-limit">,
   files: Files,
 ): readonly LineFix[] => [
   ...writtenNow(finding, files).slice(0, mostFixes - 1),
-  ...disregarding(finding.place, files),
+  ...(isReadSo(finding) ? disregarding(finding.place, files) : []),
 ];
 
 type Leaves = Of<"water/leaves-hold-soon" | "water/leaves-hold">;
@@ -72,11 +80,11 @@ function leavesBecause({ parameter, unit, takenPerDay, dosedPerDay }: Leaves): s
 }
 
 function leavesTodo({ parameter, planned, takenPerDay, dosedPerDay }: Leaves): string {
-  const pumps = planned.filter(({ by }) => by !== "hand");
-  const hands = planned.filter(({ by }) => by === "hand");
-  const set = pumps.map(({ by, litresPerDay }) => `${by} to ${doseFigure(litresPerDay)}/day`);
-  const give = hands.map(
-    ({ solution, litresPerDay }) => `${doseFigure(litresPerDay)} of ${nameOf(solution)} a day by hand`,
+  const figure = ({ litresPerDay, isLimited }: Leaves["planned"][number]) =>
+    plannedFigure(litresPerDay, isLimited);
+  const set = planned.flatMap((each) => (each.set === null ? [] : [`${each.set} to ${figure(each)}/day`]));
+  const give = planned.flatMap((each) =>
+    each.set === null ? [`${figure(each)} of ${nameOf(each.solution)} a day by hand`] : [],
   );
   const parts = [set.length > 0 ? `Set ${allOf(set)}.` : "", give.length > 0 ? `Give ${allOf(give)}.` : ""];
   const advice = parts.filter((part) => part !== "").join(" ");

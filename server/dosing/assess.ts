@@ -168,6 +168,16 @@ function listAssumptions(
       basis: "no estimate from the log yet",
     });
   }
+  for (const name of dosed) {
+    if (uptake.perDay[name] !== null || !state.carried[name]) continue;
+    // Of potassium and strontium nobody states it; what is dosed of them counts.
+    const isRare = name === "potassium" || name === "strontium";
+    assumed.add({
+      what: `what the corals take of ${name}`,
+      value: isRare ? "none" : "unknown, so its last reading stands until the next, with doses by hand",
+      basis: "not stated",
+    });
+  }
   if (uptake.foodTakesMore) {
     assumed.add({
       what: "alkalinity that the food takes",

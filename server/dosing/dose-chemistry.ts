@@ -1,4 +1,5 @@
 /** The water of a state as chemistry sees it, and what one delivery of a solution does to it. */
+import { minutesPerDay } from "../../grammar/dates.ts";
 import {
   afterDose,
   type SolutionStrength,
@@ -39,7 +40,8 @@ export function temperatureNow(
 
 /**
  * The water of a state, with its carbon from the last pH of seven days, else as in balance with the room's
- * air. Null where alkalinity or volume isn't known, or no sea water is like it.
+ * air; what doses brought since then and within a day comes on top, for no air has answered it yet (a day: common
+ * practice, no source). Null where alkalinity or volume isn't known, or no sea water is like it.
  */
 export function waterOf(
   state: WaterState,
@@ -55,8 +57,20 @@ export function waterOf(
     state.carried.calcium?.value ??
     seaWaterComposition(salinity).calciumMgPerKg * densityKgPerL(salinity, temperatureDegC);
   const litre = { alkalinityMeqPerL, calciumMgPerL, salinity, temperatureDegC };
-  const carbon = carbonBefore(litre, carbonEvidence(state, constants, assumed));
-  return carbon.ok ? { ...litre, dicMmolPerL: carbon.dicMmolPerL, volumeL } : null;
+  // The evidence is of the water before what was brought at once since.
+  const recent = state.unanswered.filter(({ minute }) => state.minute - minute <= minutesPerDay);
+  const sumOf = (key: "alkalinityMeqPerL" | "carbonMmolPerL") =>
+    recent.reduce((sum, brought) => sum + brought[key], 0);
+  const before = alkalinityMeqPerL - sumOf("alkalinityMeqPerL");
+  // A test since then that finds less than was brought says that it isn't there.
+  const isThere = before > 0;
+  const carbon = carbonBefore(
+    isThere ? { ...litre, alkalinityMeqPerL: before } : litre,
+    carbonEvidence(state, constants, assumed),
+  );
+  if (!carbon.ok) return null;
+  const dicMmolPerL = carbon.dicMmolPerL + (isThere ? sumOf("carbonMmolPerL") : 0);
+  return { ...litre, dicMmolPerL, volumeL };
 }
 
 /** What tells of the carbon: a recent pH, the room's air as stated, or its default. */

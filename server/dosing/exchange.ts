@@ -1,10 +1,11 @@
 /** How much water to exchange with which salt water, so that a value comes to its aim. */
+import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
 import type { FarmModel } from "../culture/model.ts";
 import type { SystemConstants } from "./constants.ts";
 import { limitAt } from "./limits.ts";
 import type { Exchange } from "./remedy.ts";
-import { type Tracked, tracked } from "./tracked.ts";
+import { type ByTracked, type Tracked, tracked } from "./tracked.ts";
 import { volumeAt } from "./volume.ts";
 import { isStale, type WaterState } from "./water-state.ts";
 
@@ -42,30 +43,60 @@ export function exchangesFor(here: ExchangeFor): readonly Exchange[] {
     const target = targets.find((each) => shareToExchange(value, each, incoming) !== null);
     const share = target === undefined ? null : shareToExchange(value, target, incoming);
     if (share === null || target === undefined || spoilsAnother(here, ref, share)) return [];
-    const shared = { water: ref, incoming };
-    const whole = { ...shared, litres: share * volumeL, reached: target };
-    const most = changeOfDay(here, incoming < value ? "fall" : "rise");
-    if (Math.abs(value - target) <= most * (1 + 1e-9)) return [{ ...whole, within: "limits" }];
-    const ofDay = most / Math.abs(value - incoming);
-    const reached = value + ofDay * (incoming - value);
-    return [
-      { ...shared, litres: ofDay * volumeL, reached, within: "day" },
-      { ...whole, within: "beyond" },
-    ];
+    const water = constants.waterAt(ref, state.minute).values;
+    const ofDay = shareOfDay(here, water);
+    const exchange = (of: number, within: Exchange["within"], limits: readonly Tracked[]): Exchange => ({
+      ...{ water: ref, incoming, litres: of * volumeL, within, limits },
+      reached: value + of * (incoming - value),
+      moves: otherMoves(here, water, of),
+    });
+    const broken = ofDay.filter(({ most }) => share > most * (1 + 1e-9)).map(({ name }) => name);
+    if (broken.length === 0) return [exchange(share, "limits", [])];
+    const most = Math.min(...ofDay.map((each) => each.most));
+    const first = ofDay.filter((each) => each.most <= most * (1 + 1e-9)).map(({ name }) => name);
+    return [...(most > 0 ? [exchange(most, "day", first)] : []), exchange(share, "beyond", broken)];
   });
 }
 
-/** What the limit on a day's change leaves; what is set already is taken off by the next reading. */
-const changeOfDay = ({ constants, state, parameter }: ExchangeFor, which: "rise" | "fall"): number =>
-  limitAt(constants.facts, parameter, which, "hand", state.minute, null)?.value ?? Number.POSITIVE_INFINITY;
+/** Everything known now that an exchange is judged by: what it is for, what is held, and salinity. */
+function judged({ constants, state, parameter }: ExchangeFor) {
+  return tracked.flatMap((name) => {
+    const carried = state.carried[name];
+    const hold = factAt(constants.facts.holds.get(name), state.minute)?.value ?? null;
+    const counts = name === parameter || name === "salinity" || hold !== null;
+    return counts && carried && !isStale(carried, state.minute) ? [{ name, carried, hold }] : [];
+  });
+}
+
+/**
+ * The largest share that keeps the limit on a day's change, for each that is judged. What is set already is taken off
+ * by the next reading.
+ */
+function shareOfDay(here: ExchangeFor, water: ByTracked<number>) {
+  const { constants, state } = here;
+  return judged(here).flatMap(({ name, carried: { value } }) => {
+    const which = water[name] < value ? "fall" : "rise";
+    const limit = limitAt(constants.facts, name, which, "hand", state.minute, null);
+    const whole = Math.abs(value - water[name]);
+    return limit && whole > 0 ? [{ name, most: Math.max(0, limit.value) / whole }] : [];
+  });
+}
+
+function otherMoves(here: ExchangeFor, water: ByTracked<number>, share: number): Exchange["moves"] {
+  const { constants, state, parameter } = here;
+  return judged(here).flatMap(({ name, carried }) => {
+    if (name === parameter) return [];
+    const unit = shownIn(constants.facts, name, state.minute, carried.reading);
+    const to = carried.value * (1 - share) + water[name] * share;
+    return [{ parameter: name, unit, from: carried.value, to }];
+  });
+}
 
 /** Another parameter that is in its band now would be out of it with so much of this water. */
-function spoilsAnother({ constants, state, parameter }: ExchangeFor, water: string, share: number): boolean {
-  const { values } = constants.waterAt(water, state.minute);
-  return tracked.some((name) => {
-    const hold = factAt(constants.facts.holds.get(name), state.minute)?.value;
-    const carried = state.carried[name];
-    if (name === parameter || !hold || !carried || isStale(carried, state.minute)) return false;
+function spoilsAnother(here: ExchangeFor, water: string, share: number): boolean {
+  const { values } = here.constants.waterAt(water, here.state.minute);
+  return judged(here).some(({ name, carried, hold }) => {
+    if (name === here.parameter || !hold) return false;
     const isIn = (value: number) => value >= hold.low && value <= hold.high;
     return isIn(carried.value) && !isIn(carried.value * (1 - share) + values[name] * share);
   });

@@ -33,11 +33,12 @@ type Own = { readonly place: Place; readonly system: string } & (
         readonly edge: number;
         readonly takenPerDay: number | null;
         readonly dosedPerDay: number;
-        /** What the plan gives a day: source and litres. */
+        /** What the plan gives a day; `set`: by the name that a `set` line gives the source, null of a hand. */
         readonly planned: readonly {
-          readonly by: string;
+          readonly set: string | null;
           readonly solution: string;
           readonly litresPerDay: number;
+          readonly isLimited: boolean;
         }[];
       })
   | (OfParameter &

@@ -201,6 +201,7 @@ function readInto(state: WaterState, event: ReadEvent): WaterState {
     ...state,
     carried,
     pH: pH ? { minute: event.minute, reading: pH } : state.pH,
+    unanswered: pH ? [] : state.unanswered,
     temperature: temperature ? { minute: event.minute, value: temperature.value } : state.temperature,
   };
 }
@@ -227,12 +228,26 @@ const isCarried = (carried: Carried | null, minute: number): carried is Carried 
   carried !== null && minute - carried.readAt <= carriedMinutes;
 
 /** What a solution brings at once; the water it comes with makes up for evaporation later. */
-function give(state: WaterState, solution: string, litres: number, constants: SystemConstants): WaterState {
+export function give(
+  state: WaterState,
+  solution: string,
+  litres: number,
+  constants: SystemConstants,
+): WaterState {
   const strength = constants.strengthAt(solution, state.minute);
   const volume = volumeAt(constants.facts, state.minute).litres;
   if (!strength || volume === null) return state;
+  const { alkalinityMeq, carbonMmol } = strength;
+  const counts = alkalinityMeq !== null && carbonMmol !== null && alkalinityMeq !== 0;
+  const perLitre = (1000 * litres) / volume;
+  const brought = {
+    minute: state.minute,
+    alkalinityMeqPerL: perLitre * (alkalinityMeq ?? 0),
+    carbonMmolPerL: perLitre * (carbonMmol ?? 0),
+  };
   return {
     ...state,
+    unanswered: counts ? [...ofLastDay(state), brought] : state.unanswered,
     carried: byTracked((name) => {
       const carried = state.carried[name];
       if (!isCarried(carried, state.minute)) return carried;
@@ -242,6 +257,9 @@ function give(state: WaterState, solution: string, litres: number, constants: Sy
   };
 }
 
+const ofLastDay = ({ unanswered, minute }: WaterState) =>
+  unanswered.filter((brought) => minute - brought.minute <= minutesPerDay);
+
 /** Drained, then filled. */
 function renew(state: WaterState, water: string, litres: number, constants: SystemConstants): WaterState {
   const volume = volumeAt(constants.facts, state.minute).litres;
@@ -250,6 +268,11 @@ function renew(state: WaterState, water: string, litres: number, constants: Syst
   const incoming = constants.waterAt(water, state.minute).values;
   return {
     ...state,
+    unanswered: ofLastDay(state).map(({ minute, alkalinityMeqPerL, carbonMmolPerL }) => ({
+      minute,
+      alkalinityMeqPerL: alkalinityMeqPerL * (1 - share),
+      carbonMmolPerL: carbonMmolPerL * (1 - share),
+    })),
     carried: byTracked((name) => {
       const carried = state.carried[name];
       if (!isCarried(carried, state.minute)) return carried;

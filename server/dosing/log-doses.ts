@@ -8,7 +8,7 @@ import type { SystemConstants } from "./constants.ts";
 import { afterDelivery, waterOf } from "./dose-chemistry.ts";
 import type { DosingFinding } from "./finding.ts";
 import type { DoseInLog } from "./fold.ts";
-import { ratesAsSet } from "./fold.ts";
+import { give, ratesAsSet } from "./fold.ts";
 import { limitAt } from "./limits.ts";
 import type { Split } from "./remedy.ts";
 import { beyondCapacity } from "./set-capacity.ts";
@@ -49,7 +49,8 @@ export function checkDose(
   for (const given of givenBy(event)) {
     lastDay.push(given);
     findings.push(...checkGiven(system, constants, state, given, lastDay));
-    state = withGiven(state, constants, given);
+    // The next of a line is judged from there.
+    state = give(state, given.solution, given.litres, constants);
   }
   return findings;
 }
@@ -61,17 +62,6 @@ export function givenBy(event: SystemEvent): Given[] {
   return event.kind === "topped" && event.solution
     ? [{ minute, solution: event.solution, litres: event.litres, place }]
     : [];
-}
-
-/** The state with one of several doses of a line given, so that the next is judged from there. */
-function withGiven(state: WaterState, constants: SystemConstants, given: Given): WaterState {
-  const carried = { ...state.carried };
-  for (const name of dosed) {
-    const value = carried[name];
-    if (value && !isStale(value, state.minute))
-      carried[name] = { ...value, value: value.value + raised(state, constants, given, name) };
-  }
-  return { ...state, carried };
 }
 
 /** By how much a dose raises a parameter. */

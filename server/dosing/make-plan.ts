@@ -242,7 +242,7 @@ function assumedState({ state, constants, assumed }: Situation): WaterState {
   if (instead === undefined) return state;
   const [value, basis] = isOld
     ? ["at its aim", "no recent reading"]
-    : ["at its least value", "reckoned to be below it"];
+    : ["not below its limit", "only reckoned to be below, never read so low"];
   assumed.add({ what: "alkalinity, for pH and Ω", value, basis });
   const place = { file: "", line: 0, span: null };
   const unit = hold?.unit ?? alkalinity!.reading.unit;

@@ -1,19 +1,20 @@
 /** Adds to findings what would mend them now: rates to set, doses to give, water to exchange, a dose to split. */
 import { minutesPerDay } from "../../grammar/dates.ts";
 import { factAt } from "../culture/history.ts";
-import type { FarmModel, Strength } from "../culture/model.ts";
+import type { FarmModel } from "../culture/model.ts";
 import type { Assessment } from "./assess.ts";
 import { exchangesFor } from "./exchange.ts";
 import type { DosingFinding } from "./finding.ts";
 import { ratesAsSet } from "./fold.ts";
+import { givenToday } from "./given-today.ts";
 import { limitAt } from "./limits.ts";
-import type { Plan } from "./make-plan.ts";
+import { isLimited, isSetByHand, nameToSet } from "./plan-rates.ts";
 import { litresSet } from "./rates.ts";
-import type { PumpRate, Remedies } from "./remedy.ts";
+import type { RateToSet, Remedies } from "./remedy.ts";
 import { broughtPerLitre, type Dosed, dosed, isTracked } from "./tracked.ts";
 
 /** What a system is like at the moment asked, on a farm with all its solutions and waters. */
-type Here = Pick<Assessment, "system" | "at" | "constants" | "state" | "plan"> & {
+type Here = Pick<Assessment, "system" | "at" | "constants" | "state" | "plan" | "findings"> & {
   readonly model: FarmModel;
 };
 
@@ -50,10 +51,10 @@ export function withRemedies(model: FarmModel, assessment: Assessment): DosingFi
   });
 }
 
-/** All pumps of the plan, where any of them is set to something else: the plan as it is written into a log. */
+/** All that is set of the plan, where any of it is set to something else: the plan as it is written into a log. */
 export function planRemedies(model: FarmModel, assessment: Assessment): Remedies {
   const here: Here = { ...assessment, model };
-  const set = dosed.map((parameter) => setting(here, parameter).set).find((pumps) => pumps.length > 0) ?? [];
+  const set = dosed.map((parameter) => setting(here, parameter).set).find((rates) => rates.length > 0) ?? [];
   return { ...nothing(here), set };
 }
 
@@ -73,7 +74,7 @@ function ofWater(finding: OfWater, here: Here): Remedies {
 /** Water to exchange against a value that is too high, or a salinity that is too low. */
 function exchangesAgainst(
   finding: Extract<OfWater, { value: number }>,
-  { model, constants, state, at }: Here,
+  { model, constants, state, at, findings }: Here,
 ): Remedies["exchanges"] {
   const { parameter, value } = finding;
   if (!isTracked(parameter)) return [];
@@ -84,6 +85,8 @@ function exchangesAgainst(
         : finding.low
       : finding.limit;
   if (value < edge && parameter !== "salinity") return [];
+  if (findings.some((each) => each.code === "water/salinity-is-the-cause" && each.parameter === parameter))
+    return [];
   const hold = factAt(constants.facts.holds.get(parameter), at)?.value;
   const ofHold = hold ? [hold.aim, value > edge ? hold.high : hold.low] : [];
   return exchangesFor({ model, constants, state, parameter, targets: [...ofHold, edge] });
@@ -106,60 +109,43 @@ function nothing({ system, at }: Here): Remedies {
   return { at, newest, set: [], gave: [], exchanges: [] };
 }
 
-/** All pumps of the plan, where one of them gives this parameter and is set to something else. */
+/** All sources of the plan that are set, where one of them gives this parameter and is set to something else. */
 function setting({ plan, state }: Here, parameter: OfWater["parameter"]): Pick<Remedies, "set"> {
   const [phase] = plan?.answer.phases ?? [];
   if (!plan || !phase || !isDosed(parameter)) return { set: [] };
-  const pumps = plan.sources.flatMap(({ key, source, strength }, index) => {
+  const sources = plan.sources.flatMap((entry, index) => {
+    const { key, source, strength } = entry;
     const litresPerDay = phase.litresPerDay[index];
     const isKnown = plan.answer.sources[index]?.totalLPerDay !== null && litresPerDay !== undefined;
+    const name = nameToSet(plan, state, entry);
     // A stopped pump stays stopped, whatever it is set to.
-    if (source.device !== "pump" || !isKnown || state.stopped.has(key)) return [];
+    if (name === null || !isKnown || state.stopped.has(key)) return [];
     const setLPerDay = litresSet(state, key, source);
     const serves = (broughtPerLitre(strength, parameter) ?? 0) > 0;
-    const rate: PumpRate = {
-      pump: source.by,
-      ...{ litresPerDay, setLPerDay, isLimited: isLimited(plan, strength) },
-    };
+    const rate: RateToSet = { name, litresPerDay, setLPerDay, isLimited: isLimited(plan, strength) };
     return [{ rate, isOff: serves && litresPerDay !== setLPerDay }];
   });
-  return { set: pumps.some(({ isOff }) => isOff) ? pumps.map(({ rate }) => rate) : [] };
-}
-
-/** A limit held down what is given of a parameter that this solution brings. */
-function isLimited({ answer }: Plan, strength: Strength): boolean {
-  const held = answer.corrections.filter(({ limitedBy }) => limitedBy !== null);
-  // Without a correction it is maintenance that a limit held down, of whatever.
-  if (held.length === 0) return answer.limitedBy !== null;
-  return held.some(
-    ({ parameter }) => isTracked(parameter) && (broughtPerLitre(strength, parameter) ?? 0) > 0,
-  );
+  return { set: sources.some(({ isOff }) => isOff) ? sources.map(({ rate }) => rate) : [] };
 }
 
 /** Doses by hand of solutions with this parameter that are given every day and weren't yet on this one. */
-function givenByHand({ plan, system, at }: Here, parameter: OfWater["parameter"]): Remedies["gave"] {
+function givenByHand({ plan, state, system, at }: Here, parameter: OfWater["parameter"]): Remedies["gave"] {
   if (!plan || !isDosed(parameter)) return [];
-  const midnight = Math.floor(at / minutesPerDay) * minutesPerDay;
-  const today = new Set<string>();
-  for (let index = system.events.length - 1; index >= 0; index -= 1) {
-    const event = system.events[index]!;
-    if (event.minute < midnight) break;
-    if (event.kind === "gave") for (const { solution } of event.doses) today.add(solution);
-  }
-  return plan.sources.flatMap(({ source, strength }, index) => {
+  return plan.sources.flatMap(({ key, source, strength }, index) => {
     const planned = plan.answer.sources[index];
+    const { solution } = source;
+    // What is set counts as given already.
     const isForToday =
       source.device === "hand" &&
+      !isSetByHand(state, key, source) &&
       planned !== undefined &&
       planned.totalLPerDay !== null &&
       planned.dosesPerDay === 1 &&
       planned.everyDays === 1 &&
       planned.litresPerDose > 0;
-    if (!isForToday || today.has(source.solution) || (broughtPerLitre(strength, parameter) ?? 0) <= 0)
-      return [];
-    return [
-      { solution: source.solution, litres: planned.litresPerDose, isLimited: isLimited(plan, strength) },
-    ];
+    const serves = (broughtPerLitre(strength, parameter) ?? 0) > 0;
+    if (!isForToday || !serves || givenToday({ system, at }, solution)) return [];
+    return [{ solution, litres: planned.litresPerDose, isLimited: isLimited(plan, strength) }];
   });
 }
 
@@ -171,11 +157,14 @@ function isPassedNow({ parameter }: OfDose, { constants, state, at }: Here): boo
   return gain !== null && limit !== null && gain > limit.value;
 }
 
-/** A dose of the last 24 hours or of one to come, which no other dose of the days to come follows. */
+/** Minutes that writing a dose down takes at most: what was written longer ago has been given. Common practice, no source. */
+const beingWritten = 15;
+
+/** A dose that is being written or is one to come, which no other dose of the days to come follows. */
 function canSplit({ split, parameter }: OfDose, { constants, system, at }: Here): boolean {
   const first = split?.parts[0]?.minute;
   const last = split?.parts.at(-1)?.minute;
-  if (first === undefined || last === undefined || first < at - minutesPerDay || !isDosed(parameter))
+  if (first === undefined || last === undefined || first < at - beingWritten || !isDosed(parameter))
     return false;
   if (split?.over === "day") return true;
   const since = system.events.findLastIndex(({ minute }) => minute <= first) + 1;

@@ -15,8 +15,10 @@ import { salinityNow, temperatureNow } from "./dose-chemistry.ts";
 import type { DosingFinding } from "./finding.ts";
 import { limitAt } from "./limits.ts";
 import type { Plan } from "./make-plan.ts";
+import { onScale } from "./ph-scale.ts";
+import { isLimited, nameToSet } from "./plan-rates.ts";
 import type { Drift } from "./projection.ts";
-import { flowsSet, topOffFlow } from "./rates.ts";
+import { flowsSet, litresSet, topOffFlow } from "./rates.ts";
 import { judgeSalinity } from "./salinity-cause.ts";
 import { broughtPerLitre, dosed, isTracked, type Tracked } from "./tracked.ts";
 import type { Uptake } from "./uptake.ts";
@@ -76,7 +78,7 @@ function outsideHold(seen: WaterSeen): DosingFinding[] {
     const now = valueNow(seen, parameter);
     if (!hold || !now) return [];
     const { low, high, scale, unit } = hold.value;
-    const on = (value: number) => sameScale(seen, value, now.reading.scale, scale);
+    const on = (value: number) => onScale(value, now.reading.scale, scale, seen.state, seen.constants);
     const value = on(now.value);
     if (value >= low - slack(low) && value <= high + slack(high)) return [];
     const read = on(now.reading.value);
@@ -108,19 +110,6 @@ function lastRead({ readings, at }: WaterSeen, parameter: Hold["parameter"]) {
   return null;
 }
 
-/** A pH read on one scale, on the scale that it is compared on. */
-function sameScale(
-  { state, constants }: WaterSeen,
-  value: number,
-  from: ReadValue["scale"],
-  to: ReadValue["scale"],
-): number {
-  if (!from || !to || from === to) return value;
-  const water = constantsAt(salinityNow(state, constants, null), temperatureNow(state, constants, null));
-  if (!water.ok) return value;
-  return to === "NBS" ? value + water.nbsLessTotal : value - water.nbsLessTotal;
-}
-
 function beyondLimit(seen: WaterSeen): DosingFinding[] {
   return parameterTable.flatMap(({ name: parameter }) =>
     (["max", "min"] as const).flatMap((which): DosingFinding[] => {
@@ -129,17 +118,18 @@ function beyondLimit(seen: WaterSeen): DosingFinding[] {
       const now = valueNow(seen, parameter) ?? old;
       const limit = now && limitAt(seen.constants.facts, parameter, which, "pump", seen.at, null);
       if (!now || !limit) return [];
-      const value = sameScale(seen, now.value, now.reading.scale, limit.scale);
-      const read = sameScale(seen, now.reading.value, now.reading.scale, limit.scale);
+      const on = (each: number) => onScale(each, now.reading.scale, limit.scale, seen.state, seen.constants);
+      const value = on(now.value);
+      const read = on(now.reading.value);
       // Reckoned below `min` from a reading that wasn't is no test: that it has left its hold is told anyway.
       const broken =
         which === "max"
           ? value > limit.value + slack(limit.value)
           : Math.max(value, read) < limit.value - slack(limit.value);
       if (!broken) return [];
-      const onScale = { spelling: limit.scale === "total" ? "total" : "", perModelUnit: 1 };
+      const pHUnit = { spelling: limit.scale === "total" ? "total" : "", perModelUnit: 1 };
       const unit =
-        parameter === "pH" ? onScale : shownIn(seen.constants.facts, parameter, seen.at, now.reading);
+        parameter === "pH" ? pHUnit : shownIn(seen.constants.facts, parameter, seen.at, now.reading);
       const { place } = now.reading;
       return [
         {
@@ -209,12 +199,16 @@ function dosedPerDay({ constants, state, at, volume }: WaterSeen, parameter: Tra
   return volume.litres === null ? 0 : brought / volume.litres;
 }
 
-function plannedFor({ plan }: WaterSeen, parameter: Tracked) {
+function plannedFor({ plan, state }: WaterSeen, parameter: Tracked) {
   if (!plan || parameter === "salinity") return [];
-  return plan.sources.flatMap(({ source, strength }, index) => {
-    const litresPerDay = plan.answer.sources[index]?.totalLPerDay;
+  return plan.sources.flatMap((entry, index) => {
+    const { key, source, strength } = entry;
+    const litresPerDay = plan.answer.sources[index]?.totalLPerDay ?? null;
     const serves = (broughtPerLitre(strength, parameter) ?? 0) > 0;
-    return serves && litresPerDay ? [{ by: source.by, solution: source.solution, litresPerDay }] : [];
+    if (!serves || litresPerDay === null || (litresPerDay === 0 && litresSet(state, key, source) === 0))
+      return [];
+    const set = nameToSet(plan, state, entry);
+    return [{ set, solution: source.solution, litresPerDay, isLimited: isLimited(plan, strength) }];
   });
 }
 

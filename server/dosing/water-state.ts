@@ -11,6 +11,13 @@ export interface Carried {
   readonly reading: ReadValue;
 }
 
+/** Brought at once, a litre of the system's water. */
+export interface Brought {
+  readonly minute: number;
+  readonly alkalinityMeqPerL: number;
+  readonly carbonMmolPerL: number;
+}
+
 export interface WaterState {
   readonly minute: number;
   readonly carried: ByTracked<Carried | null>;
@@ -20,6 +27,8 @@ export interface WaterState {
   /** By cohort, what came and went since its count was declared (the entry's `from`). */
   readonly stock: ReadonlyMap<string, { readonly from: number; readonly change: number }>;
   readonly pH: { readonly minute: number; readonly reading: ReadValue } | null;
+  /** What was brought at once since the last pH and within a day: what no pH and no air has answered yet. */
+  readonly unanswered: readonly Brought[];
   readonly temperature: { readonly minute: number; readonly value: number } | null;
 }
 
@@ -30,6 +39,7 @@ export const startState = (minute: number): WaterState => ({
   stopped: new Set(),
   stock: new Map(),
   pH: null,
+  unanswered: [],
   temperature: null,
 });
 

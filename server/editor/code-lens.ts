@@ -1,7 +1,7 @@
 /** Lenses: today's doses above a system, and a way to record a reading above a log. */
 
 import type { Farm } from "../farm.ts";
-import { dosesSection } from "../report/sheet-doses.ts";
+import { dosesSection, dosesToday } from "../report/sheet-doses.ts";
 import { type LineSpan, linesOf } from "./cursor.ts";
 import { systemOfLine } from "./things.ts";
 
@@ -30,14 +30,17 @@ export function codeLenses(farm: Farm, file: string, kinds: ReadonlySet<LensKind
   });
 }
 
-/** `Today: head-1 112 mL · by hand epsom 40 mL`, or what is missing; null of a system that isn't there any more. */
+/**
+ * `Today: head-1 112 mL · by hand epsom 40 mL`, with what a hand has given already, or what is missing; null of a
+ * system that isn't there any more.
+ */
 export function dosesTitle(farm: Farm, system: string): string | null {
   const assessment = farm.assessments.get(system);
   if (!assessment) return null;
-  const { table, lines } = dosesSection(farm.bound.model, assessment);
-  if (!table) return lines[0] ?? null;
-  const doses = table.rows.map(([solution = "", by = "", aDay = ""]) =>
-    by === "by hand" ? `by hand ${solution} ${aDay}` : `${by} ${aDay}`,
+  const { model } = farm.bound;
+  if (!assessment.plan) return dosesSection(model, assessment).lines[0] ?? null;
+  const doses = dosesToday(model, assessment).map(({ name, by, aDay, given }) =>
+    by === null ? `by hand ${name} ${aDay}${given ? ` (${given})` : ""}` : `${by} ${aDay}`,
   );
   return `Today: ${doses.join(" · ")}`;
 }

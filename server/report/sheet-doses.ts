@@ -1,16 +1,18 @@
 /** The sheet's first part, what to dose today, and what the doses do. */
 import { minutesPerDay, writeMoment } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
-import { changeFigure, doseFigure, figure, rounded, valueFigure } from "../checks/figures.ts";
+import { changeFigure, doseFigure, figure, plannedFigure, rounded, valueFigure } from "../checks/figures.ts";
 import { aboutWhen, atStart, nameOf, oneOf } from "../checks/words.ts";
 import { shownIn } from "../culture/display.ts";
-import type { FarmModel } from "../culture/model.ts";
+import type { FarmModel, Strength } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import { balanceOf } from "../dosing/balance.ts";
+import { givenToday } from "../dosing/given-today.ts";
 import type { Plan } from "../dosing/make-plan.ts";
 import type { PlannedSource } from "../dosing/plan/problem.ts";
+import { isLimited, nameToSet } from "../dosing/plan-rates.ts";
 import { topOffFlow } from "../dosing/rates.ts";
-
+import { broughtPerLitre, type Dosed } from "../dosing/tracked.ts";
 import { type Section, section } from "./sheet-model.ts";
 
 const unitIn = ({ constants, at }: Assessment, name: ParameterName) => shownIn(constants.facts, name, at);
@@ -27,18 +29,14 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
           : "nothing that is held has a source";
     return section(title, { lines: [`Nothing can be planned: ${why}.`] });
   }
-  const rows = plan.sources.map(({ source }, index) => {
-    const planned = plan.answer.sources[index]!;
-    const name = model.solutions.get(source.solution)?.name ?? nameOf(source.solution);
-    return [
-      name,
-      source.device === "hand" ? "by hand" : source.by,
-      planned.totalLPerDay === null ? "unknown" : doseFigure(planned.totalLPerDay),
-      deliveryText(planned),
-      planned.maintenanceLPerDay === null ? "unknown" : doseFigure(planned.maintenanceLPerDay),
-      correctionText(plan, planned),
-    ];
-  });
+  const rows = dosesToday(model, assessment).map((dose) => [
+    dose.name,
+    dose.by ?? "by hand",
+    dose.aDay,
+    dose.given ? [dose.givenAs, dose.given].filter((text) => text !== "").join("; ") : dose.givenAs,
+    dose.toHold,
+    dose.toCorrect,
+  ]);
   const columns = [
     { title: "solution", align: "left", whenNarrow: "cut" },
     { title: "by", align: "left", whenNarrow: "cut" },
@@ -54,6 +52,50 @@ export function dosesSection(model: FarmModel, assessment: Assessment): Section 
   });
 }
 
+export interface DoseToday {
+  readonly name: string;
+  /** The pump's name; null by hand. */
+  readonly by: string | null;
+  /** `75 mL`, or `unknown`. */
+  readonly aDay: string;
+  readonly givenAs: string;
+  readonly toHold: string;
+  readonly toCorrect: string;
+  /** `87 mL given today at 07:30`, of a hand only; null where nothing was. */
+  readonly given: string | null;
+}
+
+/** What the plan gives today, source by source, and what a hand has given of it already. */
+export function dosesToday(model: FarmModel, assessment: Assessment): DoseToday[] {
+  const { plan } = assessment;
+  return (plan?.sources ?? []).map(({ source, strength }, index) => {
+    const planned = plan!.answer.sources[index]!;
+    const limited = isLimited(plan!, strength);
+    const unknown = raisesTooHigh(plan!, strength) ? plannedFigure(0, false) : "unknown";
+    const told = (litres: number | null) => (litres === null ? unknown : plannedFigure(litres, limited));
+    const given = source.device === "hand" ? givenToday(assessment, source.solution) : null;
+    return {
+      name: model.solutions.get(source.solution)?.name ?? nameOf(source.solution),
+      by: source.device === "hand" ? null : source.by,
+      aDay: told(planned.totalLPerDay),
+      givenAs: deliveryText(planned, limited),
+      toHold: told(planned.maintenanceLPerDay),
+      toCorrect: correctionText(plan!, planned, limited),
+      given: given && `${doseFigure(given.litres)} given today at ${clockOf(given.minute)}`,
+    };
+  });
+}
+
+const clockOf = (minute: number): string => writeMoment(minute).slice(11);
+
+/** What is above its greatest value: nothing that raises it is given. */
+const tooHigh = ({ problem }: Plan): Dosed[] =>
+  problem.parameters.flatMap(({ name, now, max }) =>
+    now !== null && max !== null && now > max ? [name as Dosed] : [],
+  );
+const raisesTooHigh = (plan: Plan, strength: Strength): boolean =>
+  tooHigh(plan).some((name) => (broughtPerLitre(strength, name) ?? 0) > 0);
+
 /** What runs in by itself, and the plan works around. */
 export function topOffLine(model: FarmModel, { constants, at }: Assessment): string[] {
   const flow = topOffFlow(constants, at);
@@ -64,16 +106,21 @@ export function topOffLine(model: FarmModel, { constants, at }: Assessment): str
   ];
 }
 
-function deliveryText({ dosesPerDay, litresPerDose, everyDays }: PlannedSource): string {
+function deliveryText({ dosesPerDay, litresPerDose, everyDays }: PlannedSource, limited: boolean): string {
   if (dosesPerDay === 0) return "";
   const doses = dosesPerDay === 1 ? "1 dose" : `${dosesPerDay} doses`;
-  return `${doses} of ${doseFigure(litresPerDose)}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
+  const each = plannedFigure(litresPerDose, limited);
+  return `${doses} of ${each}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
 }
 
-function correctionText({ answer }: Plan, { correctionLPerDay, serves }: PlannedSource): string {
+function correctionText(
+  { answer }: Plan,
+  { correctionLPerDay, serves }: PlannedSource,
+  limited: boolean,
+): string {
   const days = answer.corrections.find(({ parameter }) => parameter === serves)?.days;
   return correctionLPerDay > 0 && days !== undefined
-    ? `${doseFigure(correctionLPerDay)} for ${figure(days, "days")}`
+    ? `${plannedFigure(correctionLPerDay, limited)} for ${figure(days, "days")}`
     : "";
 }
 
@@ -114,7 +161,10 @@ function planLines(assessment: Assessment, plan: Plan): string[] {
       ? [`${source.by} stands stopped in the log: start it, or what is planned for it stays out.`]
       : [],
   );
-  return [...stopped, ...changes, ...unknownLines];
+  const none = tooHigh(plan).map(
+    (name) => `Nothing that raises ${name} is given while it is above its limit.`,
+  );
+  return [...stopped, ...none, ...changes, ...unknownLines];
 }
 
 /** Longer, a line wouldn't fit the sheet. */
@@ -126,19 +176,22 @@ const reason = (by: string): string =>
     ? `the limit on ${by}`
     : by;
 
-/** The `set` lines that put the pumps' part of the plan into the log: now, and when a correction or cut ends. */
-function setLines({ at }: Assessment, { answer, sources }: Plan): string[] {
-  const known = (index: number) => answer.sources[index]?.totalLPerDay !== null;
+/** The `set` lines that put the plan into the log: now, and when a correction or cut ends. */
+function setLines({ at, state }: Assessment, plan: Plan): string[] {
+  const { answer, sources } = plan;
+  const names = sources.map((entry, index) =>
+    answer.sources[index]?.totalLPerDay === null ? null : nameToSet(plan, state, entry),
+  );
   const rates = (litres: readonly number[]) =>
-    sources.map((_, index) => `${figure((litres[index] ?? 0) * 1000, "mL")}/day`);
+    sources.map(
+      ({ strength }, index) => `${plannedFigure(litres[index] ?? 0, isLimited(plan, strength))}/day`,
+    );
   let before: readonly string[] = [];
   return answer.phases.flatMap(({ litresPerDay }, phase) => {
     const days = phase === 0 ? 0 : (answer.phases[phase - 1]?.untilDays ?? 0);
     const now = rates(litresPerDay);
-    const items = sources.flatMap(({ source }, index) =>
-      source.device === "pump" && known(index) && now[index] !== before[index]
-        ? [`${source.by} ${now[index]}`]
-        : [],
+    const items = names.flatMap((name, index) =>
+      name !== null && now[index] !== before[index] ? [`${name} ${now[index]}`] : [],
     );
     before = now;
     return setLine(Math.round(at + days * minutesPerDay), items);

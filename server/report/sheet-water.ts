@@ -2,15 +2,14 @@
 
 import { minutesPerDay, writeClock } from "../../grammar/dates.ts";
 import type { ParameterName } from "../../grammar/parameters.ts";
-import { bandFigure, changeFigure, edgeFigure, figure, valueBeside } from "../checks/figures.ts";
-import { dayText } from "../checks/words.ts";
+import { bandFigure, changeFigure, edgeFigure, figure, valueBeside, valueFigure } from "../checks/figures.ts";
+import { allOf, dayText } from "../checks/words.ts";
 import { shownIn } from "../culture/display.ts";
 import { factAt } from "../culture/history.ts";
-import type { ReadValue } from "../culture/model.ts";
+import type { DisplayUnit } from "../culture/model.ts";
 import type { Assessment } from "../dosing/assess.ts";
 import { driftCases } from "../dosing/projection.ts";
-import { isTracked } from "../dosing/tracked.ts";
-
+import { ago, type Latest, latestOf } from "./latest.ts";
 import { type Section, section } from "./sheet-model.ts";
 
 export const rowsInOrder: readonly ParameterName[] = [
@@ -26,30 +25,25 @@ export const rowsInOrder: readonly ParameterName[] = [
   "phosphate",
 ];
 
-export interface Latest {
-  readonly value: number;
-  readonly readAt: number;
-  readonly reading: ReadValue | null;
-}
-
 export function waterSection(assessment: Assessment): Section {
   const { constants, at } = assessment;
   const rows = rowsInOrder.flatMap((name) => {
     const hold = factAt(constants.facts.holds.get(name), at)?.value;
-    const latest = latestOf(assessment, name);
+    const latest = latestOf(assessment, name, hold?.scale);
     if (!hold && !latest) return [];
     const unit = shownIn(constants.facts, name, at, latest?.reading);
     // The unit stands beside the value: a column of it again would make the table too wide.
     const bare = { ...unit, spelling: "" };
-    const scale =
-      name === "pH" && (latest?.reading?.scale === "total" || hold?.scale === "total") ? " total" : "";
+    // The scale of a pH stands beside its name.
+    const shown = name === "pH" ? bare : unit;
+    const scale = (hold?.scale ?? latest?.scale) === "total" ? " total" : "";
     return [
       [
         name + scale,
-        latest ? valueBeside(name, latest.value, hold ? [hold.low, hold.high] : [], unit) : "never read",
+        valueText(name, latest, hold ? [hold.low, hold.high] : [], shown),
         hold ? bandFigure(name, hold.low, hold.high, bare) : "",
         hold ? edgeFigure(name, hold.aim, bare) : "",
-        latest ? ago(at - latest.readAt) : "",
+        readText(name, latest, shown, at),
         ...driftCases.map((each) => leavingText(assessment, name, each)),
       ],
     ];
@@ -64,36 +58,64 @@ export function waterSection(assessment: Assessment): Section {
     { title: "as set", align: "left" },
     { title: "as planned", align: "left" },
   ] as const;
-  const lines = ["The last columns: when the day's mean leaves its hold, looking 14 days ahead."];
+  const lines = [
+    "The last columns: when the day's mean leaves its hold, looking 14 days ahead.",
+    ...notes(assessment),
+  ];
   return section("The water, and when it leaves its hold", { table: { columns, rows }, lines });
 }
 
-/** The value now: carried forward where that is done, else as last read. */
-export function latestOf({ state, readings }: Assessment, name: ParameterName): Latest | null {
-  if (isTracked(name)) return state.carried[name];
-  const found = readings.findLast(({ event }) => {
-    const value = event.values[name];
-    return value && !event.disregarded && !value.impossible && !value.below;
+/** How a value is told in the table: what is stale is no value of now. */
+function valueText(name: ParameterName, latest: Latest | null, edges: readonly number[], unit: DisplayUnit) {
+  if (!latest) return "never read";
+  if (latest.how === "stale") return "stale";
+  return `${latest.below ? "below " : ""}${valueBeside(name, latest.value, edges, unit)}`;
+}
+
+function readText(name: ParameterName, latest: Latest | null, unit: DisplayUnit, at: number): string {
+  if (!latest) return "";
+  const asRead =
+    latest.how === "stale" ? `${latest.below ? "below " : ""}${valueFigure(name, latest.value, unit)}, ` : "";
+  return `${asRead}${ago(latest.readAt, at)}`;
+}
+
+/** What the table's numbers need said of them. */
+function notes(assessment: Assessment): string[] {
+  const { constants, at } = assessment;
+  const known = rowsInOrder.flatMap((name) => {
+    const hold = factAt(constants.facts.holds.get(name), at)?.value;
+    const latest = latestOf(assessment, name, hold?.scale);
+    return latest ? [{ name, latest }] : [];
   });
-  const reading = found?.event.values[name];
-  return found && reading ? { value: reading.value, readAt: found.event.minute, reading } : null;
+  const named = (of: (latest: Latest) => boolean) =>
+    allOf(known.flatMap(({ name, latest }) => (of(latest) ? [name] : [])));
+  const stale = named(({ how }) => how === "stale");
+  const volume = named(({ missing }) => missing === "volume");
+  const uptake = named(({ missing }) => missing === "uptake");
+  const pH = known.find(({ latest }) => latest.before !== null && latest.how !== "stale");
+  return [
+    ...(stale ? [`Stale, test again: ${stale}.`] : []),
+    ...(volume
+      ? [`As read, not carried forward, since the volume of the water isn't known: ${volume}.`]
+      : []),
+    ...(uptake
+      ? [`As read, not carried forward, since what the corals take of it isn't known: ${uptake}.`]
+      : []),
+    ...(pH ? [`pH was read ${pH.latest.before}.`] : []),
+  ];
 }
 
 const minutesPerHour = 60;
 
-/** How long ago, in the largest unit that says something. */
-export function ago(minutes: number): string {
-  if (minutes < minutesPerHour) return `${Math.round(minutes)} min ago`;
-  if (minutes < 2 * minutesPerDay) return `${Math.round(minutes / minutesPerHour)} h ago`;
-  return `${Math.floor(minutes / minutesPerDay)} days ago`;
-}
-
 /** When the mean of a day leaves its hold: a day and hour, `stays`, `outside`; empty where nothing can be said. */
 export function leavingText(
-  { drifts, at }: Assessment,
+  assessment: Assessment,
   name: ParameterName,
   each: (typeof driftCases)[number],
 ): string {
+  const { drifts, at } = assessment;
+  // Where it goes can't be said of what isn't known now.
+  if (latestOf(assessment, name)?.how !== "carried") return "";
   const drift = drifts.find(({ parameter, case: which }) => parameter === name && which === each);
   if (!drift || drift.points.length === 0) return "";
   if (drift.leavesAt === null) return "stays";
@@ -107,7 +129,9 @@ export function leavingText(
 export function uptakeSection(assessment: Assessment): Section {
   const title = "What the corals take";
   const { uptake, volume, constants, at } = assessment;
-  if (!uptake || uptake.basis === "none" || volume.litres === null) {
+  if (volume.litres === null)
+    return section(title, { lines: ["Not known: the volume of the water isn't known."] });
+  if (!uptake || uptake.basis === "none") {
     return section(title, { lines: ["Not known: neither `uptake` nor a `cohort` is written down."] });
   }
   const litres = volume.litres;

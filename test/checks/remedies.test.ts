@@ -7,18 +7,18 @@ import { editedText } from "../../server/checks/apply-fixes.ts";
 import type { Problem } from "../../server/checks/rules.ts";
 import { filesOf, walk } from "./walk.ts";
 
-const problemIn = (text: string, code: string): Problem => {
-  const problem = walk(filesOf(text)).problems.find((other) => other.code === code);
+const problemIn = (text: string, code: string, at?: string): Problem => {
+  const problem = walk(filesOf(text), at).problems.find((other) => other.code === code);
   expect(problem, code).toBeDefined();
   return problem!;
 };
-const titles = (text: string, code: string): string[] =>
-  problemIn(text, code).fixes.map(({ title }) => title);
+const titles = (text: string, code: string, at?: string): string[] =>
+  problemIn(text, code, at).fixes.map(({ title }) => title);
 
 /** The farm after a fix: the lines that it adds or changes, and the codes of what is still told. */
-function done(text: string, code: string, title: string | RegExp) {
+function done(text: string, code: string, title: string | RegExp, at?: string) {
   const files = filesOf(text);
-  const { fixes } = problemIn(text, code);
+  const { fixes } = problemIn(text, code, at);
   const fix = fixes.find((other) =>
     typeof title === "string" ? other.title === title : title.test(other.title),
   );
@@ -33,7 +33,7 @@ function done(text: string, code: string, title: string | RegExp) {
     after,
     file,
     lines: after.split("\n").filter((line) => !had.has(line)),
-    left: walk(new Map([...files, [file, after]])).problems.map((problem) => problem.code),
+    left: walk(new Map([...files, [file, after]]), at).problems.map((problem) => problem.code),
   };
 }
 
@@ -177,6 +177,43 @@ describe("a dose by hand", () => {
   });
 });
 
+describe("a hand whose rate is set", () => {
+  const facts =
+    "  hold alkalinity 7.5 to 8.5 dKH\n  uptake alkalinity 0.2 dKH/day\n  by-hand ash-part\n  by-hand lime-part\n";
+  const code = "water/leaves-hold";
+  const log = (set: string) => `  2026-12-01 07:00 read alkalinity 8 dKH\n  2026-12-01 07:00 set ${set}\n`;
+
+  test("is set anew: a dose of today would come on top", () => {
+    const text = vat(facts, log("ash-part 5 mL/day"));
+    expect(titles(text, code)).toEqual(["Set ash-part to 22 mL/day from now on"]);
+    expect(problemIn(text, code).todo).toBe("Set ash-part to 22 mL/day.");
+    const { lines, left } = done(text, code, /^Set /);
+    expect(lines).toEqual(["  2026-12-01 08:00 set ash-part 22 mL/day"]);
+    expect(left).toEqual([]);
+  });
+
+  test("and so is one that `always` gives something of", () => {
+    const always = facts.replace("by-hand ash-part", "by-hand ash-part always 5 mL/day");
+    const text = vat(always, "  2026-12-01 07:00 read alkalinity 8 dKH\n");
+    expect(titles(text, code)).toEqual(["Set ash-part to 22 mL/day from now on"]);
+  });
+
+  test("also where the plan gives nothing of it", () => {
+    const held = `${facts}  hold calcium 400 to 440 mg/L\n  uptake calcium 0 mg/L/day\n`;
+    const text = vat(
+      held,
+      log("ash-part 22 mL/day, lime-part 100 mL/day").replace("8 dKH", "8 dKH, calcium 435 mg/L"),
+    );
+    expect(titles(text, "water/leaves-hold-soon")).toEqual(["Set lime-part to 0 mL/day from now on"]);
+  });
+
+  test("not where a pump gives the same: a line couldn't say which of them", () => {
+    const both = `${facts}  pump head-1 gives ash-part at 40 mL/min from 2026-12-01 07:30\n`;
+    const text = vat(both, log("ash-part 5 mL/day"));
+    expect(titles(text, code).filter((title) => title.includes("ash-part"))).toEqual([]);
+  });
+});
+
 describe("a dose in parts", () => {
   const facts =
     "  by-hand ash-part\n  by-hand lime-part\n  uptake alkalinity 0 dKH/day\n  uptake calcium 0 mg/L/day\n";
@@ -186,15 +223,15 @@ describe("a dose in parts", () => {
 
   test("on the same day where the limit on one dose alone is broken", () => {
     // 70 mL: 0.63 dKH, limits 0.5 dKH a dose and 0.7 dKH a day.
-    const text = gave("2026-12-01 07:30 gave ash-part 70 mL by ro # all of it");
+    const text = gave("2026-12-01 07:50 gave ash-part 70 mL by ro # all of it");
     const { after, left } = done(
       text,
       "overdose/alkalinity-dose",
-      "Split into 2 doses over the day, 35 mL each",
+      "Split into 2 doses over the day, 35 mL each (if it isn't given yet; the later lines wait for their time)",
     );
     expect(
       after.endsWith(
-        "  2026-12-01 07:30 gave ash-part 35 mL by ro # all of it\n  2026-12-01 09:30 gave ash-part 35 mL by ro\n",
+        "  2026-12-01 07:50 gave ash-part 35 mL by ro # all of it\n  2026-12-01 09:50 gave ash-part 35 mL by ro\n",
       ),
     ).toBe(true);
     expect(left).toEqual([]);
@@ -202,13 +239,13 @@ describe("a dose in parts", () => {
 
   test("each of its lines at its place, and only the dose that is too large", () => {
     const text = gave(
-      "2026-11-30 08:30 gave lime-part 40 mL, ash-part 70.5 mL",
-      '  2026-11-30 09:00 note "by the door"\n  2026-12-01 06:00 read calcium 423 mg/L\n',
+      "2026-12-01 07:50 gave lime-part 40 mL, ash-part 70.5 mL",
+      '  2026-12-01 09:00 note "by the door"\n  2026-12-02 06:00 read calcium 423 mg/L\n',
     );
     const { after, left } = done(text, "overdose/alkalinity-dose", /^Split into 2/);
     expect(
       after.endsWith(
-        '  2026-11-30 08:30 gave lime-part 40 mL, ash-part 35.2 mL\n  2026-11-30 09:00 note "by the door"\n  2026-11-30 10:30 gave ash-part 35.2 mL\n  2026-12-01 06:00 read calcium 423 mg/L\n',
+        '  2026-12-01 07:50 gave lime-part 40 mL, ash-part 35.2 mL\n  2026-12-01 09:00 note "by the door"\n  2026-12-01 09:50 gave ash-part 35.3 mL\n  2026-12-02 06:00 read calcium 423 mg/L\n',
       ),
     ).toBe(true);
     expect(left).toEqual([]);
@@ -216,33 +253,38 @@ describe("a dose in parts", () => {
 
   test("over the days where a day is too short: equal, none over the limit on a rise", () => {
     // 110 mL: 0.99 dKH in a day, the limit is 0.7 dKH: two days of 55 mL, 0.49 dKH each.
-    const text = gave("2026-12-01 07:30 gave ash-part 0.11 L");
+    const text = gave("2026-12-01 07:50 gave ash-part 0.11 L");
     for (const code of ["overdose/alkalinity-rise", "overdose/alkalinity-dose"]) {
-      const { lines, left } = done(text, code, "Split over 2 days, 0.055 L each");
+      const { lines, left } = done(
+        text,
+        code,
+        "Split over 2 days, 0.055 L each (if it isn't given yet; the later lines wait for their time)",
+      );
       expect(lines).toEqual([
-        "  2026-12-01 07:30 gave ash-part 0.055 L",
-        "  2026-12-02 07:30 gave ash-part 0.055 L",
+        "  2026-12-01 07:50 gave ash-part 0.055 L",
+        "  2026-12-02 07:50 gave ash-part 0.055 L",
       ]);
       expect(left).toEqual([]);
     }
   });
 
   test("a bare date stays bare", () => {
-    const text = gave("2026-11-30 gave ash-part 110 mL");
-    // At noon of the day before: 20 hours ago.
-    const { lines, left } = done(text, "overdose/alkalinity-rise", "Split over 2 days, 55 mL each");
-    expect(lines).toEqual(["  2026-11-30 gave ash-part 55 mL", "  2026-12-01 gave ash-part 55 mL"]);
+    const text = gave("2026-12-01 gave ash-part 110 mL");
+    // It counts as at noon, ten minutes ago.
+    const at = "2026-12-01T12:10";
+    const { lines, left } = done(text, "overdose/alkalinity-rise", /^Split over 2 days, 55 mL each/, at);
+    expect(lines).toEqual(["  2026-12-01 gave ash-part 55 mL", "  2026-12-02 gave ash-part 55 mL"]);
     expect(left).toEqual([]);
-    expect(titles(gave("2026-11-30 gave ash-part 70 mL"), "overdose/alkalinity-dose")).toEqual([]);
+    expect(titles(gave("2026-12-01 gave ash-part 70 mL"), "overdose/alkalinity-dose", at)).toEqual([]);
   });
 
   test("what other doses of the day leave room for comes first", () => {
     // 0.7 dKH a day are 78.0 mL; 50 mL were given: 28 mL are left today.
-    const text = gave("2026-12-01 07:10 gave ash-part 50 mL", "  2026-12-01 07:30 gave ash-part 70 mL\n");
-    const { lines, left } = done(text, "overdose/alkalinity-rise", /^Split over 2 days, 28 and 41.9 mL$/);
+    const text = gave("2026-12-01 07:10 gave ash-part 50 mL", "  2026-12-01 07:50 gave ash-part 70 mL\n");
+    const { lines, left } = done(text, "overdose/alkalinity-rise", /^Split over 2 days, 28 and 42 mL /);
     expect(lines).toEqual([
-      "  2026-12-01 07:30 gave ash-part 28 mL",
-      "  2026-12-02 07:30 gave ash-part 41.9 mL",
+      "  2026-12-01 07:50 gave ash-part 28 mL",
+      "  2026-12-02 07:50 gave ash-part 42 mL",
     ]);
     expect(left).toEqual([]);
   });
@@ -250,17 +292,39 @@ describe("a dose in parts", () => {
   test("under a greatest value as far as the corals make room", () => {
     // 3.2 of at most 3.25 meq/L, 0.1 meq/L taken a day: 50 mL of 1 meq/mL at once, then up to 100 mL a day.
     const text =
-      "system vat\n  tank main 1000 L\n  uptake alkalinity 0.1 meq/L/day\n  limit alkalinity max 3.25 meq/L\n  limit alkalinity dose 0.5 meq/L\n  by-hand part\n\nsolution part\n  supplies alkalinity 1 meq/mL as bicarbonate\n\nlog vat\n  2026-12-01 07:00 read alkalinity 3.2 meq/L\n  2026-12-01 07:00 gave part 120 mL\n";
-    const { lines, left } = done(text, "overdose/alkalinity-max", "Split over 2 days, 50 and 70 mL");
-    expect(lines).toEqual(["  2026-12-01 07:00 gave part 50 mL", "  2026-12-02 07:00 gave part 70 mL"]);
+      "system vat\n  tank main 1000 L\n  uptake alkalinity 0.1 meq/L/day\n  limit alkalinity max 3.25 meq/L\n  limit alkalinity dose 0.5 meq/L\n  by-hand part\n\nsolution part\n  supplies alkalinity 1 meq/mL as bicarbonate\n\nlog vat\n  2026-12-01 08:00 read alkalinity 3.2 meq/L\n  2026-12-01 08:00 gave part 120 mL\n";
+    const { lines, left } = done(
+      text,
+      "overdose/alkalinity-max",
+      "Split over 2 days, 50 and 70 mL (if it isn't given yet; the later lines wait for their time)",
+    );
+    expect(lines).toEqual(["  2026-12-01 08:00 gave part 50 mL", "  2026-12-02 08:00 gave part 70 mL"]);
     expect(left).toEqual([]);
   });
 
-  test("not where it is long past, others follow, or seven days aren't enough", () => {
-    expect(titles(gave("2026-11-30 07:30 gave ash-part 70 mL"), "overdose/alkalinity-dose")).toEqual([]);
-    const followed = gave("2026-12-01 07:30 gave ash-part 110 mL", "  2026-12-01 07:40 gave ash-part 1 mL\n");
+  test("not once it has gone in: longer ago than writing it down takes", () => {
+    const splits = (time: string) =>
+      titles(gave(`2026-12-01 ${time} gave ash-part 70 mL`), "overdose/alkalinity-dose");
+    expect(splits("07:44")).toEqual([]);
+    expect(splits("07:45")).toHaveLength(1);
+  });
+
+  test("in parts that add up to what was written", () => {
+    // At most 0.5 dKH, 55.7 mL, at once: three days, 53.37 mL each.
+    const { lines } = done(
+      gave("2026-12-01 07:50 gave ash-part 160.1 mL"),
+      "overdose/alkalinity-rise",
+      /^Split over 3 days, 53.3, 53.3 and 53.5 mL /,
+    );
+    const parts = lines.map((line) => Number(/([\d.]+) mL/.exec(line)?.[1]));
+    expect(parts).toHaveLength(3);
+    expect(parts.reduce((sum, part) => sum + part, 0)).toBeCloseTo(160.1, 9);
+  });
+
+  test("not where others follow, or seven days aren't enough", () => {
+    const followed = gave("2026-12-01 07:50 gave ash-part 110 mL", "  2026-12-01 07:55 gave ash-part 1 mL\n");
     expect(titles(followed, "overdose/alkalinity-rise")).toEqual([]);
-    expect(titles(gave("2026-12-01 07:30 gave ash-part 900 mL"), "overdose/alkalinity-rise")).toEqual([]);
+    expect(titles(gave("2026-12-01 07:50 gave ash-part 900 mL"), "overdose/alkalinity-rise")).toEqual([]);
   });
 
   test("no top-up with a solution, which is no line of doses", () => {
@@ -277,8 +341,8 @@ describe("exchanged water", () => {
     // (12.6 − 10) ÷ (12.6 − 7) of 500 L is 232.1 L; a fall of 1 dKH, the default, 89.3 L.
     const text = with_("  hold alkalinity 9 to 11 dKH\n", "  2026-12-01 07:00 read alkalinity 12.6 dKH\n");
     expect(titles(text, "water/beyond-limit")).toEqual([
-      "Write renewed 89.2 L with mix (brings alkalinity to 11.6 dKH, as far as a day's limit allows)",
-      "Write renewed 233 L with mix (brings alkalinity to 10.0 dKH, more at once than a day's limit allows)",
+      "Write renewed 89.2 L with mix (brings alkalinity to 11.6 dKH, as far as a day's limit on alkalinity allows)",
+      "Write renewed 233 L with mix (brings alkalinity to 10.0 dKH, more at once than a day's limit on alkalinity allows)",
       "Disregard this line: say why",
     ]);
     const { lines, left } = done(text, "water/beyond-limit", /^Write renewed 233/);
@@ -327,6 +391,31 @@ describe("exchanged water", () => {
     expect(titles(`use "mix.marl"\n\n${apart}`, "water/beyond-limit")).toHaveLength(3);
   });
 
+  test("keeps a day's limit on everything that it changes, and says what else it moves", () => {
+    // Salinity falls by 7.2 in a whole exchange and by 1 a day at most: 0.1389 of 500 L are 69.4 L.
+    const text = with_(
+      "  hold alkalinity 9 to 11 dKH\n  limit alkalinity fall 5 dKH/day\n  hold salinity 30 to 38\n",
+      "  2026-12-01 07:00 read alkalinity 12.6 dKH, salinity 37.2\n",
+    );
+    expect(titles(text, "water/beyond-limit").slice(0, 2)).toEqual([
+      "Write renewed 69.4 L with mix (brings alkalinity to 11.8 dKH and salinity to 36.2, as far as a day's limit on salinity allows)",
+      "Write renewed 233 L with mix (brings alkalinity to 10.0 dKH and salinity to 33.9, more at once than a day's limit on salinity allows)",
+    ]);
+  });
+
+  test("isn't for what only salinity puts outside its band", () => {
+    const text = with_(
+      "  hold alkalinity 7.5 to 8.5 dKH\n  hold salinity 34 to 36\n",
+      "  2026-12-01 07:00 read alkalinity 8.9 dKH, salinity 37.5\n",
+    );
+    const problems = walk(filesOf(text)).problems;
+    expect(problems.map(({ code }) => code)).toContain("water/salinity-is-the-cause");
+    const high = problems.find(({ message }) => message.startsWith("Alkalinity is 8.9"))!;
+    expect(high.fixes.map(({ title }) => title)).toEqual(["Disregard this line: say why"]);
+    const salinity = problems.find(({ message }) => message.startsWith("Salinity is 37.5"))!;
+    expect(salinity.fixes[0]?.title).toContain("brings salinity to 36.5");
+  });
+
   test("of many waters the first three", () => {
     const many = [1, 2, 3, 4].map((number) => mix.replace("mix", `mix-${number}`)).join("");
     const text = with_(
@@ -349,6 +438,15 @@ describe("a reading set aside", () => {
       '  2026-12-01 07:00 read salinity 22 with strips disregard "say why" by ro # old strips',
     ]);
     expect(left).toEqual(["reading/disregarded"]);
+  });
+
+  test("isn't offered where a dose since then brought the water beyond its limit", () => {
+    const facts = "  hold alkalinity 7.5 to 8.5 dKH\n  uptake alkalinity 0 dKH/day\n";
+    const log = "  2026-12-01 07:00 read alkalinity 8 dKH\n  2026-12-01 07:30 gave ash-part 600 mL\n";
+    expect(titles(vat(facts, log), "water/beyond-limit")).toEqual([]);
+    expect(titles(vat(facts, log.replace("8 dKH", "12.5 dKH")), "water/beyond-limit")).toEqual([
+      "Disregard this line: say why",
+    ]);
   });
 
   test("isn't offered where the band is left by reckoning", () => {

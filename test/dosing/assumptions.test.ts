@@ -35,6 +35,13 @@ describe("assumptions", () => {
     expect(listed("  hold calcium 10 to 11 mmol/kg\n  hold salinity 34 to 36", "")).not.toContain("salinity");
   });
 
+  it("an uptake that isn't known, where its value is carried on", () => {
+    const what = "what the corals take of alkalinity";
+    expect(listed("", read)).toContain(what);
+    expect(listed("  uptake alkalinity 0.1 meq/L/day", read)).not.toContain(what);
+    expect(listed("", "  2026-11-01 08:00 read calcium 420 mg/L")).not.toContain(what);
+  });
+
   it("what a water that came in doesn't state", () => {
     expect(listed("", `${read}\n  2026-11-02 08:00 renewed 100 L with mix`)).toContain("calcium of mix");
     expect(listed("", `${read}\n  2026-11-02 08:00 renewed 100 L with mix`, "2026-11-20")).not.toContain(

@@ -210,6 +210,28 @@ describe("pH and precipitation right after", () => {
     expect(peak(log("bicarbonate"), loose)).toEqual([]);
   });
 
+  it("starts from the pH that other doses since its reading have left", () => {
+    const steps = (log: string) =>
+      system(text(log, "  limit pH dose 0"), "2026-11-20").findings.flatMap((told) =>
+        told.code === "overdose/ph" && told.of === "dose" ? [told] : [],
+      );
+    // Carbon is closed: two doses at once come to what their sum does.
+    const [whole] = steps("  2026-11-01 08:00 gave caustic 400 mL");
+    const twice = steps("  2026-11-01 08:00 gave caustic 190 mL\n  2026-11-01 08:00 gave caustic 210 mL");
+    expect(twice).toHaveLength(2);
+    expect(twice[1]!.before).toBeCloseTo(twice[0]!.after, 2);
+    expect(twice[1]!.after).toBeCloseTo(whole!.after, 2);
+    const inOneLine = steps("  2026-11-01 08:00 gave caustic 190 mL, caustic 210 mL");
+    expect(inOneLine[1]!.after).toBeCloseTo(whole!.after, 2);
+    // A pH that was read since says it itself, and so does a day with the air.
+    const read = steps(
+      "  2026-11-01 08:00 gave caustic 200 mL\n  2026-11-01 08:30 read pH 8.2\n  2026-11-01 08:40 gave caustic 200 mL",
+    );
+    expect(read[1]!.before).toBeCloseTo(8.2, 2);
+    const later = steps("  2026-11-01 08:00 gave caustic 200 mL\n  2026-11-02 08:01 gave caustic 200 mL");
+    expect(later[1]!.before).toBeCloseTo(8.1, 2);
+  });
+
   it("more than 0.1 in one dose is told; less isn't", () => {
     expect(peak("  2026-11-01 08:00 gave caustic 150 mL")).toEqual(["overdose/ph: caustic 150 mL"]);
     expect(peak("  2026-11-01 08:00 gave ash 150 mL")).toEqual([]);

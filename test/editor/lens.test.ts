@@ -51,3 +51,14 @@ test("today's doses, or what is missing for them", () => {
   expect(dosesTitle(farm, "loose")).toBe("Nothing can be planned: nothing is held.");
   expect(dosesTitle(farm, "gone")).toBeNull();
 });
+
+test("what a hand has given already today is told beside its dose", () => {
+  const of = (log: string) =>
+    dosesTitle(marked(text.replace("log north-house\n", `log north-house\n${log}`)).farm, "north-house");
+  // Yesterday's, and one to come, are none of today's.
+  const others = "  2026-11-30 07:30 gave epsom 40 mL\n  2026-12-01 18:00 gave epsom 9 mL\n";
+  expect(of(others)).toBe("Today: head-1 67 mL · by hand epsom 50 mL");
+  expect(of(`${others}  2026-12-01 06:10 gave epsom 30 mL\n  2026-12-01 07:30 gave epsom 12 mL\n`)).toBe(
+    "Today: head-1 67 mL · by hand epsom 50 mL (42 mL given today at 07:30)",
+  );
+});

@@ -37,8 +37,27 @@ test("when a correction ends, the line that sets the pump back stands ready", ()
   );
   // 1 dKH at 0.5 a day: two days.
   expect(text).toContain(
-    "2026-12-01 08:00 set head-1 223 mL/day\n    2026-12-03 08:00 set head-1 111 mL/day",
+    "2026-12-01 08:00 set head-1 222 mL/day\n    2026-12-03 08:00 set head-1 111 mL/day",
   );
+});
+
+test("what is given by hand stands with what was given today, and in the log's lines where its rate is set", () => {
+  const facts =
+    "system vat\n  tank main 1000 L\n  hold alkalinity 7.6 to 8.4 dKH\n  uptake alkalinity 0.5 dKH/day\n  by-hand ash\n";
+  const log = "\nlog vat\n  2026-12-01 07:00 read alkalinity 8 dKH\n";
+  const given = sheet(`${facts}${solution("ash")}${log}  2026-12-01 07:30 gave ash 90 mL\n`);
+  expect(given).toMatch(/ash +by hand +\d+ mL +1 dose of \d+ mL; 90 mL given today at 07:30/);
+  expect(given).not.toContain(" set ash");
+  const set = sheet(`${facts}${solution("ash")}${log}  2026-12-01 07:30 set ash 90 mL/day\n`);
+  expect(set).toContain("2026-12-01 08:00 set ash 111 mL/day");
+});
+
+test("nothing is given of what is above its limit, though the uptake isn't known", () => {
+  const text = sheet(
+    `system vat\n  tank main 1000 L\n  hold alkalinity 7.6 to 8.4 dKH\n  by-hand ash\n${solution("ash")}\nlog vat\n  2026-12-01 07:00 read alkalinity 12.6 dKH\n`,
+  );
+  expect(text).toMatch(/ash +by hand +0 mL/);
+  expect(text).toContain("Nothing that raises alkalinity is given while it is above its limit.");
 });
 
 test("a long unit is never cut: a column that others make up for goes instead", () => {

@@ -6,10 +6,12 @@ import type { Assessment } from "../../dosing/assess.ts";
 import { assuming } from "../../dosing/assumptions.ts";
 import { afterDelivery, waterOf } from "../../dosing/dose-chemistry.ts";
 import { ratesAsSet } from "../../dosing/fold.ts";
+import { flowsSet, topOffFlow } from "../../dosing/rates.ts";
 import { broughtPerLitre, dosed } from "../../dosing/tracked.ts";
 import { uptakeAt } from "../../dosing/uptake.ts";
 import { volumeAt } from "../../dosing/volume.ts";
 import { isStale, type WaterState } from "../../dosing/water-state.ts";
+import { alkalineSince, clockOr } from "../../report/latest.ts";
 import { type Line, led, papers, signedChange, solutionName, unitIn, volumeFigure } from "./parts.ts";
 import { aheadLines, around, eventHere, type Spot, type Tells } from "./spot.ts";
 
@@ -36,12 +38,24 @@ export const gaveTold: Tells = (spot) => {
   if (litres === null)
     return { answer: "What it did isn't known: the volume of the water isn't.", blocks: [] };
   const chemistry = chemistryLines(assessment, water.before, doses, event.minute);
+  const { pH } = water.before;
+  const earlier = pH ? alkalineSince({ ...assessment, at: event.minute }, pH.minute, event) : null;
+  const startsFrom =
+    chemistry.lines.length > 0 && chemistry.assumptions.length > 0 && pH && earlier
+      ? [
+          `It starts from the pH read ${clockOr(pH.minute, event.minute)}, ${earlier}; what doses of the 24 h before brought is reckoned in.`,
+        ]
+      : [];
   return {
     answer: led(
       event.minute > spot.at ? "Will do:" : "Did:",
       changesText(assessment, water.before, doses, litres, event.minute),
     ),
-    blocks: [unknownLines(spot, doses, event.minute), chemistry.lines, aheadLines(spot, event.minute)],
+    blocks: [
+      unknownLines(spot, doses, event.minute),
+      [...chemistry.lines, ...startsFrom],
+      aheadLines(spot, event.minute),
+    ],
     assumptions: chemistry.assumptions,
     sources: chemistry.lines.length > 0 ? [papers.carbonate, papers.nbs] : [],
   };
@@ -168,7 +182,7 @@ const beforeLines = (assessment: Assessment, before: WaterState): string[] => [
   `Before it: ${netText(assessment, before)}`,
 ];
 
-/** `alkalinity falls 0.62 dKH a day (1.23 taken)`, of what is held. */
+/** `alkalinity falls 0.62 dKH a day, 1.23 dKH taken`, of what is held. */
 function netText(assessment: Assessment, state: WaterState): string {
   const { constants } = assessment;
   const { minute } = state;
@@ -176,18 +190,32 @@ function netText(assessment: Assessment, state: WaterState): string {
   const { litres } = volumeAt(constants.facts, minute);
   if (!rates || litres === null) return "what it does isn't known: the volume of the water isn't.";
   const uptake = uptakeAt(constants.facts, state, minute, litres, constants.firstEvent);
+  const flows = flowsRunning(state, minute, constants);
   const moves = dosed.flatMap((name) => {
     if (!factAt(constants.facts.holds.get(name), minute)) return [];
     const unit = unitIn(assessment, name);
     const gain = rates.gainPerDay[name];
     const taken = uptake.perDay[name];
-    if (gain === null) return [`${name} by an unknown amount: its uptake isn't stated`];
     const value = state.carried[name]?.value;
     const exchanged = value === undefined ? 0 : rates.exchangePerDay * (rates.incoming[name] - value);
+    if (gain === null || taken === null) {
+      const brought = flows.reduce((sum, { solution, litresPerDay }) => {
+        const strength = constants.strengthAt(solution, minute);
+        return sum + (litresPerDay * ((strength && broughtPerLitre(strength, name)) ?? 0)) / litres;
+      }, 0);
+      const doses = brought > 0 ? `${changeFigure(name, brought, unit)} a day` : "nothing";
+      return [`${name}: the doses bring ${doses}, uptake not known`];
+    }
     const net = gain + exchanged;
     const way = net >= 0 ? "rises" : "falls";
-    const takes = taken === null ? "" : `, ${changeFigure(name, taken / litres, unit)} taken`;
+    const takes = `, ${changeFigure(name, taken / litres, unit)} taken`;
     return [`${name} ${way} ${changeFigure(name, Math.abs(net), unit)} a day${takes}`];
   });
   return moves.length > 0 ? `${moves.join("; ")}.` : "nothing that is held changes.";
+}
+
+/** What runs as things are set, the top-off with it. */
+function flowsRunning(state: WaterState, minute: number, constants: Assessment["constants"]) {
+  const topOff = topOffFlow(constants, minute);
+  return [...flowsSet(constants, state, minute), ...(topOff ? [topOff] : [])];
 }

@@ -1,6 +1,7 @@
 /** Short lines of a system's section: uptake, skeleton, air, light, evaporation, food, top-off, flow-through. */
 import { minutesPerDay } from "../../../grammar/dates.ts";
 import { changeFigure, figure, rounded } from "../../checks/figures.ts";
+import { causticGear } from "../../checks/hazard.ts";
 import { calcificationPerMeq } from "../../chemistry/calcification.ts";
 import { pco2OfAir } from "../../chemistry/carbon-before.ts";
 import { fromAlkalinityAndPco2 } from "../../chemistry/carbonate-system.ts";
@@ -12,8 +13,8 @@ import type { History } from "../../culture/history.ts";
 import type { Assessment } from "../../dosing/assess.ts";
 import { salinityNow, temperatureNow, waterOf } from "../../dosing/dose-chemistry.ts";
 import { ratesAt } from "../../dosing/fold.ts";
-import { topOffFlow } from "../../dosing/rates.ts";
 import { nitrificationMeqPerDay } from "../../dosing/uptake.ts";
+import { isCausticByStrength } from "../../report/sheet-solutions.ts";
 import { uptakeSection } from "../../report/sheet-water.ts";
 import {
   amount,
@@ -150,14 +151,14 @@ const topOffTold = fact(
       ({ from, until }) => from <= at && at < until,
     )?.value;
     const lasts = evaporates === undefined ? null : lasting(litres, evaporates);
-    const flow = topOffFlow(constants, at);
-    const strength = flow && constants.strengthAt(flow.solution, at);
+    const strength = solution === null ? null : constants.strengthAt(solution, at);
     const brings = solution === null ? "fresh water" : solutionName(model, solution);
     return {
       answer: `${volumeFigure(litres)} of ${brings}${lasts ? `: ${lasts} at ${volumeFigure(evaporates ?? 0)} a day` : ""}.`,
       blocks: [
         evaporates === undefined ? ["How long it lasts isn't known: add an evaporates line."] : [],
         strength ? [`1 mL brings ${strengthText(strength)}.`] : [],
+        strength && isCausticByStrength(strength) ? [`Caustic. ${causticGear}.`] : [],
       ],
       assumptions: solution === null ? [] : assumptions.filter(({ what }) => what === "evaporation"),
     };

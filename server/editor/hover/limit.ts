@@ -11,25 +11,30 @@ import {
   valueBeside,
 } from "../../checks/figures.ts";
 import { shownIn } from "../../culture/display.ts";
-import type { FarmModel, Limit } from "../../culture/model.ts";
+import type { DisplayUnit, FarmModel, Limit } from "../../culture/model.ts";
 import type { Assessment } from "../../dosing/assess.ts";
 import { assuming } from "../../dosing/assumptions.ts";
 import { ratesAsSet, ratesAt } from "../../dosing/fold.ts";
 import { plannedPhases } from "../../dosing/make-plan.ts";
 import type { Rates } from "../../dosing/rates.ts";
 import { broughtPerLitre, dosed, isTracked, type Tracked } from "../../dosing/tracked.ts";
-import { ago, latestOf } from "../../report/sheet-water.ts";
+import { ago, latestOf } from "../../report/latest.ts";
 import { carriedAssumptions } from "./hold.ts";
-import { entryHere, led, notNow, papers, solutionName, type Told } from "./parts.ts";
+import { differenceUnit, type Instrument, instrumentAt, latestIn } from "./instrument.ts";
+import { distanceFigure, entryHere, led, notNow, papers, solutionName, type Told, unitOn } from "./parts.ts";
 import type { Tells } from "./spot.ts";
+import { isTurned, notCarriedLines, reckonedLines, staleText, whenText } from "./value.ts";
 
 interface Asked {
   readonly model: FarmModel;
   readonly assessment: Assessment;
+  /** In the unit of the line, like the values beside it. */
   readonly limit: Limit;
+  readonly instrument: Instrument | null;
+  readonly unit: DisplayUnit;
 }
 
-export const limitTold: Tells = ({ model, assessment, statement, place, at }) => {
+export const limitTold: Tells = ({ farm, model, assessment, statement, place, at }) => {
   if (!assessment || statement.kind !== "limit") return null;
   const parameter = parameterOf(statement.parameter.text)?.name;
   const key = `${parameter} ${statement.which}`;
@@ -37,26 +42,34 @@ export const limitTold: Tells = ({ model, assessment, statement, place, at }) =>
   const entry = history && entryHere(history, place, at);
   if (!parameter || !entry) return null;
   const late = notNow(entry, history, at);
-  if (late.length > 0)
-    return { answer: limitText({ model, assessment, limit: entry.value }), blocks: [late] };
-  return byKind[statement.which]({ model, assessment, limit: entry.value });
+  const limit = entry.value;
+  const usual = unitOn(
+    parameter === "pH" ? (limit.scale ?? "NBS") : null,
+    shownIn(assessment.constants.facts, parameter, at),
+  );
+  const isValue = statement.which === "max" || statement.which === "min";
+  const instrument = isValue ? instrumentAt(farm, entry.place, parameter) : null;
+  const unit = isValue ? (instrument?.unit ?? usual) : differenceUnit(farm, entry.place, parameter, usual);
+  const value = instrument ? instrument.of(limit.value) : limit.value;
+  const asked = { model, assessment, limit: { ...limit, value }, instrument, unit };
+  return late.length > 0 ? { answer: limitText(asked), blocks: [late] } : byKind[statement.which](asked);
 };
 
-const unitOf = ({ assessment, limit }: Asked) =>
-  shownIn(assessment.constants.facts, limit.parameter, assessment.at);
-
 function edge(asked: Asked): string {
-  const { parameter, which, value, scale } = asked.limit;
-  const text = edgeFigure(parameter, value, unitOf(asked));
+  const { parameter, which, value } = asked.limit;
+  const text = edgeFigure(parameter, value, asked.unit);
   const rate = which === "rise" || which === "fall" ? " a day" : "";
-  return `${text}${rate}${scale === "total" ? " (total scale)" : ""}`;
+  return `${text}${rate}`;
 }
 
 /** A change beside the limit; a plan stands on it to the last bits, and that is no difference. */
 function besideLimit(asked: Asked, change: number): string {
   const { parameter, value } = asked.limit;
-  const isOnIt = Math.abs(change - value) < 1e-6 * Math.abs(value);
-  return changeBeside(parameter, isOnIt ? value : change, value, unitOf(asked));
+  const isBeyond = change > value + 1e-6 * Math.abs(value);
+  // Only what is beyond it needs the digits that show that.
+  return isBeyond
+    ? changeBeside(parameter, change, value, asked.unit)
+    : changeFigure(parameter, change, asked.unit);
 }
 
 const limitText = (asked: Asked): string => `${asked.limit.parameter} ${asked.limit.which} ${edge(asked)}`;
@@ -65,22 +78,60 @@ const limitText = (asked: Asked): string => `${asked.limit.parameter} ${asked.li
 function beyond(asked: Asked): Told {
   const { parameter, which, value } = asked.limit;
   const { assessment } = asked;
-  const unit = unitOf(asked);
-  const latest = latestOf(assessment, parameter);
-  if (!latest) return { answer: `${parameter} was never read; the ${which} is ${edge(asked)}.`, blocks: [] };
-  const off = latest.value - value;
-  const is =
-    off === 0 ? "right at" : `${changeFigure(parameter, Math.abs(off), unit)} ${off > 0 ? "above" : "below"}`;
-  const broken = which === "max" ? off > 0 : off < 0;
+  const { unit } = asked;
+  const { at } = assessment;
+  const latest = latestIn(asked.instrument, latestOf(assessment, parameter, asked.limit.scale));
   const peak = parameter === "pH" && which === "max" ? peakLine(asked) : [];
+  const sources = peak.length > 0 ? [papers.carbonate, papers.nbs] : [];
+  if (!latest)
+    return {
+      answer: `${parameter} was never read; the ${which} is ${edge(asked)}.`,
+      blocks: [peak],
+      sources,
+    };
+  const { value: now, below, how } = latest;
+  const off = now - value;
+  const distance = distanceFigure(parameter, off, unit);
+  const broken = which === "max" ? off > 0 && !below : off < 0 || (below && off === 0);
+  // An old reading above `max` still counts until another says that it has come down.
+  const limit = `the ${which} is ${edge(asked)}`;
+  const most = Math.max(latest.withoutUptake ?? now, latest.reckoned?.value ?? now);
+  const raises =
+    which === "max" && (broken || (most > value && most > now)) && dosed.some((name) => name === parameter);
+  const care = raises ? ["Give nothing that raises it until a test shows it below."] : [];
+  if (how === "stale") {
+    return {
+      answer: led(parameter, `${staleText(parameter, latest, unit, at)}`),
+      blocks: [
+        [`${limit.charAt(0).toUpperCase()}${limit.slice(1)}${broken ? ": it was beyond it" : ""}.`, ...care],
+        peak,
+      ],
+      sources,
+    };
+  }
+  const is = below
+    ? which === "max" && off <= 0
+      ? `below the max of ${edge(asked)}`
+      : which === "min" && off <= 0
+        ? `below the min of ${edge(asked)}`
+        : `whether that keeps the ${which} of ${edge(asked)} can't be told`
+    : `${distance === null ? "right at" : `${distance} ${off > 0 ? "above" : "below"}`} the ${which} of ${edge(asked)}`;
   return {
     answer: led(
-      `${parameter} ${valueBeside(parameter, latest.value, [value], unit)}`,
-      `now, ${is} the ${which} of ${edge(asked)}${broken ? ": beyond it" : ""}.`,
+      `${parameter} ${below ? "below " : ""}${valueBeside(parameter, now, [value], unit)}`,
+      `${whenText(latest, at)}, ${is}${broken ? ": beyond it" : ""}.`,
     ),
-    blocks: [[`Read ${ago(assessment.at - latest.readAt)}.`], peak],
-    assumptions: isTracked(parameter) ? carriedAssumptions(assessment, parameter) : [],
-    sources: peak.length > 0 ? [papers.carbonate, papers.nbs] : [],
+    blocks: [
+      [
+        `Read ${ago(latest.readAt, at)}.`,
+        ...reckonedLines(parameter, latest, unit),
+        ...notCarriedLines(assessment, parameter, latest),
+        ...care,
+      ],
+      peak,
+    ],
+    assumptions: how === "carried" ? carriedAssumptions(assessment, parameter) : [],
+    sources: [...sources, ...(isTurned(latest) ? [papers.nbs] : [])],
   };
 }
 
@@ -96,8 +147,13 @@ function pace(asked: Asked): Told {
   const { assessment, limit } = asked;
   const { parameter, which } = limit;
   const { state, constants, at, plan, volume, uptake } = assessment;
-  if (!isTracked(parameter) || volume.litres === null || uptake === null)
-    return { answer: `The limit is ${edge(asked)}.`, blocks: [[`How ${parameter} moves isn't reckoned.`]] };
+  const limitIs = `The limit is ${which === "fall" ? "a fall" : "a rise"} of ${edge(asked)}.`;
+  if (!isTracked(parameter)) return { answer: limitIs, blocks: [[`How ${parameter} moves isn't reckoned.`]] };
+  if (volume.litres === null || uptake === null)
+    return {
+      answer: limitIs,
+      blocks: [[`How ${parameter} moves isn't known: the volume of the water isn't.`]],
+    };
   const asSet = change(ratesAsSet(state, at, constants), assessment, parameter);
   const situation = { constants, state, litres: volume.litres, uptake, assumed: assuming() };
   const flows = plan ? (plannedPhases(situation, plan)[0]?.flows ?? []) : null;
@@ -111,7 +167,7 @@ function pace(asked: Asked): Told {
   const [planned, set] = [text(asPlanned), text(asSet)];
   const said = [planned && `${planned} as planned`, set && `${set} as set`].filter(Boolean).join(", ");
   const first =
-    said === "" ? "not known: neither its uptake nor a recent reading is" : `${said}, by the mean of the day`;
+    said === "" ? "how it moves isn't known, since its uptake isn't" : `${said}, by the mean of the day`;
   return {
     answer: led(
       `${parameter}:`,

@@ -1,7 +1,7 @@
 /** What hovers are made of: lines of plain words, drawn as Markdown in one place, so that nothing goes out unescaped. */
 import { minutesPerDay, writeMoment } from "../../../grammar/dates.ts";
 import type { ParameterName } from "../../../grammar/parameters.ts";
-import { changeFigure, figure } from "../../checks/figures.ts";
+import { changeFigure, decimalsOf, figure, valueFigure } from "../../checks/figures.ts";
 import { dayText } from "../../checks/words.ts";
 import { shownIn } from "../../culture/display.ts";
 import { type Entry, factAt, type History } from "../../culture/history.ts";
@@ -79,6 +79,22 @@ export const papers = {
 
 export const unitIn = ({ constants, at }: Assessment, name: ParameterName): DisplayUnit =>
   shownIn(constants.facts, name, at);
+
+/** The unit beside a value of the water: of a pH its scale, where that isn't NBS. */
+export const unitOn = (scale: "NBS" | "total" | null, unit: DisplayUnit): DisplayUnit =>
+  scale === null ? unit : { spelling: scale === "total" ? "total" : "", perModelUnit: 1 };
+
+/** How far apart two values are, at the digits of a value; one digit finer where that would show nothing. Null for none. */
+export function distanceFigure(name: ParameterName, size: number, unit: DisplayUnit): string | null {
+  const own = name === "pH" ? { ...unit, spelling: "" } : unit;
+  const tells = (text: string) => /[1-9]/.test(text);
+  const text = valueFigure(name, Math.abs(size), own);
+  if (tells(text)) return text;
+  if (decimalsOf(name, own) > 2) return null;
+  const finer = changeFigure(name, Math.abs(size), own);
+  const isSeen = Math.abs(size * own.perModelUnit) >= 0.5 * 10 ** -(decimalsOf(name, own) + 1);
+  return isSeen ? finer : null;
+}
 
 /** A change with its sign: `+0.24 dKH`. */
 export function signedChange(name: ParameterName, change: number, unit: DisplayUnit): string {

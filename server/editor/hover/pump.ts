@@ -1,22 +1,16 @@
 /** A pump, or a hand: what it gives, what it is set to, what the plan asks of it today, what it can give. */
-import { writeClock } from "../../../grammar/dates.ts";
-import { doseFigure } from "../../checks/figures.ts";
+import { writeClock, writeMoment } from "../../../grammar/dates.ts";
+import { doseFigure, plannedFigure } from "../../checks/figures.ts";
 import { defaults } from "../../culture/defaults.ts";
 import { factAt } from "../../culture/history.ts";
 import { type Assumption, type Source, sourceKey } from "../../culture/model.ts";
 import type { Assessment } from "../../dosing/assess.ts";
+import { givenToday } from "../../dosing/given-today.ts";
 import type { PlannedSource } from "../../dosing/plan/problem.ts";
+import { isLimited } from "../../dosing/plan-rates.ts";
 import { capacityLPerDay, litresSet } from "../../dosing/rates.ts";
-import {
-  amount,
-  entryHere,
-  lasting,
-  notNow,
-  shortMoment,
-  solutionName,
-  type Told,
-  volumeFigure,
-} from "./parts.ts";
+import { containerLines, flowText } from "./containers.ts";
+import { entryHere, notNow, shortMoment, solutionName, type Told, volumeFigure } from "./parts.ts";
 import type { Spot, Tells } from "./spot.ts";
 
 /** By the pump's name, or the line of a hand. */
@@ -46,6 +40,12 @@ function sourceTold({ model, place, at }: Spot, assessment: Assessment, key: str
   if (late.length > 0) return { answer: `${called}: gives ${gives}.`, blocks: [late] };
   const index = plan?.sources.findIndex((each) => each.key === key) ?? -1;
   const planned = index < 0 ? undefined : plan?.answer.sources[index];
+  const strength = plan?.sources[index]?.strength;
+  const limited = plan && strength ? isLimited(plan, strength) : false;
+  const given = source.device === "hand" ? givenToday(assessment, source.solution) : null;
+  const already = given
+    ? [`${doseFigure(given.litres)} given today at ${writeMoment(given.minute).slice(11)}.`]
+    : [];
   const stopped = state.stopped.has(key) ? ["It stands stopped: start it, or it gives nothing."] : [];
   const assumptions: Assumption[] = [];
   const use = ({ what, text, basis }: { what: string; text: string; basis: string }) =>
@@ -53,19 +53,22 @@ function sourceTold({ model, place, at }: Spot, assessment: Assessment, key: str
   if (planned && source.device === "pump" && source.leastL === null) use(defaults.pumpLeast);
   if (planned && !source.hours) use(source.device === "pump" ? defaults.pumpHours : defaults.handHours);
   return {
-    answer: `${called}: ${todayText(planned)} of ${gives}${planned ? " today" : ""}.`,
-    blocks: [[setText(assessment, key, source), ...stopped], capacityLines(assessment, key, source)],
+    answer: `${called}: ${todayText(planned, limited)} of ${gives}${planned ? " today" : ""}.`,
+    blocks: [already, [setText(assessment, key, source), ...stopped], capacityLines(assessment, key, source)],
     assumptions,
   };
 }
 
-function todayText(planned: PlannedSource | undefined): string {
+function todayText(planned: PlannedSource | undefined, limited: boolean): string {
   if (!planned) return "nothing is planned";
   const { totalLPerDay, dosesPerDay, litresPerDose, everyDays } = planned;
   if (totalLPerDay === null) return "an unknown volume";
   if (dosesPerDay === 0) return "0 mL";
-  const doses = `${dosesPerDay} ${dosesPerDay === 1 ? "dose" : "doses"} of ${doseFigure(litresPerDose)}`;
-  return `${doseFigure(totalLPerDay)} in ${doses}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
+  const shown = (litres: number) => Number.parseFloat(plannedFigure(litres, limited));
+  // A share that was rounded doesn't add up to the whole.
+  const isExact = dosesPerDay === 1 || shown(totalLPerDay) === shown(litresPerDose) * dosesPerDay;
+  const doses = `${dosesPerDay} ${dosesPerDay === 1 ? "dose" : "doses"} of ${isExact || everyDays > 1 ? "" : "about "}${plannedFigure(litresPerDose, limited)}`;
+  return `${plannedFigure(totalLPerDay, limited)} in ${doses}${everyDays > 1 ? ` every ${everyDays} days` : ""}`;
 }
 
 /** `Set: 310 mL a day since 24 Nov 09:00.` */
@@ -83,22 +86,20 @@ function setText(assessment: Assessment, key: string, source: Source): string {
   return `Set: ${doseFigure(asked)} a day${since}${less}${always}.`;
 }
 
-function capacityLines({ state }: Assessment, key: string, source: Source): string[] {
+function capacityLines(assessment: Assessment, key: string, source: Source): string[] {
   const capacity = capacityLPerDay(source);
-  const { hours, flowLPerDay, leastL, holdingL } = source;
+  const { hours, flowLPerDay, leastL } = source;
   if (source.device === "hand")
     return [source.times === 1 ? "Given once a day." : `Given ${source.times} times a day.`];
   const within = hours ? ` between ${writeClock(hours.from)} and ${writeClock(hours.to)}` : "";
-  const flow = flowLPerDay === null ? [] : [`${amount((1000 * flowLPerDay) / 1440, "mL/min")}`];
+  const flow = flowLPerDay === null ? [] : [flowText(assessment, key, flowLPerDay)];
   const most = capacity === null ? [] : [`at most ${volumeFigure(capacity)} a day${within}`];
   const least = leastL === null ? [] : [`at least ${doseFigure(leastL)} a dose`];
-  const lasts = holdingL === null ? null : lasting(holdingL, litresSet(state, key, source));
-  const container =
-    holdingL === null
-      ? []
-      : [`Its container holds ${volumeFigure(holdingL)}${lasts ? `, ${lasts} as set` : ""}.`];
   const can = [...flow, ...most, ...least];
-  return [...(can.length > 0 ? [`Can give: ${can.join(", ")}.`] : []), ...container];
+  return [
+    ...(can.length > 0 ? [`Can give: ${can.join(", ")}.`] : []),
+    ...containerLines(assessment, key, source),
+  ];
 }
 
 /** What is asked of a source a day at a minute, by its key. */

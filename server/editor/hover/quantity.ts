@@ -59,17 +59,23 @@ export const valueTold: Tells = (spot) => {
   if (statement.kind !== "value" && statement.kind !== "scatter" && statement.kind !== "tolerance")
     return null;
   const others = otherUnits(spot, statement.value, statement);
-  if (!others || others.texts.length === 0) return null;
-  const half = statement.kind === "tolerance" ? ["Taken as two standard deviations."] : [];
+  const texts = others?.texts ?? [];
+  if (texts.length === 0 && statement.kind === "value") return null;
+  const lines = {
+    value: [],
+    scatter: ["One standard deviation."],
+    tolerance: ["Taken as two standard deviations."],
+  };
   return {
-    answer: `${statement.parameter.text} ${writtenOf(statement.value)} = ${others.texts.join(" = ")}.`,
-    blocks: [half],
-    assumptions: others.assumptions,
-    sources: others.sources,
+    answer: `${statement.parameter.text} ${[writtenOf(statement.value), ...texts].join(" = ")}.`,
+    blocks: [lines[statement.kind]],
+    assumptions: others?.assumptions ?? [],
+    sources: others?.sources ?? [],
   };
 };
 
-const writtenOf = ({ number, unit, asCaCO3 }: QuantityText): string =>
+/** As it stands on the line, without its deviation. */
+export const writtenOf = ({ number, unit, asCaCO3 }: QuantityText): string =>
   `${number.text}${unit ? ` ${unit.text}` : ""}${asCaCO3 ? " as CaCO3" : ""}`;
 
 /** How large a deviation is beside its number. */

@@ -1,35 +1,38 @@
 /** A reading: its values, what was expected, the carbonate system, each value at the salinity aim. */
 import { type ParameterName, parameterOf } from "../../../grammar/parameters.ts";
 import type { ReadItem } from "../../../grammar/syntax.ts";
-import {
-  bandFigure,
-  changeFigure,
-  decimalsOf,
-  edgeFigure,
-  figure,
-  valueFigure,
-} from "../../checks/figures.ts";
+import { figure } from "../../checks/figures.ts";
 import { shownIn } from "../../culture/display.ts";
 import { factAt } from "../../culture/history.ts";
-import type { DisplayUnit, Kit, ReadEvent, ReadValue } from "../../culture/model.ts";
+import type { ReadEvent, ReadValue } from "../../culture/model.ts";
 import type { Assessment } from "../../dosing/assess.ts";
 import { afterMinute } from "../../dosing/at-event.ts";
-import { temperatureNow } from "../../dosing/dose-chemistry.ts";
+import { onScale } from "../../dosing/ph-scale.ts";
 import type { ReadingAlone } from "../../dosing/reading-alone.ts";
-import { judgeSalinity } from "../../dosing/salinity-cause.ts";
 import { isTracked } from "../../dosing/tracked.ts";
-import { isStale, type WaterState } from "../../dosing/water-state.ts";
 import { carriedAssumptions } from "./hold.ts";
+import { holdIn, instrumentAt } from "./instrument.ts";
 import { otherUnits } from "./other-units.ts";
-import { led, papers, shortMoment, type Told } from "./parts.ts";
+import { led, notNow, papers, shortMoment, type Told } from "./parts.ts";
+import { writtenOf } from "./quantity.ts";
+import {
+  biasLines,
+  expectedText,
+  kitLines,
+  type Read,
+  readText,
+  salinityText,
+  writtenText,
+} from "./reading-texts.ts";
 import { aheadLines, around, carbonateHere, eventHere, logHere, type Spot, type Tells } from "./spot.ts";
-import { standing } from "./system.ts";
+import { standingText } from "./value.ts";
 
 /** The value that the cursor is in, else the whole line. */
 export const readTold: Tells = (spot) => {
   const { statement, under } = spot;
   if (statement.kind !== "read") return null;
   const { assessment } = spot;
+  if (under.line.section?.kind === "saltwater" && isBeforeItems(spot)) return batchTold(spot);
   const event = eventHere(spot, "read");
   if (!assessment || !event) return null;
   const column = under.word?.start ?? 0;
@@ -39,11 +42,32 @@ export const readTold: Tells = (spot) => {
     : lineTold(spot, assessment, event);
 };
 
-/** One of several numbers that were read. */
-interface Read {
-  readonly name: ParameterName;
-  readonly value: ReadValue;
-  readonly unit: DisplayUnit;
+/** True outside the values of the line, each of which tells itself in other units. */
+const isBeforeItems = ({ statement, under }: Spot): boolean =>
+  statement.kind === "read" && !(under.word?.role === "number" || under.word?.role === "unit");
+
+/** A batch of salt water that was tested: its values from then on. */
+function batchTold({ farm, model, statement, under, place, at }: Spot): Told | null {
+  if (statement.kind !== "read") return null;
+  const name = under.line.section?.name?.text ?? "";
+  const seen = farm.bound.names.visible.get(place.file)?.get(name);
+  const water = seen && model.waters.get(seen.ref);
+  if (!water) return null;
+  if (statement.disregard) return { answer: "Disregarded: it doesn't count.", blocks: [] };
+  const values = statement.items.flatMap((item) => {
+    const parameter = parameterOf(item.parameter.text)?.name;
+    const history = parameter && water.values.get(parameter);
+    const entry = history?.find((each) => each.place.file === place.file && each.place.line === place.line);
+    return entry && history
+      ? [{ text: `${parameter} ${writtenOf(item.value)}`, late: notNow(entry, history, at) }]
+      : [];
+  });
+  if (values.length === 0) return null;
+  const late = [...new Set(values.flatMap((value) => value.late))];
+  return {
+    answer: `${water.name} from ${shortMoment(statement.at.minute)} on: ${values.map(({ text }) => text).join(", ")}.`,
+    blocks: [late.length > 0 ? late : ["It counts instead of what is stated."]],
+  };
 }
 
 function readsOf({ constants }: Assessment, { values, minute }: ReadEvent): Read[] {
@@ -59,9 +83,16 @@ function lineTold(spot: Spot, assessment: Assessment, event: ReadEvent): Told {
   const reads = readsOf(assessment, event);
   const water = around(spot, event);
   const { carbonate, assumptions, with: other } = carbonateHere(spot, assessment, event);
-  const values = reads.map((read) => {
-    const expected = water && expectedText(water.before, read);
-    return `${read.name} ${readText(read)}${expected ? `; expected ${expected}` : ""}`;
+  const then = afterMinute(logHere(spot, assessment), event.minute);
+  const scales = reads.map((read) => salinityText(assessment, then, read));
+  const values = reads.map((read, index) => {
+    const expected = water && expectedText(assessment, water.before, read);
+    const scaled = scales[index];
+    return [
+      `${read.name} ${readText(assessment, then, read, itemOf(spot, read.name))}`,
+      ...(expected ? [expected] : []),
+      ...(scaled ? [scaled] : []),
+    ].join("; ");
   });
   const solved = carbonate ? carbonateText(carbonate, other) : null;
   const carried = reads.flatMap(({ name }) =>
@@ -71,13 +102,25 @@ function lineTold(spot: Spot, assessment: Assessment, event: ReadEvent): Told {
     answer: solved ? led("Carbonate system:", solved) : (values[0] ?? "Nothing was read."),
     blocks: [
       solved ? values : values.slice(1),
-      [...countsLines(spot, event, reads), ...aheadLines(spot, event.minute)],
+      [
+        ...reads.flatMap((read) => biasLines(spot, event, read)),
+        ...countsLines(spot, event, reads),
+        ...aheadLines(spot, event.minute),
+      ],
       solved ? [] : missingLines(reads),
     ],
     assumptions: [...assumptions, ...carried.flatMap((name) => carriedAssumptions(assessment, name))],
-    sources: solved ? sourcesOf(other ?? event) : [],
+    sources: [
+      ...(solved ? sourcesOf(other ?? event) : []),
+      ...(scales.some((each) => each !== null) ? [papers.density] : []),
+    ],
   };
 }
+
+const itemOf = ({ statement }: Spot, name: ParameterName): ReadItem | null =>
+  (statement.kind === "read"
+    ? statement.items.find(({ parameter }) => parameterOf(parameter.text)?.name === name)
+    : null) ?? null;
 
 /** One value of a line. */
 function valueTold(spot: Spot, assessment: Assessment, event: ReadEvent, item: ReadItem): Told | null {
@@ -86,7 +129,7 @@ function valueTold(spot: Spot, assessment: Assessment, event: ReadEvent, item: R
   if (!name || !value) return null;
   const read: Read = { name, value, unit: shownIn(assessment.constants.facts, name, event.minute, value) };
   const water = around(spot, event);
-  const expected = water && expectedText(water.before, read);
+  const expected = water && expectedText(assessment, water.before, read);
   const then = afterMinute(logHere(spot, assessment), event.minute);
   const scaled = salinityText(assessment, then, read);
   const solves = name === "alkalinity" || name === "pH";
@@ -96,22 +139,29 @@ function valueTold(spot: Spot, assessment: Assessment, event: ReadEvent, item: R
     with: other,
   } = solves ? carbonateHere(spot, assessment, event) : noCarbonate;
   const others = otherUnits(spot, item.value, item, then);
-  const kit = kitText(spot, event, read);
-  const hold = factAt(assessment.constants.facts.holds.get(name), event.minute)?.value;
-  const inHold = hold
-    ? `${standing(value.value, hold)} its hold of ${bandFigure(name, hold.low, hold.high, hold.unit)}`
-    : null;
+  const kit = kitLines(spot, event, read);
+  const held = factAt(assessment.constants.facts.holds.get(name), event.minute);
+  const hold = held?.value;
+  const instrument = held && instrumentAt(spot.farm, held.place, name);
+  const onHold = hold ? onScale(value.value, value.scale, hold.scale, then, assessment.constants) : null;
+  const inHold =
+    hold && onHold !== null && !value.impossible
+      ? standingText(
+          { value: instrument ? instrument.of(onHold) : onHold, below: value.below },
+          holdIn(instrument, hold),
+        )
+      : null;
   const equal = others && others.texts.length > 0 ? ` = ${others.texts.join(" = ")}` : "";
   return {
     answer: led(
-      `${name} ${value.below ? "below " : ""}${writtenText(read)}`,
+      `${name} ${value.below ? "below " : ""}${writtenText(name, value, item)}`,
       `${equal}${inHold ? `${equal ? "; " : ""}${inHold}` : ""}.`.replace(/^ /, ""),
     ),
     blocks: [
       [
-        ...(expected ? [led("Expected:", `${expected}.`)] : []),
-        ...(scaled ? [scaled] : []),
-        ...(kit ? [kit] : []),
+        ...(expected ? [`${expected.charAt(0).toUpperCase()}${expected.slice(1)}.`] : []),
+        ...(scaled ? [`${scaled.charAt(0).toUpperCase()}${scaled.slice(1)}.`] : []),
+        ...kit,
       ],
       carbonate
         ? [led("Carbonate system:", `${carbonateText(carbonate, other)}.`)]
@@ -134,65 +184,6 @@ function valueTold(spot: Spot, assessment: Assessment, event: ReadEvent, item: R
 }
 
 const noCarbonate: ReadingAlone = { carbonate: null, assumptions: [], with: null };
-
-/** As the technician wrote it, else in the unit that the parameter is told in. */
-const writtenText = ({ name, value }: Read): string =>
-  valueFigure(name, value.value, value.unit) + (name === "pH" && value.scale !== "total" ? " (NBS)" : "");
-
-const readText = (read: Read): string => {
-  const { name, value, unit } = read;
-  const shown = value.unit.spelling === unit.spelling ? "" : ` (${valueFigure(name, value.value, unit)})`;
-  return `${value.below ? "below " : ""}${writtenText(read)}${shown}`;
-};
-
-/** `7.6 dKH, 0.3 dKH less than was read`: the water carried forward to this moment, just before it was read. */
-function expectedText(before: WaterState, { name, value, unit }: Read): string | null {
-  const carried = isTracked(name) ? before.carried[name] : null;
-  if (!carried || value.impossible) return null;
-  if (isStale(carried, before.minute))
-    return `the reading before (${shortMoment(carried.readAt)}) is too old to tell`;
-  const expected = valueFigure(name, carried.value, unit);
-  if (value.below) return expected;
-  const off = value.value - carried.value;
-  // Less than a test tells apart is no difference.
-  const isSame = Math.abs(off * unit.perModelUnit) < 0.5 * 10 ** -decimalsOf(name, unit);
-  return isSame
-    ? `${expected}, as was read`
-    : `${expected}, ${changeFigure(name, Math.abs(off), unit)} ${off > 0 ? "less" : "more"} than was read`;
-}
-
-/** The value at the salinity aim, where salinity is off its hold. */
-function salinityText(
-  { constants }: Assessment,
-  after: WaterState,
-  { name, value, unit }: Read,
-): string | null {
-  const { minute } = after;
-  const band = factAt(constants.facts.holds.get("salinity"), minute)?.value;
-  const salinity = after.carried.salinity;
-  if (!band || !salinity || isStale(salinity, minute) || name === "salinity" || !isTracked(name)) return null;
-  const hold = factAt(constants.facts.holds.get(name), minute)?.value ?? { low: 0, high: Infinity, aim: 0 };
-  const judged = judgeSalinity(
-    value.value,
-    hold,
-    salinity.value,
-    band,
-    temperatureNow(after, constants, null),
-  );
-  return judged
-    ? `At the salinity aim (${edgeFigure("salinity", band.aim, band.unit)}) it would be ${valueFigure(name, judged.scaled, unit)}; salinity was ${valueFigure("salinity", salinity.value, band.unit)}.`
-    : null;
-}
-
-function kitText({ model }: Spot, event: ReadEvent, { name, unit }: Read): string | null {
-  const kit: Kit | undefined = event.kit === null ? undefined : model.kits.get(event.kit);
-  const deviation = factAt(kit?.deviations.get(name), event.minute)?.value;
-  if (!kit || !deviation) return null;
-  const size = deviation.relative
-    ? `${figure(100 * deviation.value, "%")}`
-    : changeFigure(name, deviation.value, unit);
-  return `Tests with ${kit.name} scatter by ${size} (one standard deviation).`;
-}
 
 /** `pH 7.98 (total), pCO2 521 µatm, DIC 2050 µmol/kg, Ω 3.3 of aragonite`. */
 function carbonateText({ state }: NonNullable<ReadingAlone["carbonate"]>, other: ReadEvent | null): string {

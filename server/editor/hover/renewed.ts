@@ -35,7 +35,10 @@ export const renewedTold: Tells = (spot) => {
   const used = incoming.assumptions.filter(({ parameter }) => names.includes(parameter));
   const name = model.waters.get(event.water)?.name ?? model.systems.get(event.water)?.name ?? "the new water";
   return {
-    answer: `${percent(Math.min(1, event.litres / litres))} of the water renewed: ${volumeFigure(event.litres)} of ${volumeFigure(litres)}, with ${name}.`,
+    answer:
+      event.litres > litres
+        ? `All of the water renewed: ${volumeFigure(event.litres)}, more than the ${volumeFigure(litres)} that there are, with ${name}.`
+        : `${percent(event.litres / litres)} of the water renewed: ${volumeFigure(event.litres)} of ${volumeFigure(litres)}, with ${name}.`,
     blocks: [
       changed.length > 0
         ? changed.map(({ text }) => text)

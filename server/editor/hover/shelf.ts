@@ -1,20 +1,20 @@
 /** What stands on the shelf: salt waters, kits, the store; and the lines of a log's header and of `use`. */
-import { type ParameterName, parameterOf } from "../../../grammar/parameters.ts";
+import type { ParameterName } from "../../../grammar/parameters.ts";
 import { changeFigure, figure, valueFigure } from "../../checks/figures.ts";
 import { allOf } from "../../checks/words.ts";
-import { alkalinity, inModelUnit } from "../../culture/convert.ts";
+import { alkalinity } from "../../culture/convert.ts";
 import { dKH, plainUnit } from "../../culture/display.ts";
 import { factAt } from "../../culture/history.ts";
-import type { DisplayUnit } from "../../culture/model.ts";
+import type { DisplayUnit, ReadEvent, ReadValue, SystemEvent } from "../../culture/model.ts";
 import type { Assessment } from "../../dosing/assess.ts";
 import { flowsSet } from "../../dosing/rates.ts";
-import { asValue, readConcentration } from "../../quantity/concentration.ts";
 import { toDouble } from "../../quantity/decimal.ts";
 import { readPlain } from "../../quantity/plain.ts";
-import { ago } from "../../report/sheet-water.ts";
+import { ago, dayAndMonth } from "../../report/latest.ts";
+import { biasFound, biasOf, biasText } from "./bias.ts";
 import { amount, lasting, percent, shortMoment, volumeFigure } from "./parts.ts";
 import { massText } from "./reagent.ts";
-import { solutionHover, strengthText } from "./solution.ts";
+import { recipeHere, solutionHover, strengthText } from "./solution.ts";
 import type { Tells } from "./spot.ts";
 
 /** A parameter as the trade writes it, where no system says how. */
@@ -26,8 +26,10 @@ export const saltWaterTold: Tells = ({ model, under, at }) => {
   const water = under.thing?.ref ? model.waters.get(under.thing.ref) : undefined;
   if (!water) return null;
   const values = [...water.values].flatMap(([name, history]) => {
-    const value = factAt(history, at)?.value;
-    return value === undefined ? [] : [`${name} ${valueFigure(name, value, usualUnit(name))}`];
+    const entry = factAt(history, at);
+    if (!entry) return [];
+    const since = Number.isFinite(entry.from) ? ` (from ${dayAndMonth(entry.from)} on)` : "";
+    return [`${name} ${valueFigure(name, entry.value, usualUnit(name))}${since}`];
   });
   return {
     answer: `${water.name}: ${values.length > 0 ? values.join(", ") : "nothing is stated of it"}.`,
@@ -36,7 +38,7 @@ export const saltWaterTold: Tells = ({ model, under, at }) => {
 };
 
 /** A kit: how far its tests scatter. */
-export const kitTold: Tells = ({ model, under, at }) => {
+export const kitTold: Tells = ({ farm, model, under, at }) => {
   const kit = under.thing?.ref ? model.kits.get(under.thing.ref) : undefined;
   if (!kit) return null;
   const scatters = [...kit.deviations].flatMap(([name, history]) => {
@@ -49,30 +51,20 @@ export const kitTold: Tells = ({ model, under, at }) => {
   });
   return {
     answer: `${kit.name}: ${scatters.length > 0 ? `tests scatter by ${scatters.join(", ")} (one standard deviation)` : "no scatter is stated"}.`,
-    blocks: [],
+    blocks: [biasOf(farm, kit, at).map((bias) => biasText(kit.name, bias, usualUnit(bias.parameter)))],
   };
 };
 
 /** `checked`: how far off a test of something known was. */
 export const checkedTold: Tells = ({ statement }) => {
-  if (statement.kind !== "checked") return null;
-  const parameter = parameterOf(statement.parameter.text);
-  if (!parameter) return null;
-  const inModel = (quantity: typeof statement.value) => {
-    const read = readConcentration(quantity, parameter, asValue);
-    return read.ok ? inModelUnit(read.value.amount, parameter, () => 1) : null;
-  };
-  const [found, known] = [inModel(statement.value), inModel(statement.against)];
-  if (found === null || known === null) return null;
-  const off = found - known;
-  const unit = usualUnit(parameter.name);
+  const bias = statement.kind === "checked" ? biasFound(statement) : null;
+  if (!bias) return null;
+  const { parameter: name, off, known } = bias;
+  if (off === 0) return { answer: `${name}: right on.`, blocks: [] };
   const share = known === 0 ? "" : ` (${percent(Math.abs(off / known))})`;
   return {
-    answer:
-      off === 0
-        ? `${parameter.name}: right on.`
-        : `${parameter.name}: ${changeFigure(parameter.name, Math.abs(off), unit)}${share} ${off > 0 ? "too high" : "too low"}.`,
-    blocks: [],
+    answer: `${name}: ${changeFigure(name, Math.abs(off), usualUnit(name))}${share} ${off > 0 ? "too high" : "too low"}.`,
+    blocks: [["That isn't taken off in any estimate yet."]],
   };
 };
 
@@ -119,7 +111,9 @@ export const logTold: Tells = ({ farm, under, at, assessment }) => {
   if (!assessment) return null;
   const { name, events, logFiles } = assessment.system;
   const past = events.filter(({ minute }) => minute <= at);
-  const last = past.findLast((event) => event.kind === "read" && !event.disregarded);
+  const isRead = (event: SystemEvent): event is ReadEvent => event.kind === "read" && !event.disregarded;
+  const last = past.findLast(isRead);
+  const together = past.filter((event) => isRead(event) && event.minute === last?.minute);
   const count = (of: string, many: number) => `${many} ${of}${many === 1 ? "" : "s"}`;
   const reads = past.filter(({ kind }) => kind === "read").length;
   const first = past[0];
@@ -127,7 +121,7 @@ export const logTold: Tells = ({ farm, under, at, assessment }) => {
   const files = logFiles.filter((file) => file !== under.cursor.file && farm.documents.has(file));
   return {
     answer: last
-      ? `Last read ${shortMoment(last.minute)}, ${ago(at - last.minute)}: ${last.text.replace(/^\S+( \d\d:\d\d)? read /, "")}`
+      ? `Last read ${shortMoment(last.minute)}, ${ago(last.minute, at)}: ${together.map(readText).join("; ")}`
       : `${name} was never read.`,
     blocks: [
       [
@@ -137,6 +131,18 @@ export const logTold: Tells = ({ farm, under, at, assessment }) => {
     ],
   };
 };
+
+/** The values of a line as written, with what sea water can't have marked. */
+function readText(event: SystemEvent): string {
+  const text = event.text.replace(/^\S+( \d\d:\d\d)? read /, "");
+  const out =
+    event.kind === "read"
+      ? Object.entries(event.values as Record<string, ReadValue>).flatMap(([name, { impossible }]) =>
+          impossible ? [name] : [],
+        )
+      : [];
+  return out.length > 0 ? `${text} (impossible in sea water, left out: ${allOf(out)})` : text;
+}
 
 /** A `use` line: what the other file declares. */
 export const useTold: Tells = ({ farm, under, place }) => {
@@ -161,5 +167,7 @@ const mostNames = 12;
 export const ofSolution: Tells = ({ farm, under, at }) => {
   const header = under.line.section?.name;
   const seen = header && farm.bound.names.visible.get(under.cursor.file)?.get(header.text);
-  return seen?.kind === "solution" ? solutionHover(farm, seen.ref, null, at) : null;
+  return seen?.kind === "solution"
+    ? solutionHover(farm, seen.ref, null, at, recipeHere(under, seen.ref, farm))
+    : null;
 };

@@ -4,7 +4,7 @@ import { doseFigure, rounded } from "../../checks/figures.ts";
 import { causticGear } from "../../checks/hazard.ts";
 import { calcificationPerMeq } from "../../chemistry/calcification.ts";
 import { defaults } from "../../culture/defaults.ts";
-import { factAt } from "../../culture/history.ts";
+import { type Entry, factAt } from "../../culture/history.ts";
 import type { Assumption, FarmModel, Solution, Strength, System } from "../../culture/model.ts";
 import type { Assessment } from "../../dosing/assess.ts";
 import { limitAt } from "../../dosing/limits.ts";
@@ -12,28 +12,55 @@ import { sourcesAt, topOffFlow } from "../../dosing/rates.ts";
 import { broughtPerLitre, dosed } from "../../dosing/tracked.ts";
 import type { Farm } from "../../farm.ts";
 import { isCausticByStrength } from "../../report/sheet-solutions.ts";
-import { amount, digits, papers, solutionName, type Told, unitIn } from "./parts.ts";
+import type { UnderCursor } from "../under-cursor.ts";
+import { amount, digits, notNow, papers, solutionName, type Told, unitIn } from "./parts.ts";
 import type { Tells } from "./spot.ts";
 
 export const solutionTold: Tells = ({ farm, under, assessment, at }) => {
   const ref = under.thing?.kind === "solution" ? under.thing.ref : null;
-  return ref === null ? null : solutionHover(farm, ref, assessment, at);
+  return ref === null ? null : solutionHover(farm, ref, assessment, at, recipeHere(under, ref, farm));
 };
 
-/** Told also of a line inside the solution's section. */
-export function solutionHover(farm: Farm, ref: string, here: Assessment | null, at: number): Told | null {
+/** The header of a recipe, where the cursor stands in one of the solution. */
+export function recipeHere({ cursor, line }: UnderCursor, ref: string, farm: Farm): Recipe | null {
+  const { section } = line;
+  if (section?.kind !== "solution" || !section.name) return null;
+  const seen = farm.bound.names.visible.get(cursor.file)?.get(section.name.text);
+  return seen?.ref === ref ? { file: cursor.file, line: section.headerLine } : null;
+}
+
+interface Recipe {
+  readonly file: string;
+  readonly line: number;
+}
+
+/** The strength that a recipe makes, else the one in force. */
+function entryOf({ strengths }: Solution, recipe: Recipe | null, at: number): Entry<Strength> | null {
+  if (!recipe) return factAt(strengths, at);
+  const own = strengths.filter(({ place }) => place.file === recipe.file && place.line === recipe.line);
+  return factAt(own, at) ?? own.at(-1) ?? null;
+}
+
+/** Told also of a line inside the solution's section: of a recipe that is changed later each section tells its own. */
+export function solutionHover(
+  farm: Farm,
+  ref: string,
+  here: Assessment | null,
+  at: number,
+  recipe: Recipe | null,
+): Told | null {
   const { model } = farm.bound;
   const solution = model.solutions.get(ref);
   if (!solution) return null;
-  const strength = factAt(solution.strengths, at)?.value;
-  if (!strength) return unknownStrength(solution, at);
+  const entry = entryOf(solution, recipe, at);
+  if (!entry) return unknownStrength(solution, recipe ? Number.POSITIVE_INFINITY : at);
+  const strength = entry.value;
   const using = here ? [here] : [...farm.assessments.values()].filter(({ system }) => uses(system, ref));
   const effects = using.slice(0, mostSystems).map((assessment) => effectLine(assessment, strength));
   const partners = using
     .slice(0, mostSystems)
-    .flatMap((each) => partnerLine(model, each, ref, strength) ?? []);
-  const more =
-    using.length > mostSystems ? [`It is used in ${using.length - mostSystems} more systems.`] : [];
+    .flatMap((each) => partnerLine(model, each, ref, strength, using.length > 1) ?? []);
+  const more = using.length > mostSystems ? [usedInMore(using.length - mostSystems)] : [];
   const mineral = using.flatMap(({ uptake }) => (uptake && partners.length > 0 ? [uptake] : []));
   const assumed: Assumption[] = mineral.some(({ magnesiumFractionStated }) => !magnesiumFractionStated)
     ? [
@@ -47,19 +74,27 @@ export function solutionHover(farm: Farm, ref: string, here: Assessment | null, 
   return {
     answer: `1 mL of ${solution.name} brings ${strengthText(strength)}.`,
     blocks: [
+      notNow(entry, solution.strengths, at),
       [...effects, ...more, ...(using.length === 0 ? ["No system uses it."] : [])],
       [...new Set(partners)],
       isCausticByStrength(strength) ? [`Caustic. ${causticGear}.`] : [],
     ],
     assumptions: [...solution.assumptions, ...assumed],
     sources: [
-      ...(strength.alkalinityMeq ? [papers.alkalinity] : []),
+      ...(isReckoned(strength) ? [papers.alkalinity] : []),
       ...(partners.length > 0 ? [papers.calcification] : []),
     ],
   };
 }
 
+const usedInMore = (count: number): string =>
+  `It is used in ${count} more ${count === 1 ? "system" : "systems"}.`;
+
 const mostSystems = 3;
+
+/** Of a recipe all ions are known; a printed strength states alkalinity alone, and needs no paper. */
+const isReckoned = ({ alkalinityMeq, sodiumMg, calciumMg }: Strength): boolean =>
+  (alkalinityMeq ?? 0) > 0 && ((sodiumMg ?? 0) > 0 || (calciumMg ?? 0) > 0);
 
 function unknownStrength({ name, assumptions, strengths }: Solution, at: number): Told {
   const later = strengths.find(({ from }) => from > at);
@@ -128,6 +163,7 @@ function partnerLine(
   assessment: Assessment,
   ref: string,
   strength: Strength,
+  isOneOfMany: boolean,
 ): string | null {
   const { constants, state, at, uptake } = assessment;
   const topOff = topOffFlow(constants, at);
@@ -143,7 +179,8 @@ function partnerLine(
       : (strength.calciumMg ?? 0) / ((theirs.alkalinityMeq ?? 0) * calciumMg);
     return [`${rounded(millilitres, 2)} mL of ${solutionName(model, other)}`];
   });
-  if (pairs.length > 0) return `In balance: 1 mL of it goes with ${pairs.join(" or ")}.`;
+  const where = isOneOfMany ? ` in ${assessment.system.name}` : "";
+  if (pairs.length > 0) return `In balance${where}: 1 mL of it goes with ${pairs.join(" or ")}.`;
   return alkaline
     ? `No source of ${assessment.system.name} brings calcium alone, so nothing balances it.`
     : `No source of ${assessment.system.name} brings alkalinity alone, so nothing balances it.`;

@@ -147,10 +147,14 @@ export function carbonDioxide(spot: InWater, quantity: QuantityText): OtherUnits
     read.value.unit === "ppm"
       ? `${digits(value * one, 3)} uatm over water`
       : `${digits(value / one, 3)} ppm of dry air`;
-  const at = `${figure(water.temperatureDegC, "°C")}, one atmosphere, air moist over the water`;
+  const { basis } = water.assumption;
+  const at = figure(water.temperatureDegC, "°C");
   return {
     texts: [text],
-    assumptions: [{ what: "air", value: at, basis: "common practice" }],
+    assumptions: [
+      { what: "temperature of the water", value: at, basis },
+      { what: "air over the water", value: "moist, at one atmosphere", basis: "common practice" },
+    ],
     sources: [papers.air],
   };
 }

@@ -16,7 +16,7 @@ In balance: 1 mL of it goes with 1.00 mL of chloride.
 Caustic. Wear goggles and gloves.
 
 **Assumed:** Aragonitic coral, from memory – magnesium in the skeleton: 0.5 %. ↵
-**After:** Wolf-Gladrow et al. 2007 (alkalinity of salts); Smith and Key 1975, Chisholm and Gattuso 1991 (2 meq a mol of CaCO3).`,
+**After:** Smith and Key 1975, Chisholm and Gattuso 1991 (2 meq a mol of CaCO3).`,
   );
   // 734 g / 147.01 g/mol × 40.078 / 10 L = 20.01 g/L.
   hovers(
@@ -122,12 +122,12 @@ test("a pump: today's doses, what is set, what it can give", () => {
   hovers(
     "  pump as|h gives soda at 10 mL/min least 1 mL holding 4 L",
     `
-ash: 569 mL in 8 doses of 71 mL of soda today.
+ash: 569 mL in 8 doses of about 71 mL of soda today.
 
 Set: 400 mL a day since 30 Nov 08:00.
 
-Can give: 10 mL/min, at most 14 L a day, at least 1.0 mL a dose. ↵
-Its container holds 4.0 L, 10 days as set.
+Can give: 10 mL/min as stated (11 mL/min calibrated on 1 Dec 07:30), at most 14 L a day, at least 1.0 mL a dose. ↵
+Its container was filled to 2.0 L on 1 Dec 07:25; about 2.0 L are left by what was set since, 5.0 days as set.
 
 **Assumed:** Common practice – hours of a pump: the whole day.`,
   );
@@ -180,7 +180,8 @@ Written: \`DATE [TIME] gave NAME q, … [by WHO]\`
     `
 **Will do:** alkalinity +0.03 dKH to 7.4 dKH.
 
-**Right after:** pH 8.20 → 8.21 (NBS), Ω of aragonite 3.6 → 3.6, once mixed in.
+**Right after:** pH 8.20 → 8.21 (NBS), Ω of aragonite 3.6 → 3.6, once mixed in. ↵
+It starts from the pH read 30 Nov 08:00, before the dose of soda on 1 Dec 07:10; what doses of the 24 h before brought is reckoned in.
 
 Lies ahead: it counts when its time has come.
 

@@ -45,7 +45,7 @@ test("a hold: where the water stands in it, and where it goes", () => {
   hovers(
     "  hold alkal|inity 7 to 9 dKH aim 8",
     `
-**alkalinity 7.8 dKH** now, in its hold of 7 to 9 dKH, 0.23 dKH below its aim of 8 dKH.
+**alkalinity 7.8 dKH** now, in its hold of 7 to 9 dKH, 0.2 dKH below its aim of 8 dKH.
 
 Read 7.5 dKH 1 h ago (1 Dec 07:00), carried forward from there.
 
@@ -64,7 +64,7 @@ At the salinity aim (35) it would be 7.2 dKH; salinity is 37.7 now.
   hovers(
     "  hold sal|inity 34 to 36",
     `
-**salinity 37.7** now, above its hold of 34 to 36, 2.71 above its aim of 35.
+**salinity 37.7** now, above its hold of 34 to 36, 2.7 above its aim of 35.
 
 Read 38.0 24 h ago (30 Nov 08:00), carried forward from there.
 
@@ -109,13 +109,13 @@ test("limits: how near the water comes to them", () => {
     `
 One dose may raise alkalinity by 0.2 dKH.
 
-soda: 71 mL as planned raise it by 0.199 dKH; 71 mL are the most at once.`,
+soda: 71 mL as planned raise it by 0.20 dKH; 71 mL are the most at once.`,
   );
-  // 11 − 7.77 = 3.23.
+  // 11 − 7.77 = 3.2.
   hovers(
     "  limit alkal|inity max 11 dKH",
     `
-**alkalinity 7.8 dKH** now, 3.23 dKH below the max of 11 dKH.
+**alkalinity 7.8 dKH** now, 3.2 dKH below the max of 11 dKH.
 
 Read 1 h ago.
 

@@ -44,7 +44,8 @@ test("a quantity in the other units of its kind", () => {
     `
 500 ppm = 485 uatm over water.
 
-**Assumed:** Common practice – air: 25.0 °C, one atmosphere, air moist over the water. ↵
+**Assumed:** The water of vat now – temperature of the water: 25.0 °C. ↵
+**Assumed:** Common practice – air over the water: moist, at one atmosphere. ↵
 **After:** Weiss and Price 1980 (CO2 of air).`,
   );
   hovers(
@@ -78,7 +79,7 @@ test("a temperature, a pH, a deviation", () => {
 
 test("a change of temperature has no zero point, and a change of pH no scale", () => {
   expect(toldIn("system vat\n  limit temperature swing |1.5 degC\n")).toBe("1.5 degC = 2.7 degF.");
-  expect(toldIn("kit meter\n  pH tolerance |0.06\n")).toBeNull();
+  expect(toldIn("kit meter\n  p|H tolerance 0.06\n")).toBe("pH 0.06.\n\nTaken as two standard deviations.");
 });
 
 test("words inside a line", () => {
@@ -152,12 +153,16 @@ What isn't stated is taken as in sea water of its salinity.`,
   hovers(
     "kit ben|ch",
     `
-bench: tests scatter by alkalinity 0.10 dKH, calcium 2 % (one standard deviation).`,
+bench: tests scatter by alkalinity 0.10 dKH, calcium 2 % (one standard deviation).
+
+bench read alkalinity 0.40 dKH too high when it was checked on 11 Nov; that isn't taken off in any estimate yet.`,
   );
   hovers(
     "  2026-11-11 ch|ecked alkalinity 8.4 dKH against 8.0 dKH",
     `
 alkalinity: 0.40 dKH (5 %) too high.
+
+That isn't taken off in any estimate yet.
 
 Written: \`DATE [TIME] checked PARAMETER q against q [lot "text"] [by WHO]\``,
   );
