@@ -86,7 +86,8 @@ export function syntaxProblem(
       ? unknownWord(word, misplaced.span, expected)
       : { ...misplaced, why: "keyword-as-name", expected };
   }
-  if (Object.hasOwn(keyword, word) && keywordsIn(parser, rule).has(word)) return { ...misplaced, why: "order", expected };
+  if (Object.hasOwn(keyword, word) && keywordsIn(parser, rule).has(word))
+    return { ...misplaced, why: "order", expected };
   return unknownWord(word, spanOf(token), expected);
 }
 

@@ -6,21 +6,33 @@ import { type DocumentLine, type MarlDocument, readDocument } from "./document.t
 import { longestLine } from "./line.ts";
 import type { Statement } from "./syntax.ts";
 import { isBlank } from "./tokens.ts";
-import { writeStatement } from "./write.ts";
+import { readUnit } from "./units.ts";
+import { unitsIn, writeStatement } from "./write.ts";
 
 const byteOrderMark = "\ufeff";
 const indent = "  ";
+const linesAtOnce = 64;
 
 /** The tidy form of a file. */
-export const tidyText = (text: string): string => tidyDocument(readDocument(text));
+export function tidyText(text: string): string {
+  const steps = tidyInSteps(readDocument(text));
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
 
-/** The tidy form of a document's text, with its byte order mark and the line ending of its first line. */
-export function tidyDocument(document: MarlDocument): string {
+/**
+ * The tidy form of a document's text, with its byte order mark and the line ending of its first line. Pauses every so
+ * many lines.
+ */
+export function* tidyInSteps(document: MarlDocument): Generator<void, string> {
   const headers = new Set(document.sections.map(({ headerLine }) => headerLine));
   const lines: string[] = [];
   /** Where the comments begin that stand right above whatever comes next. */
   let commentsFrom = 0;
   for (const [number, line] of document.lines.entries()) {
+    if (number % linesAtOnce === linesAtOnce - 1) yield;
     const text = tidyLine(line);
     if (text === "") {
       if (lines.length > 0 && lines.at(-1) !== "") lines.push("");
@@ -47,7 +59,7 @@ export function tidyLine({ text, statement, comment }: DocumentLine): string {
   let tidy: string;
   if (isBlank(before)) {
     tidy = before === "" ? remark : indent + remark;
-  } else if (statement) {
+  } else if (statement && !hasUnknownUnit(statement)) {
     tidy = (isAtMargin(statement) ? "" : indent) + writeStatement(statement);
     if (comment) tidy += spaceBefore(before) + remark;
   } else {
@@ -71,5 +83,9 @@ function endWithout(text: string, isLeftOut: (character: string) => boolean): nu
   while (end > 0 && isLeftOut(text.charAt(end - 1))) end -= 1;
   return end;
 }
+
+/** True where a statement has a unit that is none: its line counts for nothing, like any other that can't be read. */
+const hasUnknownUnit = (statement: Statement): boolean =>
+  unitsIn(statement).some((unit) => !readUnit(unit).known);
 
 const isAtMargin = ({ kind }: Statement): boolean => kind === "header" || kind === "use";

@@ -173,6 +173,17 @@ const writtenOut = writer(true);
 /** The tidy text of a statement. Reading it gives the same statement, apart from spans. */
 export const writeStatement = (statement: Statement): string => write(statement, asWritten);
 
+/** The units of a statement's quantities, as they are written. */
+export function unitsIn(statement: Statement): readonly string[] {
+  const units: string[] = [];
+  write(statement, ({ unit, uncertainty }) => {
+    if (unit) units.push(unit.text);
+    if (uncertainty?.unit) units.push(uncertainty.unit.text);
+    return "";
+  });
+  return units;
+}
+
 /**
  * What a statement says: the same for statements that mean the same, however they are spelt or spaced and whether
  * or not a unit was borrowed. Statements that mean different things never share one.

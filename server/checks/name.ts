@@ -6,6 +6,7 @@ import { lineAt, removingDoubled, replacingWith } from "./fixing.ts";
 import type { LineFix, Problem } from "./problem.ts";
 import type { Of, Rules } from "./rule.ts";
 import { sectionAtEnd } from "./sections.ts";
+import { addingUseLines } from "./use-lines.ts";
 import { allOf, inQuotes, nameOf, oneOf, sourceName } from "./words.ts";
 
 const kindInWords: Readonly<Record<NamedKind | OwnKind, string>> = {
@@ -91,10 +92,11 @@ function undeclaredFixes(finding: Undeclared, files: Files): readonly LineFix[] 
       ...declaring(finding, files),
     ];
   const { file } = finding.place;
+  const document = files.get(file);
   const text = `use "${pathTo(file, finding.elsewhere)}"`;
-  return [
-    { title: `Add ${text}`, safe: false, edits: [{ file, line: 0, start: 0, end: 0, text: `${text}\n` }] },
-  ];
+  return document
+    ? [{ title: `Add ${text}`, safe: false, edits: [addingUseLines(file, document, [text])] }]
+    : [];
 }
 
 /** Where the name is declared in the file that isn't used. */

@@ -1,5 +1,5 @@
 /** Everything that can be done at a place, in the order in which it is offered. */
-import type { Action, ActionKind, Asked, FindActions } from "./code-actions/action.ts";
+import type { Action, ActionKind, Asked, FindActions, FindInSteps } from "./code-actions/action.ts";
 
 import { converting } from "./code-actions/convert-unit.ts";
 import { fixAll, fixes } from "./code-actions/fixes.ts";
@@ -13,7 +13,12 @@ import { planning } from "./code-actions/write-plan.ts";
 
 export { type Action, type Asked, actionKinds } from "./code-actions/action.ts";
 
-const sorts: readonly { readonly kinds: readonly ActionKind[]; readonly find: FindActions }[] = [
+interface Sort {
+  readonly kinds: readonly ActionKind[];
+  readonly find: FindActions | FindInSteps;
+}
+
+const sorts: readonly Sort[] = [
   { kinds: ["quickfix"], find: fixes },
   { kinds: ["quickfix"], find: quieting },
   { kinds: ["refactor.rewrite"], find: converting },
@@ -30,8 +35,14 @@ const sorts: readonly { readonly kinds: readonly ActionKind[]; readonly find: Fi
 const isAskedFor = (kind: ActionKind, only: readonly string[] | null): boolean =>
   only === null || only.some((asked) => asked === "" || kind === asked || kind.startsWith(`${asked}.`));
 
-/** The actions at a selection, of the kinds asked for. */
-export const actionsAt = (asked: Asked, only: readonly string[] | null): readonly Action[] =>
-  sorts
-    .filter(({ kinds }) => kinds.some((kind) => isAskedFor(kind, only)))
-    .flatMap(({ find }) => find(asked));
+/** The actions at a selection, of the kinds asked for. Pauses now and then. */
+export function* actionsAt(asked: Asked, only: readonly string[] | null): Generator<void, readonly Action[]> {
+  const actions: Action[] = [];
+  for (const { kinds, find } of sorts) {
+    if (!kinds.some((kind) => isAskedFor(kind, only))) continue;
+    const found = find(asked);
+    actions.push(...("next" in found ? yield* found : found));
+    yield;
+  }
+  return actions;
+}

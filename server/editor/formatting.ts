@@ -1,5 +1,5 @@
 /** Tidying in the editor: the edits that make a file, some of its lines, or the line just left what `marl tidy` makes of them. */
-import { tidyDocument, tidyLine } from "../../grammar/tidy.ts";
+import { tidyInSteps, tidyLine } from "../../grammar/tidy.ts";
 import { isBlank } from "../../grammar/tokens.ts";
 import type { Farm } from "../farm.ts";
 import {
@@ -14,15 +14,20 @@ import {
 /** All that tidying looks at of a farm. */
 type Files = Pick<Farm, "documents" | "texts">;
 
-/** What tidies a whole file; none where it is tidy. */
-export function tidyEdits(farm: Files, file: string): TextEdit[] {
-  const found = changesIn(farm, file);
+/** What tidies a whole file; none where it is tidy. Pauses now and then. */
+export function* tidyEdits(farm: Files, file: string): Generator<void, TextEdit[]> {
+  const found = yield* changesIn(farm, file);
   return found ? editsOf(file, found.lines, found.changes) : [];
 }
 
 /** The same for the lines that stand whole between two places. */
-export function tidyRangeEdits(farm: Files, file: string, from: TextPoint, to: TextPoint): TextEdit[] {
-  const found = changesIn(farm, file);
+export function* tidyRangeEdits(
+  farm: Files,
+  file: string,
+  from: TextPoint,
+  to: TextPoint,
+): Generator<void, TextEdit[]> {
+  const found = yield* changesIn(farm, file);
   if (!found) return [];
   const { lines, changes } = found;
   const length = (lines[to.line] ?? "").replace(/\r$/, "").length;
@@ -55,17 +60,19 @@ export function tidyTypedEdits(farm: Files, file: string, newLine: number): Text
 }
 
 /** What becomes of each line when a file is tidied: lines that aren't blank become one each, in order. */
-function changesIn(
+function* changesIn(
   farm: Files,
   file: string,
-): { readonly lines: readonly string[]; readonly changes: readonly LineChange[] } | null {
+): Generator<void, { readonly lines: readonly string[]; readonly changes: readonly LineChange[] } | null> {
   const document = farm.documents.get(file);
   const text = farm.texts.get(file);
   if (!document || text === undefined) return null;
-  const tidy = tidyDocument(document);
+  const tidy = yield* tidyInSteps(document);
+  yield;
   const lines = rawLines(text);
   if (tidy === text) return { lines, changes: [] };
   const next = rawLines(tidy);
+  yield;
   return { lines, changes: byWrittenLines(lines, next) ?? changesBetween(lines, next) };
 }
 

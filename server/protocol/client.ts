@@ -1,5 +1,5 @@
 /** What a client says that it can do. Nothing is sent that it didn't declare. */
-import type { InitializeParams } from "vscode-languageserver/node";
+import type { CompletionItemKind, InitializeParams, SymbolKind } from "vscode-languageserver/node";
 import { type Encoding, encodings } from "./positions.ts";
 
 export interface Client {
@@ -15,7 +15,12 @@ export interface Client {
   readonly snippets: boolean;
   readonly completionResolves: readonly string[];
   readonly insertReplace: boolean;
+  /** Kinds of items that it can draw; of symbols likewise. */
+  readonly completionKinds: ReadonlySet<CompletionItemKind>;
+  readonly symbolKinds: ReadonlySet<SymbolKind>;
   readonly signatureActivePart: boolean;
+  /** A signature may have no part marked. */
+  readonly signatureNoActivePart: boolean;
   /** Parts of a signature may be told by their places in it. */
   readonly signatureOffsets: boolean;
   readonly markdownSignature: boolean;
@@ -52,6 +57,9 @@ export interface Client {
   readonly commands: ReadonlySet<string>;
 }
 
+/** Those that the protocol began with, of items and of symbols: a client that names none knows no others. */
+const firstKinds = Array.from({ length: 18 }, (_, index) => (index + 1) as CompletionItemKind & SymbolKind);
+
 /** Reads what a client declared; whatever it leaves out it can't do. */
 export function clientOf({ capabilities, initializationOptions }: InitializeParams): Client {
   const { textDocument: text, workspace, window, general } = capabilities ?? {};
@@ -74,7 +82,12 @@ export function clientOf({ capabilities, initializationOptions }: InitializePara
     snippets: text?.completion?.completionItem?.snippetSupport === true,
     completionResolves: text?.completion?.completionItem?.resolveSupport?.properties ?? [],
     insertReplace: text?.completion?.completionItem?.insertReplaceSupport === true,
+    completionKinds: new Set(text?.completion?.completionItemKind?.valueSet ?? firstKinds),
+    symbolKinds: new Set(
+      text?.documentSymbol?.symbolKind?.valueSet ?? workspace?.symbol?.symbolKind?.valueSet ?? firstKinds,
+    ),
     signatureActivePart: text?.signatureHelp?.signatureInformation?.activeParameterSupport === true,
+    signatureNoActivePart: text?.signatureHelp?.signatureInformation?.noActiveParameterSupport === true,
     signatureOffsets:
       text?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
     markdownSignature: isMarkdown(text?.signatureHelp?.signatureInformation?.documentationFormat),

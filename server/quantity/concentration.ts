@@ -13,6 +13,7 @@ import { type Measured, measuredUnit, numberOf, plainNumber, sameDimension, with
 import { dissolved } from "./dissolved.ts";
 import { bad, good, type Reading } from "./finding.ts";
 import { inBase } from "./plain.ts";
+import { withUnitsMeant } from "./unit-slips.ts";
 
 export const asValue: Manner = { difference: false, rate: false };
 export const asDifference: Manner = { difference: true, rate: false };
@@ -87,15 +88,27 @@ export function readCohortUptake(quantity: QuantityText, alkalinity: Parameter):
 function readAsked(quantity: QuantityText, ask: Ask): Reading<Written> {
   const number = numberOf(quantity);
   if (!number.ok) return number;
+  const fits = (text: string, difference: boolean): boolean => {
+    const other = measuredUnit(text === "" ? null : { text, start: 0, end: 0 });
+    return other.ok && sortAmount(quantity, ask, number.value, other.value, difference).ok;
+  };
   const unit = measuredUnit(quantity.unit);
-  if (!unit.ok) return unit;
+  if (!unit.ok)
+    return withUnitsMeant(unit.finding, quantity.unit?.text ?? "", (text) =>
+      fits(text, ask.manner.difference),
+    );
   const sorted = sortAmount(quantity, ask, number.value, unit.value, ask.manner.difference);
   if (!sorted.ok) return sorted;
   if (!quantity.uncertainty) return good({ amount: sorted.value, uncertainty: null }, sorted.notes);
   const deviation = plainNumber(quantity.uncertainty.number);
   if (!deviation.ok) return deviation;
   const own = measuredUnit(quantity.uncertainty.unit);
-  if (!own.ok) return own;
+  if (!own.ok)
+    return withUnitsMeant(
+      own.finding,
+      quantity.uncertainty.unit?.text ?? "",
+      (text) => text === "%" || fits(text, true),
+    );
   if (own.value?.spelling === "%") {
     const share = deviation.value.mul(own.value.factor).mul(sorted.value.value).abs();
     return good({ amount: sorted.value, uncertainty: { ...sorted.value, value: share } }, sorted.notes);

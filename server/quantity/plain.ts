@@ -4,6 +4,7 @@ import type { Dimension } from "../../grammar/units.ts";
 import type { Decimal34 } from "./decimal.ts";
 import { type Measured, measuredUnit, numberOf, plainNumber, sameDimension } from "./dimension.ts";
 import { bad, good, type Reading } from "./finding.ts";
+import { withUnitsMeant } from "./unit-slips.ts";
 
 /** What a place in a statement asks for. */
 interface Asked {
@@ -44,7 +45,7 @@ export function readPlain(quantity: QuantityText, kind: PlainKind): Reading<Plai
   const number = numberOf(quantity);
   if (!number.ok) return number;
   const unit = measuredUnit(quantity.unit);
-  if (!unit.ok) return unit;
+  if (!unit.ok) return withUnitsMeant(unit.finding, quantity.unit?.text ?? "", fitsIn(wanted.dimension));
   if (!unit.value) {
     return bad({
       code: "unit/missing",
@@ -61,6 +62,13 @@ export function readPlain(quantity: QuantityText, kind: PlainKind): Reading<Plai
   if (!uncertainty.ok) return uncertainty;
   return good({ value: inBase(number.value, unit.value), uncertainty: uncertainty.value });
 }
+
+const fitsIn =
+  (dimension: Dimension) =>
+  (text: string): boolean => {
+    const unit = measuredUnit({ text, start: 0, end: 0 });
+    return unit.ok && unit.value !== null && sameDimension(unit.value.dimension, dimension);
+  };
 
 export function inBase(number: Decimal34, unit: Measured): Decimal34 {
   return (unit.zero ? number.sub(unit.zero) : number).mul(unit.factor);
@@ -91,7 +99,14 @@ function readUncertainty(
   const amount = plainNumber(quantity.uncertainty.number);
   if (!amount.ok) return amount;
   const own = measuredUnit(quantity.uncertainty.unit);
-  if (!own.ok) return own;
+  if (!own.ok) {
+    const fits = fitsIn(wanted.dimension);
+    return withUnitsMeant(
+      own.finding,
+      quantity.uncertainty.unit?.text ?? "",
+      (text) => text === "%" || fits(text),
+    );
+  }
   if (!own.value) return good(amount.value.mul(unit.factor));
   if (own.value.spelling === "%")
     return good(amount.value.mul(own.value.factor).mul(inBase(number, unit)).abs());

@@ -31,6 +31,46 @@ describe("a fix mends its line", () => {
     expect(walk(filesOf(after)).problems).toEqual([]);
   });
 
+  test.each([
+    ["tank u 30x40x50cm times 2", "unit/unknown", "tank u 30 x 40 x 50 cm times 2"],
+    ["tank u 30x40x50 cm", "syntax/unknown-word", "tank u 30 x 40 x 50 cm"],
+    ["tank u 30cmx40cmx50cm", "unit/unknown", "tank u 30 cm x 40 cm x 50 cm"],
+  ])("%s: the x has its spaces", (line, code, expected) => {
+    expect(mended(vat(line), code, "Put spaces round x")).toBe(vat(expected));
+    expect(walk(filesOf(vat(expected))).problems.map((problem) => problem.code)).toEqual([]);
+  });
+
+  /** What the fixes of a reading's only error would write. */
+  const offers = (reading: string): readonly string[] =>
+    walk(filesOf(`system vat\n  tank main 500 L\n\nlog vat\n  2026-12-01 read ${reading}\n`))
+      .problems.filter(({ severity }) => severity === "error")
+      .flatMap(({ fixes }) => fixes.map(({ title }) => title));
+
+  test.each([
+    ["temperature 25 C", ["Write degC"]],
+    ["temperature 77 F", ["Write degF"]],
+    ["alkalinity 8 KH", ["Write dKH"]],
+    ["calcium 420 mgl", ["Write mg/L"]],
+    ["alkalinity 2.9 meq/l", ["Write L"]],
+    ["alkalinity 8 dKH ± 0.1 KH", ["Write dKH"]],
+    ["salinity 35 psu", ["Remove it"]],
+    ["alkalinity 8 L", ["Write dKH", "Write mg/L as CaCO3", "Write meq/L"]],
+    ["temperature 25 kg", ["Write degC", "Write degF"]],
+  ])("%s: only units that measure it are offered", (reading, expected) => {
+    expect(offers(reading)).toEqual(expected);
+  });
+
+  test("a volume spelt as people spell it", () => {
+    expect(mended(vat("evaporates 3 ltr/day"), "unit/unknown", "Write L")).toBe(vat("evaporates 3 L/day"));
+    expect(mended(vat("evaporates 3 L/d"), "unit/unknown", "Write day")).toBe(vat("evaporates 3 L/day"));
+  });
+
+  test("a use line comes below what the file says of itself", () => {
+    const text = `# Our vat.\n\n${vat("by-hand part")}\n// file: stock.marl\nsolution part\n  supplies calcium 60 g/L\n`;
+    const use = 'Add use "stock.marl"';
+    expect(mended(text, "name/undeclared", use)).toContain('# Our vat.\n\nuse "stock.marl"\n\nsystem vat\n');
+  });
+
   test("ppm over a time keeps its time", () => {
     const text = vat("uptake calcium 5 ppm/day");
     expect(mended(text, "unit/ppm", "Write mg/L")).toBe(vat("uptake calcium 5 mg/L/day"));

@@ -1,5 +1,6 @@
 /** What is offered at the mark of a text (two marks: what stands between them), and the texts after one of it. */
 
+import { inOneGo } from "../../server/culture/keep.ts";
 import { type Action, isTextEdit } from "../../server/editor/code-actions/action.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
 import { advance, type Farm } from "../../server/farm.ts";
@@ -16,7 +17,7 @@ export function offered(text: string, only: readonly string[] | null = null, can
   const [from, to = from] = cursors;
   if (!from || !to) throw new Error("| marks the cursor");
   const selection = { file: from.file, from, to };
-  return { farm, actions: actionsAt({ farm, selection, canCreate, now: farm.moment.at }, only) };
+  return { farm, actions: inOneGo(actionsAt({ farm, selection, canCreate, now: farm.moment.at }, only)) };
 }
 
 export const titlesAt = (text: string, only: readonly string[] | null = null, canCreate = true): string[] =>

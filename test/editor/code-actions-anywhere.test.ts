@@ -1,5 +1,6 @@
 import fc from "fast-check";
 import { expect, test } from "vitest";
+import { inOneGo } from "../../server/culture/keep.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
 import { walk } from "../checks/walk.ts";
 import { mutatedFile, type Random } from "../grammar/mutate.ts";
@@ -32,7 +33,9 @@ test("whatever a file holds, every action's edits fit it, and a quantity in anot
       if (to !== from)
         to.column = Math.max(lines[to.line]!.text.length, to.line === from.line ? from.column : 0);
       const selection = { file: "a.marl", from, to };
-      for (const action of actionsAt({ farm, selection, canCreate: true, now: farm.moment.at }, null)) {
+      for (const action of inOneGo(
+        actionsAt({ farm, selection, canCreate: true, now: farm.moment.at }, null),
+      )) {
         const texts = textsAfter(farm, action);
         expect(
           [...texts].some(([file, after]) => farm.texts.get(file) !== after),

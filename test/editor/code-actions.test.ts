@@ -4,6 +4,7 @@ import { describe, expect, test } from "vitest";
 import { tidyText } from "../../grammar/tidy.ts";
 import { applySafeFixes } from "../../server/checks/apply-fixes.ts";
 import { codes, rules } from "../../server/checks/rules.ts";
+import { inOneGo } from "../../server/culture/keep.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
 import type { Farm } from "../../server/farm.ts";
 import { filesOf, walk } from "../checks/walk.ts";
@@ -36,6 +37,41 @@ describe("quick fixes", () => {
       "Write 7.9",
       "Write 8.5",
     ]);
+  });
+
+  test("that mend two problems of a line alike are listed once", () => {
+    // 0.99 dKH at once and in a day, the limits are 0.5 and 0.7 dKH: both are kept by the same two lines.
+    const text = `system vat
+  tank main 500 L
+  by-hand ash-part
+  uptake alkalinity 0 dKH/day
+
+solution ash-part
+  supplies alkalinity 1.6 meq/mL
+
+log vat
+  2026-11-30 07:00 read alkalinity 8 dKH, calcium 420 mg/L
+  2026-12-01 07:50 gave |ash-part 0.11 L|
+`;
+    const titles = titlesAt(text, ["quickfix"]);
+    expect(titles.filter((title) => title.startsWith("Split over 2 days"))).toHaveLength(1);
+    expect(titles).toEqual([...new Set(titles)]);
+  });
+
+  test("of a long selection are those of its first problems only", () => {
+    const lines = Array.from({ length: 20_000 }, () => "  evaporates 7,9 L/day\n");
+    const { farm } = offered(`|${vat}`);
+    const many = walk(new Map([["farm.marl", vat + lines.join("")]]));
+    expect(many.problems.length).toBe(20_000);
+    const to = { line: 20_002, column: 0 };
+    const selection = { file: "farm.marl", from: { line: 0, column: 0 }, to };
+    const asked = { farm: many, selection, canCreate: true, now: farm.moment.at };
+    expect(inOneGo(actionsAt(asked, ["quickfix", "refactor"])).length).toBe(50);
+    // Those of the whole file are worked out in slices.
+    const steps = actionsAt(asked, null);
+    let pauses = 0;
+    while (!steps.next().done) pauses += 1;
+    expect(pauses).toBeGreaterThan(300);
   });
 
   test("only where they are asked for", () => {
@@ -149,7 +185,7 @@ function checkQuickFixes(farm: Farm): number {
   for (const { file, line, span } of places.values()) {
     const at = { line, column: span?.start ?? 0 };
     const selection = { file, from: { line, column: 0 }, to: { line, column: Math.max(at.column, 10_000) } };
-    for (const action of actionsAt({ farm, selection, canCreate: false, now: 0 }, ["quickfix"])) {
+    for (const action of inOneGo(actionsAt({ farm, selection, canCreate: false, now: 0 }, ["quickfix"]))) {
       const { problem, title } = action;
       const fixed = walkedAfter(farm, action);
       const unreadBefore = farm.problems.filter(({ code }) => code.startsWith("syntax/"));
@@ -199,7 +235,9 @@ test.each(codes.filter((code) => rules[code].example !== null))(
       const selection = { file, from: at, to: at };
       const own = farm.problems.filter(({ place }) => place.file === file);
       const expected = applySafeFixes(new Map([[file, text]]), own).texts.get(file) ?? text;
-      const [action, ...others] = actionsAt({ farm, selection, canCreate: false, now: 0 }, ["source.fixAll"]);
+      const [action, ...others] = inOneGo(
+        actionsAt({ farm, selection, canCreate: false, now: 0 }, ["source.fixAll"]),
+      );
       expect(others).toEqual([]);
       expect(action ? textsAfter(farm, action).get(file) : text).toBe(expected);
     }
@@ -211,9 +249,9 @@ test("all files of the example farm are tidy, and tidying one that isn't is what
   const untidy = new Map([...farm.texts].map(([file, text]) => [file, text.replace(/^ {2}/gm, "   ")]));
   for (const [file, text] of untidy) {
     const selection = { file, from: { line: 0, column: 0 }, to: { line: 0, column: 0 } };
-    expect(actionsAt({ farm, selection, canCreate: true, now: 0 }, ["source.tidy"])).toEqual([]);
+    expect(inOneGo(actionsAt({ farm, selection, canCreate: true, now: 0 }, ["source.tidy"]))).toEqual([]);
     const other = walk(untidy);
-    const [action] = actionsAt({ farm: other, selection, canCreate: true, now: 0 }, ["source.tidy"]);
+    const [action] = inOneGo(actionsAt({ farm: other, selection, canCreate: true, now: 0 }, ["source.tidy"]));
     expect(textsAfter(other, action!).get(file)).toBe(tidyText(text));
   }
 });

@@ -174,7 +174,40 @@ test("units that fit, the one in use first", () => {
   expect(units("\nsolution two\n  supplies calcium 4 |").slice(0, 2)).toEqual(["g/L", "mg/mL"]);
   expect(units("\nsolution two\n  make up to 4 |").slice(0, 2)).toEqual(["L", "mL"]);
   expect(units("\nkit two\n  calcium scatter 2 |").at(-1)).toBe("%");
-  expect(labels(`${log}  2026-12-01 08:00 stocked plugs 20 |`)).toEqual(["pieces", "m2", "cm2"]);
+  expect(labels(`${log}  2026-12-01 08:00 stocked plugs 20 |`)).toEqual(["pieces"]);
+  const mat =
+    "\nsystem two\n  cohort mat 2 m2 uptake 4 meq/m2/day\n\nlog two\n  2026-12-01 08:00 removed mat 1 |";
+  expect(labels(mat)).toEqual(["m2", "cm2"]);
+  expect(labels("\nsystem two\n  cohort mat 2 |")).toEqual(["pieces", "m2", "cm2"]);
+});
+
+test("a number that needs its unit is followed by nothing else", () => {
+  expect(labels(`${log}  2026-12-01 08:00 read alkalinity 7.9 d|`)).not.toContain("disregard");
+  expect(labels("\nsystem two\n  cohort y 0.5 m2 uptake 200 |")).toEqual([
+    ...["mmol/m2/day as CaCO3", "meq/m2/day", "g/m2/day as CaCO3"],
+  ]);
+  expect(labels(`${log}  2026-12-01 08:00 read pH 7.9 |`)).toContain("with");
+  expect(labels("\nsystem two\n  hold alkalinity 7 |").at(-1)).toBe("to");
+});
+
+test("behind ± what the number before it counts", () => {
+  const deviations = (value: string) => labels(`${log}  2026-12-01 08:00 read alkalinity ${value} |`);
+  expect(deviations("8 dKH ± 0.1").slice(0, 3)).toEqual(["%", "dKH", "meq/L"]);
+  expect(deviations("8 dKH ± 0.1").filter((label) => label.includes("CaCO3"))).toEqual([]);
+  expect(deviations("140 mg/L as CaCO3 ± 2")).toEqual([
+    ...["%", "mg/L", "mg/kg", "ppm", "with", "disregard", "by"],
+  ]);
+});
+
+test("CaCO3 behind as, where it makes sense", () => {
+  expect(labels("\nsystem two\n  cohort y 0.5 m2 uptake 20 mmol/m2/day as |")).toEqual(["CaCO3"]);
+  expect(labels("\nsystem two\n  cohort y 0.5 m2 uptake 20 meq/m2/day as |")).toEqual([]);
+});
+
+test("a reagent isn't made of itself", () => {
+  const found = labels("\nreagent zreag\n  is |");
+  expect(found).toContain("sodium-carbonate");
+  expect(found).not.toContain("zreag");
 });
 
 test("parts of a statement, those that aren't said yet", () => {
@@ -201,8 +234,9 @@ test("parts of a statement, those that aren't said yet", () => {
     ...["least", "between", "always", "holding", "from", "until", "±"],
   ]);
   expect(labels("\nsystem two\n  cohort a 3 m2 uptake 4 mmol/m2/day |")).toEqual([
-    ...["each", "magnesium", "grows", "from", "until", "as CaCO3", "±"],
+    ...["magnesium", "grows", "from", "until", "as CaCO3", "±"],
   ]);
+  expect(labels("\nsystem two\n  cohort a 3 pieces uptake 4 meq/day |")[0]).toBe("each");
   expect(labels("\nkit two\n  alkalinity |")).toEqual(["scatter", "tolerance"]);
 });
 
@@ -249,7 +283,7 @@ test("a name of a file that isn't used comes with its use line, in the right pla
   const system = "system vat\n  tank main 500 L\n  flows-through 9 L/day with |";
   const plain = system.replace("|", "");
   expect(offer(system)).toBe(`use "shelf/waters.marl"\n\n${plain}\n`);
-  expect(offer(`# Our vat.\n\n${system}`)).toBe(`# Our vat.\nuse "shelf/waters.marl"\n\n${plain}\n`);
+  expect(offer(`# Our vat.\n\n${system}`)).toBe(`# Our vat.\n\nuse "shelf/waters.marl"\n\n${plain}\n`);
   expect(offer(`# Our vat.\n${system}`)).toBe(`use "shelf/waters.marl"\n\n# Our vat.\n${plain}\n`);
   expect(offer(`use "other.marl"\n\n${system}`)).toBe(
     `use "other.marl"\nuse "shelf/waters.marl"\n\n${plain}\n`,

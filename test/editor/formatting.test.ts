@@ -2,6 +2,7 @@ import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { readDocument } from "../../grammar/document.ts";
 import { tidyText } from "../../grammar/tidy.ts";
+import { inOneGo } from "../../server/culture/keep.ts";
 import { tidyEdits, tidyRangeEdits, tidyTypedEdits } from "../../server/editor/formatting.ts";
 import { changesBetween, editsBetween, editsOf, rawLines } from "../../server/editor/text-edits.ts";
 import { mutatedFile, type Random, smallFile } from "../grammar/mutate.ts";
@@ -11,7 +12,7 @@ const farmOf = (text: string) => ({
   texts: new Map([["farm.marl", text]]),
   documents: new Map([["farm.marl", readDocument(text)]]),
 });
-const edits = (text: string) => tidyEdits(farmOf(text), "farm.marl");
+const edits = (text: string) => inOneGo(tidyEdits(farmOf(text), "farm.marl"));
 const at = (line: number, column: number) => ({ line, column });
 
 describe("a whole file", () => {
@@ -71,7 +72,7 @@ describe("a whole file", () => {
 describe("a range", () => {
   const text = "system  vat\n  tank  main 500 L\n\n\n  tank  sump 80 L\n";
   const range = (from: ReturnType<typeof at>, to: ReturnType<typeof at>) =>
-    applied(text, tidyRangeEdits(farmOf(text), "farm.marl", from, to));
+    applied(text, inOneGo(tidyRangeEdits(farmOf(text), "farm.marl", from, to)));
 
   test("has the lines tidied that stand whole in it", () => {
     expect(range(at(1, 0), at(2, 0))).toBe("system  vat\n  tank main 500 L\n\n\n  tank  sump 80 L\n");
@@ -96,7 +97,7 @@ describe("a range", () => {
         const lines = rawLines(given);
         const farm = farmOf(given);
         const [from, to] = [Math.min(first, lines.length - 1), Math.min(first + count, lines.length - 1)];
-        const found = tidyRangeEdits(farm, "farm.marl", at(from, 0), at(to, 0));
+        const found = inOneGo(tidyRangeEdits(farm, "farm.marl", at(from, 0), at(to, 0)));
         for (const edit of found) {
           expect(edit.from.line).toBeGreaterThanOrEqual(from);
           expect(edit.to.line).toBeLessThanOrEqual(to);

@@ -2,6 +2,7 @@ import { readdirSync, readFileSync } from "node:fs";
 import { join, resolve } from "node:path";
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
+import { inOneGo } from "../../server/culture/keep.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
 import type { Farm } from "../../server/farm.ts";
 import { type Report, reportOn } from "../../server/report/report.ts";
@@ -55,6 +56,21 @@ describe("a solution is moved", () => {
     );
   });
 
+  test("though a file that won't see it holds its letters in another word", () => {
+    const text = `|solution part\n  supplies alkalinity 1.6 meq/mL\n\n// file: other.marl\nuse "farm.marl"\n\nsystem vat\n  tank partly 500 L\n  note "part"\n// file: stock.marl\nkit bench\n  pH scatter 0.1\n`;
+    expect(moves(text)).toEqual([
+      "Move part to a new file solutions.marl",
+      "Move part to other.marl",
+      "Move part to stock.marl",
+    ]);
+  });
+
+  test("from a file of the usual name to one of its own name", () => {
+    const text =
+      "// file: solutions.marl\n|solution part\n  supplies alkalinity 1.6 meq/mL\n\nsolution two\n  supplies calcium 60 g/L\n";
+    expect(moves(text)).toEqual(["Move part to a new file part.marl"]);
+  });
+
   test("to one that has to see what its recipe names", () => {
     const text = `system vat\n  tank main 500 L\n\n|${shop}\n// file: bench/shelf.marl\n# Shelf.\n\nkit bench\n  alkalinity scatter 0.1 dKH\n// file: store/jars.marl\n${jar}`;
     const known = `use "store/jars.marl"\n\n${text}`;
@@ -99,9 +115,10 @@ ${jar}${other}`),
       "\ufeff|solution part\r\n  supplies alkalinity 1.6 meq/mL\r\n\r\nkit bench\r\n  pH scatter 0.1\r\n// file: b.marl\nkit other\n  pH scatter 0.1";
     const { farm } = { farm: walk(filesOf(text.replace("|", ""))) };
     const at = { line: 0, column: 0 };
-    const found = actionsAt(
-      { farm, selection: { file: "farm.marl", from: at, to: at }, canCreate: true, now: 0 },
-      ["refactor"],
+    const found = inOneGo(
+      actionsAt({ farm, selection: { file: "farm.marl", from: at, to: at }, canCreate: true, now: 0 }, [
+        "refactor",
+      ]),
     );
     expect(found.map(({ title }) => title)).toEqual([
       "Move part to a new file solutions.marl",
@@ -153,10 +170,9 @@ function checkMoves(texts: ReadonlyMap<string, string>): number {
     for (const { headerLine } of document.sections) {
       const at = { line: headerLine, column: 0 };
       const selection = { file, from: at, to: at };
-      for (const action of actionsAt({ farm, selection, canCreate: true, now: 0 }, [
-        "refactor.move",
-        "refactor.rewrite",
-      ])) {
+      for (const action of inOneGo(
+        actionsAt({ farm, selection, canCreate: true, now: 0 }, ["refactor.move", "refactor.rewrite"]),
+      )) {
         expect(reported(withoutOrder(walkedAfter(farm, action))), `${file}: ${action.title}`).toBe(before);
         done += 1;
       }
@@ -198,7 +214,7 @@ describe("the report is the same afterwards, apart from places", () => {
         const farm = walk(texts);
         const at = { line: 2, column: 0 };
         const selection = { file: "raceways/log.marl", from: at, to: at };
-        const found = actionsAt({ farm, selection, canCreate: true, now: 0 }, ["refactor.rewrite"]);
+        const found = inOneGo(actionsAt({ farm, selection, canCreate: true, now: 0 }, ["refactor.rewrite"]));
         for (const action of found) {
           const sorted = textsAfter(farm, action);
           const log = sorted.get("raceways/log.marl")!.split("\n");

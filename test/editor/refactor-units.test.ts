@@ -2,6 +2,7 @@ import { readdirSync, readFileSync } from "node:fs";
 import { join, resolve } from "node:path";
 import { describe, expect, test } from "vitest";
 import { statementTable } from "../../grammar/statements.ts";
+import { inOneGo } from "../../server/culture/keep.ts";
 import { inUnit } from "../../server/editor/code-actions/other-units.ts";
 import { quantitiesOf } from "../../server/editor/code-actions/quantities.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
@@ -152,7 +153,9 @@ test("nothing that a statement can hold is offered in a unit in which it can't b
       for (const [index, { quantity, measured }] of (statement ? quantitiesOf(statement) : []).entries()) {
         const at = { line: number, column: quantity.number.start };
         const selection = { file: "farm.marl", from: at, to: at };
-        for (const action of actionsAt({ farm, selection, canCreate: false, now: 0 }, ["refactor.rewrite"])) {
+        for (const action of inOneGo(
+          actionsAt({ farm, selection, canCreate: false, now: 0 }, ["refactor.rewrite"]),
+        )) {
           const changed = walk(textsAfter(farm, action));
           const line = changed.documents.get("farm.marl")!.lines[number]!;
           expect(line.statement?.kind, `${action.title}: ${line.text}`).toBe(statement!.kind);

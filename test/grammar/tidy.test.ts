@@ -298,6 +298,12 @@ greenhouse  north
 `);
   });
 
+  test("a line with a unit that is none", () => {
+    stays(
+      "system vat\n  tank main 500 L\n   tank u  30x40x50cm times 2 # é海🐠\n  evaporates 4  L / dya\n  limit pH  swing 0.2 ± 0.1  foo\n",
+    );
+  });
+
   test("a header that opens its section though it can't be read has its blank line", () => {
     tidies(
       "system a\n  tank main 5 L\n  log  a  b\n  2026-11-30 note  “x”\n",

@@ -139,6 +139,19 @@ describe("a client of action literals and nothing more", () => {
   });
 });
 
+test("a long log selected as a whole has a short menu, and a cancel is heard", async () => {
+  const lines = Array.from({ length: 20_000 }, () => "  evaporates 7,9 L/day\n");
+  const { client, uri } = await start(rich, `system vat\n  tank main 500 L\n${lines.join("")}`);
+  const range = { start: { line: 0, character: 0 }, end: { line: 20_002, character: 0 } };
+  const params = { textDocument: { uri }, range, context: { diagnostics: [], triggerKind: 2 } };
+  const found = await client.request<readonly Answer[]>("textDocument/codeAction", params);
+  expect(found.length).toBe(50);
+  const all = { ...params, context: { diagnostics: [], only: ["source"] } };
+  const asked = client.cancellable("textDocument/codeAction", all);
+  asked.take();
+  await expect(asked.answer).rejects.toMatchObject({ code: -32800 });
+});
+
 describe("a client that knows commands only", () => {
   test("is sent the edit when it runs one", async () => {
     const { client, uri, ask } = await start(commandsOnly);

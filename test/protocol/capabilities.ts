@@ -2,6 +2,8 @@
 
 export const poor = {};
 
+const upTo = (last: number): number[] => Array.from({ length: last }, (_, index) => index + 1);
+
 /** Everything that a well-equipped editor declares; problems are pulled. */
 export const rich = {
   general: { positionEncodings: ["utf-8", "utf-16", "utf-32"] },
@@ -24,6 +26,7 @@ export const rich = {
     publishDiagnostics: { relatedInformation: true, versionSupport: true, codeDescriptionSupport: true },
     hover: { contentFormat: ["markdown", "plaintext"] },
     completion: {
+      completionItemKind: { valueSet: upTo(25) },
       completionItem: {
         snippetSupport: true,
         insertReplaceSupport: true,
@@ -34,12 +37,13 @@ export const rich = {
     signatureHelp: {
       signatureInformation: {
         activeParameterSupport: true,
+        noActiveParameterSupport: true,
         documentationFormat: ["markdown"],
         parameterInformation: { labelOffsetSupport: true },
       },
     },
     definition: { linkSupport: true },
-    documentSymbol: { hierarchicalDocumentSymbolSupport: true },
+    documentSymbol: { hierarchicalDocumentSymbolSupport: true, symbolKind: { valueSet: upTo(26) } },
     codeAction: {
       codeActionLiteralSupport: { codeActionKind: { valueSet: ["", "quickfix", "refactor", "source"] } },
       resolveSupport: { properties: ["edit"] },

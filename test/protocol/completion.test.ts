@@ -157,7 +157,7 @@ test("a name of a file that isn't used brings its use line", async () => {
   expect(items).toEqual([
     {
       label: "mixing-vat",
-      kind: 22,
+      kind: 7,
       detail: "New salt water (waters.marl)",
       sortText: "0000",
       filterText: "mixing-vat",
@@ -231,4 +231,28 @@ test("a signature has its parts by place, or in words that stand nowhere before"
     activeParameter: 4,
   });
   expect(await narrow.client.request("textDocument/signatureHelp", narrow.at(3, 0))).toBeNull();
+});
+
+test("behind a full form no part is marked: for a client that can't have that, there is no help", async () => {
+  const full = "system vat\n  stopped head\n\nlog vat\n  2026-11-01 stopped head by mk ";
+  const ask = async (capabilities: object) => {
+    const { client, at } = await started(capabilities);
+    await client.change("farm.marl", 2, [{ text: full }]);
+    return client.request("textDocument/signatureHelp", at(4, 32));
+  };
+  expect(await ask(rich)).toMatchObject({ activeSignature: 0, activeParameter: null });
+  expect(await ask(poor)).toBeNull();
+});
+
+test("a client is told of the kinds that it knows", async () => {
+  const kindsFor = async (capabilities: object) => {
+    const { client, complete } = await started(capabilities);
+    await client.change("farm.marl", 2, [
+      { text: "system vat\n  tank main 500 L\n  by-hand \n\nsolution ash\n  supplies alkalinity 1 meq/mL\n" },
+    ]);
+    const answer = await complete(2, 10);
+    return answer!.items.map(({ label, kind }) => [label, kind]);
+  };
+  expect(await kindsFor(rich)).toContainEqual(["ash", 22]);
+  expect(await kindsFor(poor)).toContainEqual(["ash", 7]);
 });

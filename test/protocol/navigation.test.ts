@@ -402,6 +402,32 @@ describe("a poor client", () => {
     ]);
   });
 
+  test("that names no kinds of symbols is told of those that it knows", async () => {
+    const { client } = await started({}, "utf-16");
+    const found = await client.request<readonly { readonly name: string; readonly kind: number }[]>(
+      "textDocument/documentSymbol",
+      { textDocument: { uri: client.uriOf("farm.marl") } },
+    );
+    expect(found.length).toBeGreaterThan(0);
+    expect(found.filter(({ kind }) => kind > 18)).toEqual([]);
+  });
+
+  test("that asks about places beyond a file is told of none", async () => {
+    const { askFile } = await started({}, "utf-16");
+    const beyond = { line: 99, character: 0 };
+    expect(await askFile("selectionRange", "farm.marl", { positions: [beyond] })).toBeNull();
+    const both = await askFile("selectionRange", "farm.marl", {
+      positions: [{ line: 0, character: 0 }, beyond],
+    });
+    expect((both as readonly unknown[])[1]).toEqual({ range: { start: beyond, end: beyond } });
+  });
+
+  test("that gives a file a name that isn't Marl's has no path mended to it", async () => {
+    const { client } = await started({ workspace: { fileOperations: { willRename: true } } }, "utf-16");
+    const files = [{ oldUri: client.uriOf(stock), newUri: client.uriOf("stock.txt") }];
+    expect(await client.request("workspace/willRenameFiles", { files })).toBeNull();
+  });
+
   test("that only tells of renamed files has plain edits, and its farm looked at again", async () => {
     const fileOperations = { willRename: true, didRename: true };
     const { client, ask, range, location } = await started({ workspace: { fileOperations } }, "utf-16");
@@ -455,9 +481,7 @@ describe("a poor client", () => {
       expect(await ask("references", file, { position, context })).toBeNull();
     }
     expect(await ask("documentHighlight", "farm.marl", { position })).toEqual([]);
-    expect(await ask("selectionRange", "farm.marl", { positions: [position] })).toEqual([
-      { range: { start: position, end: position } },
-    ]);
+    expect(await ask("selectionRange", "farm.marl", { positions: [position] })).toBeNull();
     expect(await ask("semanticTokens/full", "nowhere.marl", {})).toEqual({ data: [] });
     expect(await ask("foldingRange", "nowhere.marl", {})).toBeNull();
   });

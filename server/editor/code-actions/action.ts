@@ -52,6 +52,9 @@ export interface Asked {
 /** Finds the actions of one sort at a place. */
 export type FindActions = (asked: Asked) => readonly Action[];
 
+/** The same, with pauses, where it may take long. */
+export type FindInSteps = (asked: Asked) => Generator<void, readonly Action[]>;
+
 export const inLines = (edits: readonly (LineEdit | TextEdit)[]): FarmEdit => ({ edits, created: [] });
 
 export const isTextEdit = (edit: LineEdit | TextEdit): edit is TextEdit => "from" in edit;

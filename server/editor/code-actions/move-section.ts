@@ -5,12 +5,13 @@ import { isBlank } from "../../../grammar/tokens.ts";
 import type { Declaration } from "../../culture/names.ts";
 import type { Farm } from "../../farm.ts";
 import { editsBetween, rawLines, withEdits } from "../text-edits.ts";
-import type { Action, Asked, FarmEdit, FindActions } from "./action.ts";
+import type { Action, Asked, FarmEdit, FindInSteps } from "./action.ts";
 import { lastOwnLine } from "./logs.ts";
+import { isFree } from "./split-log.ts";
 import { stillResolves } from "./still-resolves.ts";
 import { addingUses, filesDeclaring, isNamedIn, namedIn, reachedFrom } from "./uses.ts";
 
-/** What can be moved, and the name of a new file for it. */
+/** What can be moved, and the name of a new file for it; where that is taken, the file gets its own name. */
 const newFileFor: Readonly<Partial<Record<SectionKind, string>>> = {
   solution: "solutions.marl",
   reagent: "reagents.marl",
@@ -34,29 +35,31 @@ interface Moving {
   readonly users: readonly string[];
 }
 
-export const moving: FindActions = (asked) => {
+export const moving: FindInSteps = function* (asked) {
   const found = declarationAt(asked);
   if (!found) return [];
   const { farm, declaration, file } = found;
   const folder = file.slice(0, file.lastIndexOf("/") + 1);
-  const fresh = folder + (newFileFor[declaration.kind] ?? "");
-  const isNew = !farm.texts.has(fresh) && !farm.unreadable.has(fresh) && !farm.links.has(fresh);
+  const names = [newFileFor[declaration.kind]!, `${declaration.name}.marl`];
+  const fresh = names.map((name) => folder + name).find((path) => isFree(farm, path));
   const resolves = stillResolves(farm, declaration);
   const targets = [
-    ...(asked.canCreate && isNew ? [{ file: fresh, title: `a new file ${fresh}` }] : []),
+    ...(asked.canCreate && fresh !== undefined ? [{ file: fresh, title: `a new file ${fresh}` }] : []),
     ...otherFiles(farm, file, declaration.kind).map((each) => ({ file: each, title: each })),
   ];
-  return targets.flatMap(({ file: target, title }): Action[] => {
+  const actions: Action[] = [];
+  for (const { file: target, title } of targets) {
+    yield;
     const edit = moved(found, target);
-    if (!resolves(edit)) return [];
-    return [
-      {
-        ...{ title: `Move ${declaration.name} to ${title}`, kind: "refactor.move", problem: null },
-        isPreferred: false,
-        edit: () => edit,
-      },
-    ];
-  });
+    yield;
+    if (!resolves(edit)) continue;
+    actions.push({
+      ...{ title: `Move ${declaration.name} to ${title}`, kind: "refactor.move", problem: null },
+      isPreferred: false,
+      edit: () => edit,
+    });
+  }
+  return actions;
 };
 
 function declarationAt({ farm, selection: { file, from } }: Asked): Moving | null {

@@ -15,17 +15,18 @@ export const quieting: FindActions = (asked) => {
     const { code, severity, place } = problem;
     const document = asked.farm.documents.get(place.file);
     const key = `${code} ${place.line}`;
-    // Two of a kind on a line are quietened together.
+    // Two of a kind on a line are quietened together, and all of a kind in a file.
     if (!document || severity === "error" || neverQuiet.has(code) || seen.has(key)) return [];
-    seen.add(key);
-    const action = (title: string, edit: LineEdit): Action => ({
+    const isFirst = !seen.has(code);
+    seen.add(key).add(code);
+    const action = (title: string, edit: () => LineEdit): Action => ({
       ...{ title, kind: "quickfix", problem, isPreferred: false },
-      edit: () => inLines([edit]),
+      edit: () => inLines([edit()]),
     });
     const here = quietHere(document, problem);
     return [
-      ...(here ? [action(`Keep ${code} quiet on this line`, here)] : []),
-      action(`Keep ${code} quiet in this file`, quietInFile(document, problem)),
+      ...(here ? [action(`Keep ${code} quiet on this line`, () => here)] : []),
+      ...(isFirst ? [action(`Keep ${code} quiet in this file`, () => quietInFile(document, problem))] : []),
     ];
   });
 };

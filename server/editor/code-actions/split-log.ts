@@ -17,7 +17,9 @@ export const splitting: FindActions = (asked) => {
   for (const block of blocksOf(log)) {
     if (block.minute === null) continue;
     const month = monthOf(block.minute);
-    byMonth.set(month, [...(byMonth.get(month) ?? []), block]);
+    const own = byMonth.get(month);
+    if (own) own.push(block);
+    else byMonth.set(month, [block]);
   }
   const months = [...byMonth.keys()].sort();
   const older = months.slice(0, -1);

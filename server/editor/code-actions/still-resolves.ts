@@ -1,9 +1,10 @@
 /** Whether names still mean what they meant after an edit: asked before it is offered, since reasons against it are many. */
-import { type MarlDocument, readDocument } from "../../../grammar/document.ts";
+import { type DocumentLine, type MarlDocument, readDocument } from "../../../grammar/document.ts";
 import { isReagent } from "../../chemistry/reagents.ts";
 import { bindNames, type Declaration } from "../../culture/names.ts";
 import type { Farm } from "../../farm.ts";
 import { type TextEdit, withEdits } from "../text-edits.ts";
+import { wordsIn } from "../words.ts";
 import { type FarmEdit, isTextEdit } from "./action.ts";
 
 /** Tells of edits whether every name that a file speaks of still stands for the same thing, and nothing new is wrong with names. */
@@ -18,7 +19,7 @@ export function stillResolves(farm: Farm, moved: Declaration): (edit: FarmEdit) 
       return [...table].every(([name, declaration]) => {
         const now = there?.get(name);
         // A file that doesn't speak of it needn't see it.
-        if (!now) return !documents.get(file)?.lines.some(({ text }) => text.includes(name));
+        if (!now) return !documents.get(file)?.lines.some((line) => names(line, declaration));
         const isMoved = declaration === moved;
         return (
           now.kind === declaration.kind &&
@@ -30,6 +31,11 @@ export function stillResolves(farm: Farm, moved: Declaration): (edit: FarmEdit) 
     });
   };
 }
+
+/** True where one of a line's words stands for it: a text or a longer name that holds the same letters doesn't. */
+const names = (line: DocumentLine, { name, kind }: Declaration): boolean =>
+  line.text.includes(name) &&
+  wordsIn(line).some((word) => word.text === name && word.name?.kinds.some((each) => each === kind));
 
 const codesOf = (findings: ReturnType<typeof bindNames>["findings"]): string =>
   findings

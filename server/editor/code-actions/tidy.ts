@@ -1,9 +1,9 @@
 /** Tidies the file. */
 import { tidyEdits } from "../formatting.ts";
-import { type FindActions, inLines } from "./action.ts";
+import { type FindInSteps, inLines } from "./action.ts";
 
-export const tidying: FindActions = ({ farm, selection: { file } }) => {
-  const edits = tidyEdits(farm, file);
+export const tidying: FindInSteps = function* ({ farm, selection: { file } }) {
+  const edits = yield* tidyEdits(farm, file);
   if (edits.length === 0) return [];
   const edit = () => inLines(edits);
   return [{ title: "Tidy this file", kind: "source.tidy", problem: null, isPreferred: false, edit }];

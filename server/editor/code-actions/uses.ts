@@ -1,7 +1,7 @@
 /** What a file needs to see of others, and the `use` lines for it. */
 import type { MarlDocument } from "../../../grammar/document.ts";
-import { isBlank } from "../../../grammar/tokens.ts";
 import { pathTo } from "../../checks/name.ts";
+import { addingUseLines } from "../../checks/use-lines.ts";
 import type { Declaration } from "../../culture/names.ts";
 import type { Farm } from "../../farm.ts";
 import type { TextEdit } from "../text-edits.ts";
@@ -53,24 +53,11 @@ export const filesDeclaring = (declarations: Iterable<Declaration>): ReadonlySet
 /** A `use` line of one file for another. */
 export const useLine = (from: string, to: string): string => `use "${pathTo(from, to)}"`;
 
-/** Puts `use` lines below those that a file has, else below the comment that it begins with. */
+/** Puts `use` lines where they belong. */
 export function addingUses(file: string, document: MarlDocument, targets: readonly string[]): TextEdit[] {
   if (targets.length === 0) return [];
-  const { lines, lineEnding, sections, uses } = document;
-  const firstHeader = sections[0]?.headerLine ?? lines.length;
-  const last = uses.filter(({ line }) => line < firstHeader).at(-1)?.line;
-  const text = targets.map((target) => `${useLine(file, target)}${lineEnding}`).join("");
-  const put = (line: number, text: string): TextEdit[] => [
-    { file, from: { line, column: 0 }, to: { line, column: 0 }, text },
-  ];
-  if (last !== undefined && last + 1 < lines.length) return put(last + 1, text);
-  if (last !== undefined) {
-    const end = { line: last, column: lines[last]!.text.length };
-    return [{ file, from: end, to: end, text: lineEnding + text.slice(0, -lineEnding.length) }];
-  }
-  // A comment with a blank line below it is the file's own; one right above a header is the header's.
-  let below = 0;
-  while (lines[below]?.text.startsWith("#")) below += 1;
-  const isFilesOwn = below > 0 && below + 1 < lines.length && isBlank(lines[below]!.text);
-  return isFilesOwn ? put(below + 1, text + lineEnding) : put(0, text + lineEnding);
+  const written = targets.map((target) => useLine(file, target));
+  const { line, start, text } = addingUseLines(file, document, written);
+  const at = { line, column: start };
+  return [{ file, from: at, to: at, text: (text ?? "").replaceAll("\n", document.lineEnding) }];
 }

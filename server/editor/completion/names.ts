@@ -86,13 +86,19 @@ function handSolutions({ system }: CompletionPlace): Offer[] {
   });
 }
 
-function sharedOffers({ farm, cursor, system, row }: CompletionPlace, kinds: readonly ThingKind[]): Offer[] {
+function sharedOffers(place: CompletionPlace, kinds: readonly ThingKind[]): Offer[] {
+  const { farm, cursor, system, row } = place;
   const seen = farm.bound.names.visible.get(cursor.file)?.values() ?? [];
-  const isOther = (declaration: Declaration) => row?.rule === "log" || declaration.ref !== system?.ref;
+  const isOther = (declaration: Declaration) =>
+    row?.rule === "log" || (declaration.ref !== system?.ref && !isOwn(place, declaration));
   return inKinds([...seen].filter(isOther), kinds).map((declaration) =>
     offerOf(declaration, detailOf(farm, declaration, cursor.file)),
   );
 }
+
+/** True of what the cursor's own section declares: nothing is made of itself. */
+const isOwn = ({ cursor, line }: CompletionPlace, { sections }: Declaration): boolean =>
+  sections.some(({ file, section }) => file === cursor.file && section === line.line.section);
 
 const inKinds = (declarations: readonly Declaration[], kinds: readonly ThingKind[]): Declaration[] =>
   kinds.flatMap((kind) => declarations.filter((declaration) => declaration.kind === kind));

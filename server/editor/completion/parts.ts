@@ -2,7 +2,7 @@
 
 import type { ParameterName } from "../../../grammar/parameters.ts";
 import { partOf } from "../../../grammar/parts.ts";
-import { asCaCO3, plusMinus, unitWord } from "../../../grammar/tokens.ts";
+import { asCaCO3, numberWord, plusMinus, unitWord } from "../../../grammar/tokens.ts";
 import { mayBeWritten } from "../../report/explain/units.ts";
 import type { Offer } from "./item.ts";
 import type { CompletionPlace } from "./place.ts";
@@ -10,8 +10,29 @@ import type { CompletionPlace } from "./place.ts";
 export function partOffers(place: CompletionPlace): Offer[] {
   const { expected, words, row } = place;
   if (words.length === 0 || !row) return [];
-  const keywords = expected.filter((word) => !word.startsWith("a ") && !elsewhere.has(word));
-  return [...keywords, ...behindUnit(place)].map(partOffer);
+  if (needsUnit(place)) return [];
+  const keywords = expected.filter(
+    (word) => !word.startsWith("a ") && !elsewhere.has(word) && !(word === "each" && isArea(words)),
+  );
+  const calcite = words.at(-1)?.image === "as" ? behindUnit({ ...place, words: words.slice(0, -1) }) : [];
+  return [
+    ...(calcite.includes("as CaCO3") ? [{ ...partOffer("as CaCO3"), label: "CaCO3" }] : []),
+    ...[...keywords, ...behindUnit(place)].map(partOffer),
+  ];
+}
+
+/** An uptake is that of one piece only where pieces are counted. */
+const isArea = (words: CompletionPlace["words"]): boolean =>
+  words.some(({ image }) => image === "uptake") && !words.some(({ image }) => /^pieces?$/.test(image));
+
+/** Statements in which a number may take its unit from a later one. */
+const borrowing: ReadonlySet<string> = new Set(["hold", "tank"]);
+
+/** True behind a number that can't stand without a unit. */
+function needsUnit({ words, expected, parameter, row }: CompletionPlace): boolean {
+  if (words.at(-1)?.tokenType !== numberWord || !expected.includes("a unit")) return false;
+  if (words.at(-2)?.tokenType === plusMinus || (row && borrowing.has(row.rule))) return false;
+  return parameter === null || !mayBeWritten(parameter as ParameterName, null);
 }
 
 /** A comma is typed sooner than chosen; pieces stand with the units that could stand in their place. */

@@ -1,6 +1,6 @@
 /** Units that fit what is being written, the one that the system uses first. */
 import { type Parameter, parameterOf } from "../../../grammar/parameters.ts";
-import { cross, numberWord, plusMinus } from "../../../grammar/tokens.ts";
+import { asCaCO3, cross, numberWord, plusMinus } from "../../../grammar/tokens.ts";
 import { unitTable } from "../../../grammar/units.ts";
 import { factAt } from "../../culture/history.ts";
 import { asRate, readConcentration, readStrength } from "../../quantity/concentration.ts";
@@ -86,14 +86,38 @@ const unitsByRule: Readonly<Record<string, Units | Readonly<Record<string, reado
 export function unitOffers(place: CompletionPlace): Offer[] {
   const { expected, row, words } = place;
   if (!expected.includes("a unit") || !row) return [];
-  if (expected.includes("pieces")) return [partOffer("pieces"), ...areas.map((unit) => offerOf(unit, null))];
+  if (expected.includes("pieces")) {
+    const counted = countedBy(place);
+    return [
+      ...(counted === "area" ? [] : [partOffer("pieces")]),
+      ...(counted === "pieces" ? [] : areas.map((unit) => offerOf(unit, null))),
+    ];
+  }
   const units = unitsByRule[row.rule];
   // A unit follows its number; after a stroke only its rest is missing, and the whole word is typed anew.
   if (!units || words.at(-1)?.tokenType !== numberWord) return [];
   const found = typeof units === "function" ? units(place) : byMarker(place, units);
   const isDeviation = words.at(-2)?.tokenType === plusMinus;
-  const all = isDeviation ? ["%", ...found.filter((unit) => unit !== "%")] : found;
+  const all = isDeviation ? ["%", ...deviationsOf(place, found).filter((unit) => unit !== "%")] : found;
   return [...new Set(all)].filter((unit) => unit !== "").map((unit) => offerOf(unit, rowOf(place)));
+}
+
+/** How the corals that an event names are counted; null of those that nothing is known of. */
+function countedBy({ row, words, system, now }: CompletionPlace): "pieces" | "area" | null {
+  const name = row?.rule === "cohort" ? undefined : words[1]?.image;
+  const history = name === undefined ? undefined : system?.facts.cohorts.get(name);
+  return (factAt(history, now) ?? history?.[0])?.value.count.by ?? null;
+}
+
+const calcite = " as CaCO3";
+
+/** What stands behind `±` counts what the number before it counts, and doesn't say so again. */
+function deviationsOf({ words }: CompletionPlace, units: readonly string[]): readonly string[] {
+  const isCalcite = words.some(({ tokenType }) => tokenType === asCaCO3);
+  return units.flatMap((unit) => {
+    if (unit.endsWith(calcite) !== isCalcite) return [];
+    return isCalcite ? [unit.slice(0, -calcite.length)] : [unit];
+  });
 }
 
 function byMarker(
@@ -132,7 +156,7 @@ function ratesOf(place: CompletionPlace): readonly string[] {
   const row = rowOf(place);
   if (!row) return [];
   const rates = ["", ...valuesOf(place)].map((unit) =>
-    unit.endsWith(" as CaCO3") ? `${unit.slice(0, -" as CaCO3".length)}/day as CaCO3` : `${unit}/day`,
+    unit.endsWith(calcite) ? `${unit.slice(0, -calcite.length)}/day${calcite}` : `${unit}/day`,
   );
   return rates.filter((unit) => readConcentration(oneOf(unit), row, asRate).ok);
 }

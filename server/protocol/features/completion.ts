@@ -37,6 +37,18 @@ const kinds: Readonly<Record<ItemKind, CompletionItemKind>> = {
   pump: CompletionItemKind.Field,
 };
 
+/** What an older client is told instead of a kind that it doesn't know. */
+const olderKinds: Readonly<Partial<Record<CompletionItemKind, CompletionItemKind>>> = {
+  [CompletionItemKind.Constant]: CompletionItemKind.Value,
+  [CompletionItemKind.Struct]: CompletionItemKind.Class,
+  [CompletionItemKind.Event]: CompletionItemKind.Snippet,
+};
+
+function kindFor({ completionKinds }: Client, item: ItemKind): CompletionItemKind {
+  const kind = kinds[item];
+  return completionKinds.has(kind) ? kind : (olderKinds[kind] ?? CompletionItemKind.Text);
+}
+
 /** What an item carries until it is looked at. */
 interface Carried {
   readonly uri: string;
@@ -106,7 +118,7 @@ function itemFor(
   const replace = convert.range(farm, item.replace);
   return {
     label: item.label,
-    kind: kinds[item.kind],
+    kind: kindFor(client, item.kind),
     ...(item.detail === "" ? {} : { detail: item.detail }),
     sortText: String(index).padStart(4, "0"),
     filterText: item.filter,

@@ -25,6 +25,8 @@ interface Renaming {
   readonly newUri: string;
 }
 
+const isMarl = (path: string): boolean => path.endsWith(".marl");
+
 /** The edits of one farm. */
 function editsFor(look: Look, renames: readonly Renaming[]): readonly LineEdit[] {
   const root = pathOf(look.uriOf(""));
@@ -34,7 +36,10 @@ function editsFor(look: Look, renames: readonly Renaming[]): readonly LineEdit[]
       const path = pathOf(uri);
       return path === null ? null : (pathIn(root, path) ?? pathIn(look.key, path));
     });
-    return from ? [[from, to ?? null]] : [];
+    if (!from) return [];
+    // Under a name that isn't Marl's a file leaves the farm.
+    const leaves = !to || (isMarl(from) && !isMarl(to));
+    return [[from, leaves ? null : to]];
   });
   return inside.length === 0 ? [] : mendedUses(look.farm, movesOf(look.farm, inside));
 }

@@ -14,6 +14,8 @@ export const selectionFeature: Feature = {
       about(session, textDocument.uri, token, async (look) => {
         const cursors = positions.map((position) => convert.cursor(look, position));
         const all = await inTurns(selections(look.farm, cursors), token);
+        // None of them is in the file.
+        if (all.every((grown) => grown.length === 0)) return null;
         return positions.map((position, index): SelectionRange => {
           const ranges = all[index]!.map((span) => convert.lineRange(look.farm, span));
           const grown = ranges.reduceRight<SelectionRange | undefined>(

@@ -15,35 +15,36 @@ export const signatureHelpFeature: Feature = {
       about(session, textDocument.uri, token, (look) => {
         const found = signatureHelp(look.farm, convert.cursor(look, position));
         if (!found) return null;
+        const { active } = found.signatures[found.active]!;
+        // A form that is full has no part to mark, and some clients then mark the first.
+        if (active === null && !client.signatureNoActivePart) return null;
         const documentation = client.markdownSignature
           ? { kind: MarkupKind.Markdown, value: found.markdown }
           : plainText(found.markdown);
         return {
           signatures: found.signatures.map((signature) => information(client, signature, documentation)),
           activeSignature: found.active,
-          // Beyond the last part none is marked.
-          activeParameter: activeOf(found.signatures[found.active]!),
+          activeParameter: active,
         };
       }),
     );
   },
 };
 
-const activeOf = ({ active, parts }: Signature): number => active ?? parts.length;
-
 function information(
   client: Client,
   signature: Signature,
   documentation: SignatureInformation["documentation"],
 ): SignatureInformation {
-  const { label, parts } = signature;
+  const { label, parts, active } = signature;
+  const marks = client.signatureActivePart && (active !== null || client.signatureNoActivePart);
   return {
     label,
     ...(documentation === undefined ? {} : { documentation }),
     parameters: parts.map(({ start, end }) => ({
       label: client.signatureOffsets ? [start, end] : told(label, start, end),
     })),
-    ...(client.signatureActivePart ? { activeParameter: activeOf(signature) } : {}),
+    ...(marks ? { activeParameter: active } : {}),
   };
 }
 

@@ -9,9 +9,9 @@ import {
 } from "../../editor/symbols.ts";
 import { workspaceSymbols } from "../../editor/workspace-symbols.ts";
 import type { Farm } from "../../farm.ts";
-import type { Convert } from "../convert.ts";
+import type { Client } from "../client.ts";
 import { turn } from "../farm-walk.ts";
-import { about, type Feature, unlessCancelled } from "../session.ts";
+import { about, type Feature, type Session, unlessCancelled } from "../session.ts";
 import { inTurns } from "../turns.ts";
 import type { Look } from "../workspace.ts";
 
@@ -34,31 +34,41 @@ const kindOf: Readonly<Record<SymbolSort, SymbolKind>> = {
   pump: SymbolKind.Function,
 };
 
-function* trees(
-  convert: Convert,
-  farm: Farm,
-  symbols: readonly FileSymbol[],
-): Generator<void, DocumentSymbol[]> {
+/** What an older client is told instead of a kind that it doesn't know. */
+const olderKinds: Readonly<Partial<Record<SymbolKind, SymbolKind>>> = {
+  [SymbolKind.Struct]: SymbolKind.Class,
+  [SymbolKind.Event]: SymbolKind.Field,
+};
+
+function kindFor({ symbolKinds }: Client, sort: SymbolSort): SymbolKind {
+  const kind = kindOf[sort];
+  return symbolKinds.has(kind) ? kind : (olderKinds[kind] ?? SymbolKind.Variable);
+}
+
+type Told = Pick<Session, "client" | "convert">;
+
+function* trees(told: Told, farm: Farm, symbols: readonly FileSymbol[]): Generator<void, DocumentSymbol[]> {
+  const { client, convert } = told;
   const converted: DocumentSymbol[] = [];
   for (const [index, { name, detail, sort, whole, head, children }] of symbols.entries()) {
     if (index % symbolsAtOnce === 0) yield;
     converted.push({
       name,
       ...(detail === null ? {} : { detail }),
-      kind: kindOf[sort],
+      kind: kindFor(client, sort),
       range: convert.lineRange(farm, whole),
       selectionRange: convert.range(farm, head),
-      children: yield* trees(convert, farm, children),
+      children: yield* trees(told, farm, children),
     });
   }
   return converted;
 }
 
-function flat(convert: Convert, look: Look, symbol: NamedSymbol, whole: boolean): SymbolInformation {
+function flat({ client, convert }: Told, look: Look, symbol: NamedSymbol, whole: boolean): SymbolInformation {
   const { name, sort, within, head } = symbol;
   const range = whole ? convert.lineRange(look.farm, symbol.whole) : convert.range(look.farm, head);
   return {
-    ...{ name, kind: kindOf[sort], location: { uri: look.uriOf(head.file), range } },
+    ...{ name, kind: kindFor(client, sort), location: { uri: look.uriOf(head.file), range } },
     ...(within === null ? {} : { containerName: within }),
   };
 }
@@ -68,7 +78,7 @@ export const symbolsFeature: Feature = {
   about: "the outline of a file: systems with what they hold, recipes, logs by month",
   offers: () => ({ documentSymbolProvider: true }),
   listen: (session) => {
-    const { connection, client, convert } = session;
+    const { connection, client } = session;
     connection.onDocumentSymbol(({ textDocument }, token) =>
       about(
         session,
@@ -78,10 +88,10 @@ export const symbolsFeature: Feature = {
           const { farm, file } = look;
           if (!client.symbolTree) {
             const named = await inTurns(namedSymbols(farm, file), token);
-            return named.map((symbol) => flat(convert, look, symbol, true));
+            return named.map((symbol) => flat(session, look, symbol, true));
           }
           const symbols = await inTurns(fileSymbols(farm, file), token);
-          return inTurns(trees(convert, farm, symbols), token);
+          return inTurns(trees(session, farm, symbols), token);
         },
       ),
     );
@@ -92,12 +102,13 @@ export const workspaceSymbolsFeature: Feature = {
   title: "Workspace symbols",
   about: "sections and named things of all farms, found by a few of their letters",
   offers: () => ({ workspaceSymbolProvider: true }),
-  listen: ({ connection, convert, workspace }) => {
+  listen: (session) => {
+    const { connection, workspace } = session;
     connection.onWorkspaceSymbol(async ({ query }, token): Promise<SymbolInformation[]> => {
       await turn();
       const looks = await unlessCancelled(token, workspace.looks());
       const found = await inTurns(workspaceSymbols(looks, query), token);
-      return found.map(({ symbol, where }) => flat(convert, where, symbol, false));
+      return found.map(({ symbol, where }) => flat(session, where, symbol, false));
     });
   },
 };
