@@ -24,6 +24,8 @@ export interface HeldFarm {
   readonly walk: FarmWalk;
   /** Open documents by file. */
   readonly open: Map<string, OpenText>;
+  /** True once it was let go: what was still being read of it counts no more. */
+  isForgotten: boolean;
 }
 
 export interface WorkspaceListener {
@@ -39,6 +41,7 @@ export function holdFarm(key: string, spelling: string | null, listener: Workspa
     key,
     spelling,
     open: new Map(),
+    isForgotten: false,
     walk: walkFarm({
       moment: listener.moment,
       walked: (farm, changed) => listener.walked(lookOf(held, farm), changed),
@@ -67,7 +70,7 @@ export function putOpen({ open, walk }: HeldFarm, file: string, document: OpenTe
 export async function rereadFile(held: HeldFarm, file: string): Promise<void> {
   if (held.open.has(file) || held.spelling === null) return;
   const change = await readFileOf(held.key, file);
-  if (held.open.has(file) || isSame(held.walk.last(), file, change)) return;
+  if (held.isForgotten || held.open.has(file) || isSame(held.walk.last(), file, change)) return;
   held.walk.change([[file, change]]);
 }
 
@@ -82,12 +85,14 @@ export async function rereadFolder(held: HeldFarm): Promise<void> {
   const changes = [...found, ...gone].filter(
     ([file, change]) => !held.open.has(file) && !isSame(farm, file, change),
   );
-  if (changes.length > 0) held.walk.change(changes);
+  if (changes.length > 0 && !held.isForgotten) held.walk.change(changes);
 }
 
 /** Forgets all that a farm holds, so that nothing is told of it any more. */
-export const forget = ({ walk }: HeldFarm): void =>
-  walk.change(filesOf(walk.last()).map((file) => [file, null]));
+export function forget(held: HeldFarm): void {
+  held.isForgotten = true;
+  held.walk.change(filesOf(held.walk.last()).map((file) => [file, null]));
+}
 
 /** Every name that a farm has something under. */
 export const filesOf = (farm: Farm | null): readonly string[] =>

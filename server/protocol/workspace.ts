@@ -91,28 +91,31 @@ export function makeWorkspace(encoding: Encoding, listener: WorkspaceListener) {
     return null;
   }
 
-  /** Work on one document is done in the order in which it came; `isLast`: nothing more of it has come yet. */
+  /**
+   * Work on one document is done in the order in which it came; it may give the document another place. `isLast`:
+   * nothing more of it has come yet.
+   */
   function inTurn(
     uri: string,
-    work: (placed: Placed, isLast: () => boolean) => void | Promise<void>,
+    work: (placed: Placed, isLast: () => boolean) => void | Promise<Placed | undefined>,
   ): Promise<void> {
     const placed = documents.get(uri) ?? place(uri);
     const isLast = () => documents.get(uri) === after;
     const after = placed.then(async (found) => {
-      await work(found, isLast);
-      return found;
+      return (await work(found, isLast)) ?? found;
     });
     documents.set(uri, after);
     return busy(after.then(() => undefined));
   }
 
   /** A document that isn't open is looked at as any other file. */
-  async function closed(uri: string, { held, file }: Placed, isLast: () => boolean): Promise<void> {
+  async function closed(uri: string, { held, file }: Placed, isLast: () => boolean): Promise<undefined> {
     held.open.delete(file);
     await rereadFile(held, file);
-    if (!isLast()) return;
+    if (!isLast()) return undefined;
     documents.delete(uri);
     letGo(held);
+    return undefined;
   }
 
   function busy(work: Promise<void>): Promise<void> {
@@ -146,16 +149,20 @@ export function makeWorkspace(encoding: Encoding, listener: WorkspaceListener) {
 
   /** Looks again which farms there are, what is in them, and to which each open document belongs. */
   async function rearrange(): Promise<void> {
-    for (const [uri, before] of documents) {
-      const { held, file } = await before;
-      const open = held.open.get(file);
-      if (!open || held.spelling === null) continue;
-      const next = await place(uri);
-      if (next.held === held) continue;
-      held.open.delete(file);
-      putOpen(next.held, next.file, open);
-      documents.set(uri, Promise.resolve(next));
-    }
+    const moved = [...documents.keys()].map((uri) =>
+      inTurn(uri, async (placed, isLast) => {
+        const { held, file } = placed;
+        const open = held.open.get(file);
+        if (!open) return closed(uri, placed, isLast);
+        if (held.spelling === null) return placed;
+        const next = await place(uri);
+        if (next.held === held) return placed;
+        held.open.delete(file);
+        putOpen(next.held, next.file, open);
+        return next;
+      }),
+    );
+    await Promise.all(moved);
     for (const held of await heldFarms()) await rereadFolder(held);
     await holdFolders();
   }

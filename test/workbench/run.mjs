@@ -46,7 +46,19 @@ rmSync(output, { recursive: true, force: true });
 mkdirSync(output, { recursive: true });
 const bench = workbench(join(root, "dist/marl.vsix"));
 const code = await bench.start(trustsAll);
-const browser = await chromium.launch({ executablePath: "/usr/bin/chromium", args: chromiumFlags });
+const browser = await chromium.launch({
+  executablePath: "/usr/bin/chromium",
+  args: chromiumFlags,
+  handleSIGHUP: false,
+  handleSIGINT: false,
+  handleSIGTERM: false,
+});
+for (const signal of ["SIGHUP", "SIGINT", "SIGTERM"])
+  process.once(signal, async () => {
+    console.log(`stopped from outside by ${signal}`);
+    await clearAway();
+    process.exit(1);
+  });
 const context = await browser.newContext();
 const open = (of = code) => openWindow(context, of, bench.farm());
 const shot = (driven, picture) => driven.picture(join(output, `${picture}.png`));
@@ -73,11 +85,15 @@ for (const name of steps) {
   }
 }
 
-await browser.close();
-await code.stop();
-bench.remove();
+await clearAway();
 console.log(`${steps.length - failures} passed, ${failures} failed`);
 process.exitCode = failures > 0 ? 1 : 0;
+
+async function clearAway() {
+  await browser.close();
+  await code.stop();
+  bench.remove();
+}
 
 function seconds(since) {
   return `${((performance.now() - since) / 1000).toFixed(1)} s`;

@@ -115,7 +115,7 @@ function listening(running) {
 
 function stop(running) {
   return new Promise((stopped) => {
-    if (running.exitCode !== null) return stopped();
+    if (running.exitCode !== null || running.signalCode !== null) return stopped();
     running.once("exit", stopped);
     const below = descendants(running.pid);
     running.kill("SIGTERM");
