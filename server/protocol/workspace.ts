@@ -97,7 +97,7 @@ export function makeWorkspace(encoding: Encoding, listener: WorkspaceListener) {
    */
   function inTurn(
     uri: string,
-    work: (placed: Placed, isLast: () => boolean) => void | Promise<Placed | undefined>,
+    work: (placed: Placed, isLast: () => boolean) => undefined | Promise<Placed | undefined>,
   ): Promise<void> {
     const placed = documents.get(uri) ?? place(uri);
     const isLast = () => documents.get(uri) === after;
@@ -177,13 +177,17 @@ export function makeWorkspace(encoding: Encoding, listener: WorkspaceListener) {
       return ready;
     },
     open: (uri: string, version: number, text: string) =>
-      inTurn(uri, ({ held, file }) => putOpen(held, file, { uri, version, text })),
+      inTurn(uri, ({ held, file }) => {
+        putOpen(held, file, { uri, version, text });
+        return undefined;
+      }),
     change: (uri: string, version: number, changes: readonly TextChange[]) =>
       inTurn(uri, (placed, isLast) => {
         const { held, file } = placed;
         const before = held.open.get(file);
         if (!before) return closed(uri, placed, isLast);
         putOpen(held, file, { uri, version, text: changed(before.text, changes, encoding) });
+        return undefined;
       }),
     close: (uri: string) => inTurn(uri, (placed, isLast) => closed(uri, placed, isLast)),
     /** For a client that watches no files: whenever it opens or saves a document, everything is looked at. */

@@ -53,11 +53,13 @@ const browser = await chromium.launch({
   handleSIGINT: false,
   handleSIGTERM: false,
 });
+// Whoever stops this leaves nothing running behind.
+let stoppedBy = null;
 for (const signal of ["SIGHUP", "SIGINT", "SIGTERM"])
-  process.once(signal, async () => {
-    console.log(`stopped from outside by ${signal}`);
-    await clearAway();
-    process.exit(1);
+  process.once(signal, () => {
+    stoppedBy = signal;
+    // The step that runs ends with its window.
+    browser.close();
   });
 const context = await browser.newContext();
 const open = (of = code) => openWindow(context, of, bench.farm());
@@ -76,6 +78,7 @@ for (const name of steps) {
     await driven.startAnew();
     console.log(`ok ${name}: ${title} (${seconds(started)})`);
   } catch (error) {
+    if (stoppedBy) break;
     failures += 1;
     console.log(`FAILED ${name}: ${title} (${seconds(started)})\n${error.stack}`);
     await keepEvidence(name);
@@ -85,15 +88,12 @@ for (const name of steps) {
   }
 }
 
-await clearAway();
-console.log(`${steps.length - failures} passed, ${failures} failed`);
-process.exitCode = failures > 0 ? 1 : 0;
-
-async function clearAway() {
-  await browser.close();
-  await code.stop();
-  bench.remove();
-}
+await browser.close();
+await code.stop();
+bench.remove();
+if (stoppedBy) console.log(`stopped from outside by ${stoppedBy}`);
+else console.log(`${steps.length - failures} passed, ${failures} failed`);
+process.exitCode = failures > 0 || stoppedBy ? 1 : 0;
 
 function seconds(since) {
   return `${((performance.now() - since) / 1000).toFixed(1)} s`;
