@@ -53,11 +53,11 @@ test("drift and doses in the hover, cautions, and an overdose while it is typed"
   }
   const { diagnostics } = await client.problemsOf("north-house.marl", version);
   const overdose = diagnostics.filter(({ code }) => code.startsWith("overdose/"));
-  // 900 mL of 1.57 meq/mL in 1740 L: 0.81 meq/L, 2.3 dKH at once.
+  // 900 mL of 1.57 meq/mL in 1740 L: 0.813 meq/L, 2.28 dKH at once.
   expect(overdose.map(({ code, range }) => [code, range.start.line])).toEqual([
     ["overdose/alkalinity-dose", line + 1],
     ["overdose/alkalinity-rise", line + 1],
     ["overdose/ph", line + 1],
   ]);
-  expect(overdose[0]!.message).toContain("2.3");
+  expect(overdose[0]!.message).toContain("by 2.28 dKH");
 });
