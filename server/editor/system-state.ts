@@ -15,10 +15,11 @@ export interface SystemState {
   readonly warnings: number;
   /** The worst problem's words; null where there is none. */
   readonly message: string | null;
+  /** Today's doses in one line. */
   readonly doses: string | null;
-  /** `2026-12-01 08:00`. */
+  /** `2026-12-01 08:00`: as at when all this is. */
   readonly asAt: string;
-  /** Null where the water was never read. */
+  /** When the water was last read; null where it never was. */
   readonly lastRead: string | null;
 }
 

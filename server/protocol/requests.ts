@@ -3,6 +3,7 @@
  * beside it.
  */
 import type { WorkspaceEdit } from "vscode-languageserver";
+import type { SystemState } from "../editor/system-state.ts";
 
 /** Names of the requests, and of the one notification. */
 export const marlRequest = {
@@ -105,19 +106,5 @@ export interface TidyAnswer {
   readonly files: number;
 }
 
-export interface StateAnswer {
-  readonly name: string;
-  readonly ref: string;
-  /** Null where nothing is wrong. */
-  readonly worst: "error" | "warning" | null;
-  readonly errors: number;
-  readonly warnings: number;
-  /** The worst problem's words; null where there is none. */
-  readonly message: string | null;
-  /** Today's doses in one line. */
-  readonly doses: string | null;
-  /** `2026-12-01 08:00`: as at when all this is. */
-  readonly asAt: string;
-  /** When the water was last read; null where it never was. */
-  readonly lastRead: string | null;
-}
+/** Everything that the extension shows of it. */
+export type StateAnswer = SystemState;

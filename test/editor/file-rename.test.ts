@@ -5,13 +5,13 @@ import { walk } from "../checks/walk.ts";
 import { marked } from "./fixture.ts";
 
 const { farm, files } = marked(`
-use "shared/solutions.marl"
+use "stock-room/solutions.marl"
 use "./vats/vat.marl" # é 水 🪸
 use "gone.marl"
-// file: shared/solutions.marl
+// file: stock-room/solutions.marl
 use "../farm.marl"
 // file: vats/vat.marl
-use “../shared/solutions.marl”
+use “../stock-room/solutions.marl”
 use "log.marl"
 // file: vats/log.marl
 use "vat.marl"
@@ -33,45 +33,45 @@ function mended(...renames: readonly (readonly [string, string | null])[]) {
 }
 
 test("a file that is used gets another name in the same folder", () => {
-  expect(mended(["shared/solutions.marl", "shared/stock.marl"])).toEqual({
-    "farm.marl": 'use "shared/stock.marl"\nuse "./vats/vat.marl" # é 水 🪸\nuse "gone.marl"',
-    "vats/vat.marl": 'use “../shared/stock.marl”\nuse "log.marl"',
+  expect(mended(["stock-room/solutions.marl", "stock-room/stock.marl"])).toEqual({
+    "farm.marl": 'use "stock-room/stock.marl"\nuse "./vats/vat.marl" # é 水 🪸\nuse "gone.marl"',
+    "vats/vat.marl": 'use “../stock-room/stock.marl”\nuse "log.marl"',
   });
 });
 
 test("a file that goes to another folder takes its own uses along", () => {
   expect(mended(["vats/vat.marl", "vat.marl"])).toEqual({
-    "farm.marl": 'use "shared/solutions.marl"\nuse "./vat.marl" # é 水 🪸\nuse "gone.marl"',
-    "vat.marl": 'use “shared/solutions.marl”\nuse "vats/log.marl"',
+    "farm.marl": 'use "stock-room/solutions.marl"\nuse "./vat.marl" # é 水 🪸\nuse "gone.marl"',
+    "vat.marl": 'use “stock-room/solutions.marl”\nuse "vats/log.marl"',
     "vats/log.marl": 'use "../vat.marl"\nuse "../vat.marl"',
   });
 });
 
 test("a folder takes all its files along; what they use of each other stays", () => {
   expect(mended(["vats", "halls/east"])).toEqual({
-    "farm.marl": 'use "shared/solutions.marl"\nuse "./halls/east/vat.marl" # é 水 🪸\nuse "gone.marl"',
-    "halls/east/vat.marl": 'use “../../shared/solutions.marl”\nuse "log.marl"',
+    "farm.marl": 'use "stock-room/solutions.marl"\nuse "./halls/east/vat.marl" # é 水 🪸\nuse "gone.marl"',
+    "halls/east/vat.marl": 'use “../../stock-room/solutions.marl”\nuse "log.marl"',
   });
   expect(mended(["vat", "halls"])).toEqual({});
 });
 
 test("two files change places", () => {
   expect(mended(["vats/vat.marl", "vats/log.marl"], ["vats/log.marl", "vats/vat.marl"])).toEqual({
-    "farm.marl": 'use "shared/solutions.marl"\nuse "./vats/log.marl" # é 水 🪸\nuse "gone.marl"',
-    "vats/log.marl": 'use “../shared/solutions.marl”\nuse "vat.marl"',
+    "farm.marl": 'use "stock-room/solutions.marl"\nuse "./vats/log.marl" # é 水 🪸\nuse "gone.marl"',
+    "vats/log.marl": 'use “../stock-room/solutions.marl”\nuse "vat.marl"',
     "vats/vat.marl": 'use "log.marl"\nuse "log.marl"',
   });
 });
 
 test("what leaves the farm can't be led to, nor can a path with a quote in it be written", () => {
-  expect(mended(["shared/solutions.marl", null])).toEqual({});
-  expect(mended(["shared/solutions.marl", 'shared/"new".marl'])).toEqual({});
+  expect(mended(["stock-room/solutions.marl", null])).toEqual({});
+  expect(mended(["stock-room/solutions.marl", 'stock-room/"new".marl'])).toEqual({});
 });
 
 test("after the files have moved, every use leads where it led", () => {
   const renames = [
     ["vats", "halls/east"],
-    ["shared/solutions.marl", "stock.marl"],
+    ["stock-room/solutions.marl", "stock.marl"],
   ] as const;
   const moves = movesOf(farm, renames);
   const edits = mendedUses(farm, moves);

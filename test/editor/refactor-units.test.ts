@@ -4,8 +4,8 @@ import { describe, expect, test } from "vitest";
 import { statementTable } from "../../grammar/statements.ts";
 import { inOneGo } from "../../server/culture/keep.ts";
 import { inUnit } from "../../server/editor/code-actions/other-units.ts";
-import { quantitiesOf } from "../../server/editor/code-actions/quantities.ts";
 import { actionsAt } from "../../server/editor/code-actions.ts";
+import { quantitiesOf } from "../../server/editor/quantities.ts";
 import { walk } from "../checks/walk.ts";
 import { offered, textAfter, textsAfter, titlesAt } from "./actions.ts";
 

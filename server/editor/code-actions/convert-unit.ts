@@ -3,6 +3,7 @@ import type { QuantityText } from "../../../grammar/syntax.ts";
 import type { LineEdit } from "../../checks/problem.ts";
 import type { Farm } from "../../farm.ts";
 import { type LineInFarm, lineIn } from "../cursor.ts";
+import { type Measured, type MeasuredQuantity, quantitiesOf } from "../quantities.ts";
 import {
   type Action,
   type Asked,
@@ -12,7 +13,6 @@ import {
   touchedLines,
 } from "./action.ts";
 import { type InOtherUnit, inOtherUnits, inUnit, textOf, unitOf } from "./other-units.ts";
-import { type Measured, type MeasuredQuantity, quantitiesOf } from "./quantities.ts";
 import { densityAt } from "./water-at.ts";
 
 /** A quantity where it stands. */

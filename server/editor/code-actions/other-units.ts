@@ -12,7 +12,7 @@ import type { Amount } from "../../quantity/amount.ts";
 import { Decimal34 } from "../../quantity/decimal.ts";
 import { measuredUnit, plainNumber } from "../../quantity/dimension.ts";
 import { type PlainKind, readPlain } from "../../quantity/plain.ts";
-import type { Measured } from "./quantities.ts";
+import type { Measured } from "../quantities.ts";
 
 /** As it is written behind a number; empty for none. */
 export interface UnitText {

@@ -1,24 +1,14 @@
 /** A quantity in the other units of its kind, by what it is of. */
-import { type Parameter, parameterOf } from "../../../grammar/parameters.ts";
-import type { QuantityText, Statement } from "../../../grammar/syntax.ts";
+import type { QuantityText } from "../../../grammar/syntax.ts";
 import { densityOf } from "../../culture/binder.ts";
 import { inModelUnit } from "../../culture/convert.ts";
 import type { WaterState } from "../../dosing/water-state.ts";
-import type { Amount, Written } from "../../quantity/amount.ts";
-import {
-  asDifference,
-  asRate,
-  asValue,
-  readCohortUptake,
-  readConcentration,
-  readStrength,
-  readUptake,
-} from "../../quantity/concentration.ts";
+import type { Amount } from "../../quantity/amount.ts";
 import { toDouble } from "../../quantity/decimal.ts";
 import { measuredUnit, numberOf, sameDimension } from "../../quantity/dimension.ts";
-import type { Reading } from "../../quantity/finding.ts";
 import { inBase } from "../../quantity/plain.ts";
 import { oneOf } from "../../report/explain/units.ts";
+import { type Measured, quantitiesOf } from "../quantities.ts";
 import { digits, papers } from "./parts.ts";
 import type { Spot } from "./spot.ts";
 import {
@@ -36,57 +26,27 @@ import {
 export function otherUnits(
   spot: Spot,
   quantity: QuantityText,
-  parent: object,
   state: WaterState | null = null,
 ): OtherUnits | null {
   const { statement } = spot;
   if (statement.kind === "air") return carbonDioxide({ ...spot, state }, quantity);
-  const parameter = parameterHere(statement, parent);
+  const measured = quantitiesOf(statement).find((each) => each.quantity === quantity)?.measured;
   const isShare = quantity.unit?.text === "%";
-  if (parameter && !isShare) return concentration({ ...spot, state }, quantity, parameter);
-  return plainUnits(quantity);
+  if (measured?.of !== "parameter" || isShare) return plainUnits(quantity);
+  return concentration({ ...spot, state }, quantity, measured);
 }
 
-function parameterHere(statement: Statement, parent: object): Parameter | null {
-  if (statement.kind === "cohort") return parameterOf("alkalinity") ?? null;
-  const word = (parent as { parameter?: { text?: string } }).parameter?.text;
-  return (word !== undefined ? parameterOf(word) : undefined) ?? null;
-}
+type OfParameter = Extract<Measured, { readonly of: "parameter" }>;
 
-type Read = (quantity: QuantityText) => Reading<Written>;
-
-/** How a quantity of a parameter is read where it stands, and the ending that its units take there. */
-function readHere(
-  statement: Statement,
-  quantity: QuantityText,
-  parameter: Parameter,
-): { read: Read; over: string; isChange?: true } | null {
-  const value = { read: (each: QuantityText) => readConcentration(each, parameter, asValue), over: "" };
-  const difference = {
-    read: (each: QuantityText) => readConcentration(each, parameter, asDifference),
-    over: "",
-    isChange: true as const,
-  };
-  switch (statement.kind) {
-    case "limit":
-      if (statement.which === "max" || statement.which === "min") return value;
-      if (statement.which === "swing" || statement.which === "dose") return difference;
-      return { read: (each) => readConcentration(each, parameter, asRate), over: "/day" };
-    case "scatter":
-    case "tolerance":
-      return difference;
-    case "uptake":
-      return { read: (each) => readUptake(each, parameter), over: "/day" };
-    case "cohort":
-      return quantity === statement.uptake
-        ? { read: (each) => readCohortUptake(each, parameter), over: "/day" }
-        : null;
-    case "supplies":
-      return { read: (each) => readStrength(each, parameter), over: "" };
-    default:
-      return value;
-  }
-}
+/** What its units are per, where a quantity is over time. */
+const overTime: Readonly<Record<OfParameter["manner"], string>> = {
+  value: "",
+  difference: "",
+  strength: "",
+  rate: "/day",
+  uptake: "/day",
+  "cohort uptake": "/day",
+};
 
 /** Units that a parameter is told in, by what its amounts are per. */
 const spellings = {
@@ -104,17 +64,20 @@ const spellings = {
   },
 } as const;
 
-function concentration(spot: InWater, quantity: QuantityText, parameter: Parameter): OtherUnits | null {
-  const { statement } = spot;
-  const here = readHere(statement, quantity, parameter);
-  if (!here) return plainUnits(quantity);
-  const reading = here.read(quantity);
+function concentration(
+  spot: InWater,
+  quantity: QuantityText,
+  { parameter, manner, read }: OfParameter,
+): OtherUnits | null {
+  const over = overTime[manner];
+  const isValue = manner !== "difference" && over === "";
+  const reading = read(quantity);
   if (!reading.ok) return plainUnits(quantity);
   const { amount } = reading.value;
   if (amount.sort === "salinity") return salinityUnits(quantity, amount, parameter);
   if (amount.sort === "temperature")
-    return here.isChange || here.over ? temperatureChange(quantity, here.over) : plainUnits(quantity);
-  if (amount.sort === "pH") return here.isChange || here.over ? null : otherScale(spot, quantity, amount);
+    return isValue ? plainUnits(quantity) : temperatureChange(quantity, over);
+  if (amount.sort === "pH") return isValue ? otherScale(spot, quantity, amount) : null;
   const water = waterHere(spot);
   const inModel = (of: Amount) => inModelUnit(of, parameter, () => densityOf(water));
   const value = inModel(amount);
@@ -125,12 +88,12 @@ function concentration(spot: InWater, quantity: QuantityText, parameter: Paramet
     parameter.measure === "pH"
   )
     return null;
-  const per = statement.kind === "supplies" ? "strength" : amount.per === "kilogram" ? "litre" : amount.per;
+  const per = manner === "strength" ? "strength" : amount.per === "kilogram" ? "litre" : amount.per;
   let perKilogram = amount.per === "kilogram";
   const texts = spellings[parameter.measure][per].flatMap((spelling) => {
-    const unit = withTime(spelling, here.over);
+    const unit = withTime(spelling, over);
     if (unit === `${quantity.unit?.text}${quantity.asCaCO3 ? " as CaCO3" : ""}`) return [];
-    const one = here.read(oneOf(unit));
+    const one = read(oneOf(unit));
     const size = one.ok ? inModel(one.value.amount) : null;
     if (!size) return [];
     if (!isShownIn(unit, value / size)) return [];

@@ -1,33 +1,22 @@
 /** A quantity: the same in the other units of its kind. */
-import type { QuantityText, Span, Statement } from "../../../grammar/syntax.ts";
+import type { QuantityText, Span } from "../../../grammar/syntax.ts";
 import { otherUnits } from "./other-units.ts";
 import { digits } from "./parts.ts";
 import type { Tells } from "./spot.ts";
 
-/** A quantity with the part of its statement that says what it is of. */
-interface Placed {
-  readonly quantity: QuantityText;
-  readonly parent: Readonly<Record<string, unknown>>;
-}
-
 /** The quantity whose number, unit or deviation a column is in. */
-function quantityAt(statement: Statement, column: number): Placed | null {
-  const walk = (value: unknown, parent: Placed["parent"]): Placed | null => {
-    if (typeof value !== "object" || value === null) return null;
-    const part = value as Placed["parent"];
-    if ("borrowedUnit" in part) {
-      const quantity = value as QuantityText;
-      return ownSpans(quantity).some(({ start, end }) => start <= column && column <= end)
-        ? { quantity, parent }
-        : null;
-    }
-    for (const each of Object.values(part)) {
-      const found = walk(each, Array.isArray(value) ? parent : part);
-      if (found) return found;
-    }
-    return null;
-  };
-  return walk(statement, statement as unknown as Placed["parent"]);
+function quantityAt(part: unknown, column: number): QuantityText | null {
+  if (typeof part !== "object" || part === null) return null;
+  if ("borrowedUnit" in part) {
+    const quantity = part as QuantityText;
+    const isIn = ownSpans(quantity).some(({ start, end }) => start <= column && column <= end);
+    return isIn ? quantity : null;
+  }
+  for (const each of Object.values(part)) {
+    const found = quantityAt(each, column);
+    if (found) return found;
+  }
+  return null;
 }
 
 function ownSpans({ number, unit, borrowedUnit, asCaCO3, uncertainty }: QuantityText): Span[] {
@@ -41,13 +30,13 @@ function ownSpans({ number, unit, borrowedUnit, asCaCO3, uncertainty }: Quantity
 
 export const quantityTold: Tells = (spot) => {
   const column = spot.under.word?.start ?? spot.under.cursor.column;
-  const found = quantityAt(spot.statement, column);
-  if (!found) return null;
-  const others = otherUnits(spot, found.quantity, found.parent);
+  const quantity = quantityAt(spot.statement, column);
+  if (!quantity) return null;
+  const others = otherUnits(spot, quantity);
   if (!others || others.texts.length === 0) return null;
   return {
-    answer: `${writtenOf(found.quantity)} = ${others.texts.join(" = ")}.`,
-    blocks: [deviationLines(found.quantity)],
+    answer: `${writtenOf(quantity)} = ${others.texts.join(" = ")}.`,
+    blocks: [deviationLines(quantity)],
     assumptions: others.assumptions,
     sources: others.sources,
   };
@@ -58,7 +47,7 @@ export const valueTold: Tells = (spot) => {
   const { statement } = spot;
   if (statement.kind !== "value" && statement.kind !== "scatter" && statement.kind !== "tolerance")
     return null;
-  const others = otherUnits(spot, statement.value, statement);
+  const others = otherUnits(spot, statement.value);
   const texts = others?.texts ?? [];
   if (texts.length === 0 && statement.kind === "value") return null;
   const lines = {

@@ -138,7 +138,7 @@ function valueTold(spot: Spot, assessment: Assessment, event: ReadEvent, item: R
     assumptions,
     with: other,
   } = solves ? carbonateHere(spot, assessment, event) : noCarbonate;
-  const others = otherUnits(spot, item.value, item, then);
+  const others = otherUnits(spot, item.value, then);
   const kit = kitLines(spot, event, read);
   const held = factAt(assessment.constants.facts.holds.get(name), event.minute);
   const hold = held?.value;

@@ -1,7 +1,7 @@
 /** The quantities of a statement with what each of them measures: a table by the kind of statement. */
-import { type Parameter, parameterOf } from "../../../grammar/parameters.ts";
-import type { QuantityText, Statement, StockCount, Word } from "../../../grammar/syntax.ts";
-import type { Written } from "../../quantity/amount.ts";
+import { type Parameter, parameterOf } from "../../grammar/parameters.ts";
+import type { QuantityText, Statement, StockCount, Word } from "../../grammar/syntax.ts";
+import type { Written } from "../quantity/amount.ts";
 import {
   asDifference,
   asRate,
@@ -10,9 +10,9 @@ import {
   readConcentration,
   readStrength,
   readUptake,
-} from "../../quantity/concentration.ts";
-import type { Reading } from "../../quantity/finding.ts";
-import type { PlainKind } from "../../quantity/plain.ts";
+} from "../quantity/concentration.ts";
+import type { Reading } from "../quantity/finding.ts";
+import type { PlainKind } from "../quantity/plain.ts";
 
 /** What a quantity measures: a plain dimension, or a parameter in the water, in a solution, or taken from it. */
 export type Measured =
